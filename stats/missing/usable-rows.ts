@@ -1,0 +1,41 @@
+import { requireRange } from '@/stats/result';
+
+/** The rows on which every column has a value, and how many rows that leaves out. */
+export interface UsableRows {
+  /** Row numbers in the order given. */
+  readonly rows: Int32Array;
+  readonly total: number;
+  readonly leftOut: readonly { readonly reason: string; readonly count: number }[];
+}
+
+/**
+ * Complete rows of one or more equally long columns. NaN is a missing value:
+ * its row is left out and counted. An infinite value is a mistake of the caller.
+ *
+ * @throws RangeError for columns of different length or an infinite value.
+ */
+export function usableRows(columns: Readonly<Record<string, ArrayLike<number>>>): UsableRows {
+  const named = Object.entries(columns);
+  const total = named[0]?.[1].length ?? 0;
+  for (const [name, column] of named) {
+    requireRange(column.length === total, `Columns must be equally long: ${name} has ${column.length} rows, not ${total}.`);
+  }
+  const rows = new Int32Array(total);
+  let used = 0;
+  for (let row = 0; row < total; row++) {
+    let complete = true;
+    for (const [name, column] of named) {
+      const value = column[row] as number;
+      if (Number.isNaN(value)) complete = false;
+      else requireRange(Number.isFinite(value), `${name} is not finite in row ${row}.`);
+    }
+    if (complete) rows[used++] = row;
+  }
+  const missing = total - used;
+  return { rows: rows.slice(0, used), total, leftOut: missing > 0 ? [{ reason: 'value missing', count: missing }] : [] };
+}
+
+/** The named rows of a column, as a new Float64Array. */
+export function pickRows(column: ArrayLike<number>, rows: Int32Array): Float64Array {
+  return Float64Array.from(rows, (row) => column[row] as number);
+}

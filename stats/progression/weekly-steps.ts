@@ -1,0 +1,49 @@
+import { usableRows } from '@/stats/missing/usable-rows';
+import { requireRange, type Provenance } from '@/stats/result';
+
+/** One row for each pair of logs of a participant exactly one week apart. */
+export interface WeeklySteps extends Provenance {
+  readonly participants: Float64Array;
+  /** The later week of each pair. */
+  readonly weekTo: Float64Array;
+  /** load(t + 1) / load(t). */
+  readonly ratio: Float64Array;
+  /** load(t + 1) - load(t), in the unit of the loads. */
+  readonly change: Float64Array;
+}
+
+/**
+ * Steps between consecutive weeks. A gap in the weeks is not a step: after a
+ * break the next log starts anew. Rows may come in any order.
+ *
+ * @param participants whole numbers that name the participant of each log.
+ * @param weeks whole weeks; one log a participant and week.
+ * @param loads above zero, in any one unit.
+ * @throws RangeError for a load that is not above zero, a fractional week, or two logs of one participant in one week.
+ */
+export function weeklySteps(participants: ArrayLike<number>, weeks: ArrayLike<number>, loads: ArrayLike<number>): WeeklySteps {
+  const usable = usableRows({ participant: participants, week: weeks, load: loads });
+  const order = usable.rows.slice().sort((i, j) => participants[i]! - participants[j]! || weeks[i]! - weeks[j]!);
+  const from: number[] = [];
+  for (let k = 0; k < order.length; k++) {
+    const row = order[k]!;
+    requireRange(loads[row]! > 0, `A load is above zero, not ${loads[row]} (row ${row}).`);
+    requireRange(Number.isInteger(weeks[row]), `A week is a whole number, not ${weeks[row]} (row ${row}).`);
+    const next = order[k + 1];
+    if (next === undefined || participants[next] !== participants[row]) continue;
+    const gap = weeks[next]! - weeks[row]!;
+    requireRange(gap > 0, `Participant ${participants[row]} has two logs in week ${weeks[row]}.`);
+    if (gap === 1) from.push(k);
+  }
+  const column = (value: (row: number, next: number) => number): Float64Array =>
+    Float64Array.from(from, (k) => value(order[k]!, order[k + 1]!));
+  return {
+    participants: column((row) => participants[row]!),
+    weekTo: column((_, next) => weeks[next]!),
+    ratio: column((row, next) => loads[next]! / loads[row]!),
+    change: column((row, next) => loads[next]! - loads[row]!),
+    method: 'Steps between logs exactly one week apart',
+    n: from.length,
+    leftOut: usable.leftOut,
+  };
+}
