@@ -1,0 +1,115 @@
+import { Migration } from '@mikro-orm/migrations';
+import { guard } from './sql';
+
+/** Columns that every row of a participant's record carries. */
+const record = `id uuid primary key default gen_random_uuid(), site_id uuid not null references site, participant_id uuid not null references participant`;
+
+/** The participant and what is recorded at visits and at home. */
+export class TheRecord extends Migration {
+  override up(): void {
+    this.addSql(`create table participant (
+      id uuid primary key default gen_random_uuid(), participant_id uuid generated always as (id) stored, site_id uuid not null references site, code text not null unique,
+      number integer not null, cohort text not null, affected_side text not null check (affected_side in ('left', 'right')),
+      dominant_side text not null check (dominant_side in ('left', 'right', 'both')), age_years integer not null check (age_years between 18 and 110),
+      height_mm integer check (height_mm between 1200 and 2100), surgery_on date not null, surgery text not null, axillary_procedure text not null, nodes_removed integer check (nodes_removed between 0 and 80),
+      radiotherapy text not null, systemic_therapy text not null, enrolled_on date not null, anchor_on date not null,
+      state text not null default 'enrolled' check (state in ('enrolled', 'withdrawn', 'completed')), left_on date, left_grade text check (left_grade in ('stops training', 'no visits', 'no further data')), left_reason text,
+      training_held boolean not null default false, protocol_version_id uuid not null references protocol_version, version integer not null default 1,
+      unique (site_id, number), check ((state = 'enrolled') = (left_on is null)))`);
+    this.addSql('create index participant_site on participant (site_id, code)');
+    for (const table of ['screening', 'eligibility_answer', 'stored_file', 'consent', 'consent_signature', 'participant_identity', 'invitation'])
+      this.addSql(`alter table ${table} add foreign key (participant_id) references participant deferrable initially deferred`);
+    this.addSql('alter table role_grant add foreign key (of_participant_id) references participant');
+    this.addSql(`create table visit (${record},
+      key text not null, name text not null, target_on date not null, opens_on date not null, closes_on date not null, booked_at timestamptz, done_on date,
+      state text not null default 'to come' check (state in ('to come', 'in progress', 'complete', 'missed')), missed_reason text, unscheduled_reason text,
+      protocol_version_id uuid not null references protocol_version, version integer not null default 1,
+      check (opens_on <= target_on and target_on <= closes_on), check ((state = 'missed') = (missed_reason is not null)), check (state not in ('in progress', 'complete') or done_on is not null))`);
+    this.addSql(`create unique index visit_scheduled_once on visit (participant_id, key) where unscheduled_reason is null`);
+    this.addSql('create index visit_site_due on visit (site_id, state, closes_on)');
+    this.addSql('create index visit_participant on visit (participant_id, target_on)');
+    this.addSql(`create table limb_assessment (${record}, visit_id uuid not null unique references visit, assessor_id uuid not null references account, measured_at timestamptz not null,
+      position text not null, sleeve_worn boolean not null, hours_since_training integer check (hours_since_training between 0 and 999), method text not null, start_offset_mm integer not null, step_mm integer not null check (step_mm > 0),
+      level_count integer not null check (level_count between 2 and 30), tolerance_mm integer not null, state text not null default 'open' check (state in ('open', 'complete')),
+      body_weight_g integer check (body_weight_g between 30000 and 250000), impedance_ratio numeric(5,3) check (impedance_ratio between 0.5 and 3), impedance_rest_min integer check (impedance_rest_min between 0 and 120),
+      remarks text, left_volume_ml numeric(8,3), right_volume_ml numeric(8,3), rvc numeric(9,6), verdicts jsonb not null default '{}', findings jsonb not null default '[]', formula_version text, completed_at timestamptz, version integer not null default 1,
+      check (state = 'open' or (left_volume_ml is not null and right_volume_ml is not null and formula_version is not null)))`);
+    this.addSql('create index limb_assessment_participant on limb_assessment (participant_id, measured_at)');
+    this.addSql(`create table limb_trial (${record}, assessment_id uuid not null references limb_assessment, side text not null check (side in ('left', 'right')), trial integer not null check (trial between 1 and 3),
+      circumferences_mm integer[] not null, saved_at timestamptz not null, version integer not null default 1, unique (assessment_id, side, trial),
+      check (cardinality(circumferences_mm) between 2 and 30), check (100 <= all (circumferences_mm)), check (700 >= all (circumferences_mm)))`);
+    this.addSql('create index limb_trial_participant on limb_trial (participant_id)');
+    this.addSql(`create table questionnaire_response (${record}, visit_id uuid references visit, instrument text not null, instrument_version integer not null, language text not null default 'en', due_on date not null, opens_on date not null, closes_on date not null,
+      state text not null default 'due' check (state in ('due', 'in progress', 'submitted', 'missed')), answers jsonb not null default '{}', left_out text[] not null default '{}', page integer not null default 0, mode text not null default 'self, web', started_at timestamptz, submitted_at timestamptz, scores jsonb not null default '{}', version integer not null default 1,
+      check ((state = 'submitted') = (submitted_at is not null)), check (opens_on <= due_on and due_on <= closes_on), unique (participant_id, instrument, due_on))`);
+    this.addSql('create index questionnaire_response_site on questionnaire_response (site_id, state, closes_on)');
+    this.addSql(`create table training_session (${record}, local_on date not null, time_zone text not null, entered_at timestamptz not null, late boolean not null default false,
+      arm_check text not null check (arm_check in ('the same', 'a little fuller', 'clearly fuller', 'not sure')), soreness text not null check (soreness in ('no', 'a little', 'a lot')), effort integer check (effort between 0 and 10), note text check (length(note) <= 500),
+      client_key uuid not null, version integer not null default 1, unique (participant_id, client_key))`);
+    this.addSql('create index training_session_participant on training_session (participant_id, local_on)');
+    this.addSql(`create table training_set (${record}, session_id uuid not null references training_session, sequence integer not null, exercise text not null, equipment text not null, basis text not null, side text not null check (side in ('left', 'right', 'both')),
+      load_typed numeric(7,2) not null check (load_typed >= 0), unit text not null check (unit in ('kg', 'lb')), load_g integer not null check (load_g between 0 and 150000), repetitions integer not null check (repetitions between 1 and 100), set_count integer not null check (set_count between 1 and 20), effort integer check (effort between 0 and 10), already_lifted boolean not null default false, unique (session_id, sequence))`);
+    this.addSql('create index training_set_participant on training_set (participant_id)');
+    this.addSql(`create table training_flag (${record}, session_id uuid not null references training_session, flag_key text not null, rule text not null, exercise text, detail jsonb not null default '{}', state text not null default 'raised' check (state in ('raised', 'withdrawn', 'seen')), raised_at timestamptz not null, version integer not null default 1, unique (participant_id, flag_key))`);
+    this.addSql(`create table symptom_report (${record}, reported_at timestamptz not null, noticed_on date not null, answers jsonb not null, level text not null check (level in ('S0', 'S1', 'S2', 'S3', 'R1', 'R1+', 'R2', 'R3', 'R4')), note text check (length(note) <= 1000), due_at timestamptz, hold_training boolean not null,
+      state text not null default 'new' check (state in ('new', 'read', 'reviewed')), read_at timestamptz, reviewed_at timestamptz, reviewed_by uuid references account, outcome text check (outcome in ('no action', 'advice', 'unscheduled visit', 'adverse event')), review_note text, client_key uuid not null, version integer not null default 1,
+      unique (participant_id, client_key), check ((state = 'reviewed') = (outcome is not null)))`);
+    this.addSql('create index symptom_report_site on symptom_report (site_id, state, due_at)');
+    for (const table of ['participant', 'visit', 'limb_assessment', 'limb_trial', 'questionnaire_response', 'training_session', 'training_set', 'training_flag', 'symptom_report'])
+      for (const line of guard({ table, reach: 'record', grants: table === 'training_set' ? ['select', 'insert'] : ['select', 'insert', 'update'], audit: {} })) this.addSql(line);
+    this.consentFirst();
+    this.reasonForChange();
+    this.submitCloses();
+  }
+
+  /** Nothing is recorded before consent is complete, whoever asks. */
+  private consentFirst(): void {
+    this.addSql(`create function consent_first() returns trigger language plpgsql security definer set search_path = public as $$ begin
+      if not exists (select 1 from consent where participant_id = new.id and state = 'complete') then
+        raise exception 'Consent is not complete, so nobody can be enrolled on it.' using errcode = 'TM002';
+      end if;
+      return new; end $$`);
+    this.addSql(`create constraint trigger participant_consent_first after insert on participant deferrable initially deferred for each row execute function consent_first()`);
+  }
+
+  /** A value that was saved changes only with a reason: a completed limb assessment, its trials, a finished visit, the fixed facts of a participant. */
+  private reasonForChange(): void {
+    this.addSql(`create function reason_for_change() returns trigger language plpgsql security definer set search_path = public as $$
+    declare
+      settled boolean := true;
+      kept text[] := string_to_array(tg_argv[0], ',');
+      before_image jsonb; after_image jsonb;
+    begin
+      if tg_table_name = 'limb_trial' then
+        select a.state = 'complete' into settled from limb_assessment a where a.id = new.assessment_id;
+      elsif tg_table_name = 'limb_assessment' then settled := old.state = 'complete';
+      elsif tg_table_name = 'visit' then settled := old.state in ('complete', 'missed');
+      end if;
+      if settled and app_reason() is null then
+        select jsonb_object_agg(key, value) into before_image from jsonb_each(to_jsonb(old)) where key = any (kept);
+        select jsonb_object_agg(key, value) into after_image from jsonb_each(to_jsonb(new)) where key = any (kept);
+        if before_image is distinct from after_image then
+          raise exception 'Say why the value changes.' using errcode = 'TM001';
+        end if;
+      end if;
+      return new; end $$`);
+    const watch: Record<string, string> = {
+      limb_trial: 'circumferences_mm',
+      limb_assessment: 'body_weight_g,impedance_ratio,impedance_rest_min,position,sleeve_worn,hours_since_training,remarks,measured_at',
+      visit: 'done_on,missed_reason,state',
+      participant: 'affected_side,dominant_side,surgery_on,surgery,axillary_procedure,nodes_removed,radiotherapy,systemic_therapy,height_mm,age_years',
+    };
+    for (const [table, columns] of Object.entries(watch))
+      this.addSql(`create trigger ${table}_reason before update on ${table} for each row execute function reason_for_change('${columns}')`);
+  }
+
+  /** Submit closes a questionnaire: its answers never change after it. */
+  private submitCloses(): void {
+    this.addSql(`create function submit_closes() returns trigger language plpgsql as $$ begin
+      if old.state = 'submitted' and (new.answers <> old.answers or new.state <> old.state or new.left_out <> old.left_out) then
+        raise exception 'A submitted questionnaire is closed.' using errcode = 'TM003';
+      end if;
+      return new; end $$`);
+    this.addSql('create trigger questionnaire_response_closed before update on questionnaire_response for each row execute function submit_closes()');
+  }
+}
