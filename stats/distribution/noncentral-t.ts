@@ -25,13 +25,13 @@ function logScaleDensity(w: number, df: number, constant: number): number {
 function tail(t: number, df: number, shift: number, upper: boolean): number {
   if (t === Number.POSITIVE_INFINITY || t === Number.NEGATIVE_INFINITY) return upper === t < 0 ? 1 : 0;
   const half = df / 2;
-  const constant = 0.5 * Math.log(half / Math.PI) + Math.LN2 / 2 + Math.LN2 / 2 - stirlingError(half);
+  const constant = 0.5 * Math.log(df / Math.PI) - stirlingError(half);
   const log = (w: number): number => {
     const edge = t * Math.exp(w) - shift;
     return logScaleDensity(w, df, constant) + logNormalSf(upper ? edge : -edge);
   };
   const peak = findPeak(log, df);
-  const step = Math.min(0.05, 0.25 / Math.sqrt(df + t * t)) ;
+  const step = Math.min(0.05, 0.25 / Math.sqrt(df + t * t));
   const top = log(peak);
   return Math.exp(top) * step * (1 + oneSide(log, peak, step, top) + oneSide(log, peak, -step, top));
 }

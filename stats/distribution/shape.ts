@@ -4,7 +4,7 @@ import { requireRange } from '../result';
  * Every distribution answers both tails as themselves: `sf` is never 1 - cdf,
  * `isf` never a quantile of 1 - p, because those lose all digits below 1e-16.
  */
-export interface Distribution<P extends number[]> {
+export interface Distribution<P extends unknown[]> {
   /** P(X <= x). */
   cdf(x: number, ...params: P): number;
   /** P(X > x). */
@@ -15,12 +15,12 @@ export interface Distribution<P extends number[]> {
   isf(p: number, ...params: P): number;
 }
 
-export interface Continuous<P extends number[]> extends Distribution<P> {
+export interface Continuous<P extends unknown[]> extends Distribution<P> {
   /** Density at x. */
   pdf(x: number, ...params: P): number;
 }
 
-export interface Discrete<P extends number[]> extends Distribution<P> {
+export interface Discrete<P extends unknown[]> extends Distribution<P> {
   /** P(X = x); 0 between the counts. */
   pmf(x: number, ...params: P): number;
 }
