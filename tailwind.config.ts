@@ -2,8 +2,25 @@ import type { Config } from 'tailwindcss';
 
 /** Roles only: a colour that has no role has no name, so it cannot be used by accident. */
 const roles = [
-  'ground', 'raised', 'well', 'select', 'band', 'ink', 'ink-2', 'ink-3', 'rule', 'rule-2', 'edge',
-  'act', 'act-deep', 'act-mid', 'act-pale', 'fine', 'needs', 'note', 'veil',
+  'ground',
+  'raised',
+  'well',
+  'select',
+  'band',
+  'ink',
+  'ink-2',
+  'ink-3',
+  'rule',
+  'rule-2',
+  'edge',
+  'act',
+  'act-deep',
+  'act-mid',
+  'act-pale',
+  'fine',
+  'needs',
+  'note',
+  'veil',
 ] as const;
 
 const config: Config = {

@@ -4,6 +4,8 @@ import { useState, type ReactNode } from 'react';
 
 /** What client components need around them. */
 export function Providers({ children }: { children: ReactNode }) {
-  const [client] = useState(() => new QueryClient({ defaultOptions: { queries: { staleTime: 15_000, refetchOnWindowFocus: false, retry: 1 } } }));
+  const [client] = useState(
+    () => new QueryClient({ defaultOptions: { queries: { staleTime: 15_000, refetchOnWindowFocus: false, retry: 1 } } }),
+  );
   return <QueryClientProvider client={client}>{children}</QueryClientProvider>;
 }

@@ -33,7 +33,12 @@ export interface SendOptions {
 }
 
 /** One call of the API. Throws ProblemError; never loses what was sent. */
-export async function send<T>(method: 'GET' | 'POST' | 'PUT' | 'PATCH', path: string, body?: unknown, options: SendOptions = {}): Promise<T> {
+export async function send<T>(
+  method: 'GET' | 'POST' | 'PUT' | 'PATCH',
+  path: string,
+  body?: unknown,
+  options: SendOptions = {},
+): Promise<T> {
   const headers: Record<string, string> = { accept: 'application/json' };
   if (body !== undefined) headers['content-type'] = 'application/json';
   if (options.version !== undefined) headers['if-match'] = `"v${options.version}"`;
@@ -41,11 +46,24 @@ export async function send<T>(method: 'GET' | 'POST' | 'PUT' | 'PATCH', path: st
   if (options.invitationToken) headers['invitation-token'] = options.invitationToken;
   let response: Response;
   try {
-    response = await fetch(path, { method, headers, credentials: 'same-origin', ...(body === undefined ? {} : { body: JSON.stringify(body) }) });
+    response = await fetch(path, {
+      method,
+      headers,
+      credentials: 'same-origin',
+      ...(body === undefined ? {} : { body: JSON.stringify(body) }),
+    });
   } catch {
     throw new ProblemError(noConnection);
   }
   const answer: unknown = await response.json().catch(() => null);
   if (response.ok) return answer as T;
-  throw new ProblemError((answer as ProblemDetails | null) ?? { ...noConnection, title: 'Not saved', status: response.status, code: 'fault', detail: 'Not saved. Try again in a moment.' });
+  throw new ProblemError(
+    (answer as ProblemDetails | null) ?? {
+      ...noConnection,
+      title: 'Not saved',
+      status: response.status,
+      code: 'fault',
+      detail: 'Not saved. Try again in a moment.',
+    },
+  );
 }

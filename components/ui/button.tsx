@@ -43,7 +43,7 @@ export function Button({ kind, size, wide, atWork, children, className, onClick,
   };
   return (
     <button {...rest} type={type} className={looks({ kind, size, wide }, className)} onClick={press} aria-busy={atWork ? true : undefined}>
-      {kind === 'link' ? (atWork || children) : <Face atWork={atWork}>{children}</Face>}
+      {kind === 'link' ? atWork || children : <Face atWork={atWork}>{children}</Face>}
     </button>
   );
 }

@@ -27,7 +27,15 @@ export function ErrorSummary({ problems, title }: ErrorSummaryProps) {
       <h2 className="t-small-head">{title ?? defaultTitle(problems.length)}</h2>
       <ul>
         {problems.map(({ fieldId, sentence }) => (
-          <li key={`${fieldId ?? ''}${sentence}`}>{fieldId ? <a href={`#${fieldId}`} onClick={(event) => goTo(event, fieldId)}>{sentence}</a> : sentence}</li>
+          <li key={`${fieldId ?? ''}${sentence}`}>
+            {fieldId ? (
+              <a href={`#${fieldId}`} onClick={(event) => goTo(event, fieldId)}>
+                {sentence}
+              </a>
+            ) : (
+              sentence
+            )}
+          </li>
         ))}
       </ul>
     </div>

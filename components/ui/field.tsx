@@ -21,7 +21,10 @@ export interface JoinedIds {
 }
 
 /** Ids that join a control to its hint and error, whichever of them exist. */
-export function useJoined({ hint, error }: Pick<FieldWords, 'hint' | 'error'>, givenId?: string): JoinedIds & { hintId: string; errorId: string } {
+export function useJoined(
+  { hint, error }: Pick<FieldWords, 'hint' | 'error'>,
+  givenId?: string,
+): JoinedIds & { hintId: string; errorId: string } {
   const made = useId();
   const id = givenId ?? made;
   const hintId = `${id}-hint`;

@@ -32,7 +32,9 @@ function parts(day: Day, zone: string): Parts {
 
 /** The calendar day of a moment in a zone, as `yyyy-mm-dd`. Throws RangeError for an invalid moment or zone. */
 export function dayIn(moment: Date, zone: string): string {
-  const fields = new Intl.DateTimeFormat('en-GB', { timeZone: zone, year: 'numeric', month: '2-digit', day: '2-digit' }).formatToParts(moment);
+  const fields = new Intl.DateTimeFormat('en-GB', { timeZone: zone, year: 'numeric', month: '2-digit', day: '2-digit' }).formatToParts(
+    moment,
+  );
   const pick = (type: string) => fields.find((field) => field.type === type)?.value ?? '';
   return `${pick('year').padStart(4, '0')}-${pick('month')}-${pick('day')}`;
 }

@@ -6,7 +6,9 @@ export interface RadioChoice {
   label: ReactNode;
 }
 
-export interface RadioGroupProps extends FieldWords, Omit<ComponentProps<'input'>, 'type' | 'size' | 'disabled' | 'value' | 'defaultValue'> {
+export interface RadioGroupProps
+  extends FieldWords,
+    Omit<ComponentProps<'input'>, 'type' | 'size' | 'disabled' | 'value' | 'defaultValue'> {
   name: string;
   choices: readonly RadioChoice[];
   /** The chosen value, when the caller keeps it. */
@@ -21,7 +23,20 @@ export interface RadioGroupProps extends FieldWords, Omit<ComponentProps<'input'
 const frames = { rounds: 'picks', tiles: 'picks', row: 'tiles-row' } as const;
 
 /** One answer out of a few that all stay in sight. */
-export function RadioGroup({ label, hint, error, optional, labelHidden, choices, value, defaultValue, as = 'rounds', id, className, ...rest }: RadioGroupProps) {
+export function RadioGroup({
+  label,
+  hint,
+  error,
+  optional,
+  labelHidden,
+  choices,
+  value,
+  defaultValue,
+  as = 'rounds',
+  id,
+  className,
+  ...rest
+}: RadioGroupProps) {
   return (
     <FieldSet {...{ label, hint, error, optional, labelHidden, id, className }}>
       <div className={frames[as]}>

@@ -9,8 +9,10 @@ export type NumberRead = { kind: 'empty' } | { kind: 'number'; value: number } |
 export function readNumber(text: string): NumberRead {
   const bare = text.replace(/[\s\u2009\u202f]/g, '').replace('\u2212', '-');
   if (bare === '') return { kind: 'empty' };
-  if (/^-?\d+,\d{3}$/.test(bare)) return { kind: 'unclear', sentence: `${text.trim()} can be read in two ways. Use a point for decimals and no comma.` };
+  if (/^-?\d+,\d{3}$/.test(bare))
+    return { kind: 'unclear', sentence: `${text.trim()} can be read in two ways. Use a point for decimals and no comma.` };
   const pointed = bare.replace(',', '.');
-  if (!/^-?(\d+\.?\d*|\.\d+)$/.test(pointed)) return { kind: 'unclear', sentence: `${text.trim()} is not a figure. Give digits only, as 71.4.` };
+  if (!/^-?(\d+\.?\d*|\.\d+)$/.test(pointed))
+    return { kind: 'unclear', sentence: `${text.trim()} is not a figure. Give digits only, as 71.4.` };
   return { kind: 'number', value: Number(pointed) };
 }

@@ -16,7 +16,14 @@ interface FrameProps extends SignProps, Pick<SVGProps<SVGSVGElement>, 'children'
 function Frame({ box: [width, height], size = height, title, className, children }: FrameProps) {
   const spoken = title ? { role: 'img', 'aria-label': title } : { 'aria-hidden': true as const };
   return (
-    <svg {...spoken} className={`shrink-0 ${className ?? ''}`} width={(size * width) / height} height={size} viewBox={`0 0 ${width} ${height}`} fill="none">
+    <svg
+      {...spoken}
+      className={`shrink-0 ${className ?? ''}`}
+      width={(size * width) / height}
+      height={size}
+      viewBox={`0 0 ${width} ${height}`}
+      fill="none"
+    >
       {children}
     </svg>
   );

@@ -56,9 +56,20 @@ export function Staff({ x, edges, ticks, thickness = 7 }: StaffProps) {
   return (
     <g>
       <rect x={x - thickness} y={head} width={thickness} height={foot - head} fill="var(--ground)" stroke="var(--ink)" />
-      {sorted.slice(0, -1).map((low, index) =>
-        index % 2 === 0 ? <rect key={low} x={x - thickness} y={sorted[index + 1]} width={thickness} height={low - (sorted[index + 1] ?? low)} fill="var(--ink)" /> : null,
-      )}
+      {sorted
+        .slice(0, -1)
+        .map((low, index) =>
+          index % 2 === 0 ? (
+            <rect
+              key={low}
+              x={x - thickness}
+              y={sorted[index + 1]}
+              width={thickness}
+              height={low - (sorted[index + 1] ?? low)}
+              fill="var(--ink)"
+            />
+          ) : null,
+        )}
       {ticks.map(({ y, label }) =>
         label === undefined ? null : (
           <text key={y} x={x - thickness - 8} y={y + 4.5} textAnchor="end" className="axis-figure">
