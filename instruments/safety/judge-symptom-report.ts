@@ -54,7 +54,7 @@ const verdicts: Readonly<Record<SafetyLevel, SafetyVerdict>> = {
   R2: {
     level: 'R2',
     participantTitle: 'Get emergency care today',
-    participantText: `Sudden swelling with these signs can be a blood clot. It needs a scan the same day. Do not train, and do not put on a new sleeve or bandage. ${NOT_WATCHED}`,
+    participantText: `Sudden swelling, or an arm that turns blue, can be a blood clot. It needs a scan the same day. Do not train, and do not put on a new sleeve or bandage. ${NOT_WATCHED}`,
     siteText: 'Possible clot: phone at once. Ultrasound the same day; no exercise and no new compression until a clot is excluded or treated.',
     ...EMERGENCY,
   },
@@ -126,8 +126,8 @@ export function safetyVerdict(level: SafetyLevel): SafetyVerdict {
 }
 
 /**
- * Level of a symptom report. Errs towards the graver: an unanswered 'over a day?' counts as yes, and sore muscles beyond
- * 7 days, or not only the trained ones, count as a change. Returns null when nothing was reported. Not a diagnosis.
+ * Level of a symptom report. Errs towards the graver: an unanswered 'over a day?' counts as yes, sudden swelling alone counts as a
+ * possible clot, and sore muscles beyond 7 days, or not only the trained ones, count as a change. Returns null when nothing was reported. Not a diagnosis.
  */
 export function judgeSymptomReport(answers: SymptomReportAnswers): SafetyVerdict | null {
   const level = levelOf(answers);
@@ -135,14 +135,14 @@ export function judgeSymptomReport(answers: SymptomReportAnswers): SafetyVerdict
   return level === 'S1' && needsEarlyMeasurement(answers) ? { ...verdicts.S1, measureWithin: { days: 3 } } : verdicts[level];
 }
 
-function levelOf({ signs, lastedOverADay, soreness, hasLine }: SymptomReportAnswers): SafetyLevel | null {
+function levelOf({ signs, lastedOverADay, soreness }: SymptomReportAnswers): SafetyLevel | null {
   const groups = new Set(signs.map(groupOf));
   if (groups.has('very ill')) return 'R1+';
   if (groups.has('breath')) return 'R3';
-  if (groups.has('clot') || (groups.has('sudden') && (hasLine !== false || isPainful(signs)))) return 'R2';
+  if (groups.has('clot')) return 'R2';
   if (groups.has('infection')) return 'R1';
   if (groups.has('new finding')) return 'R4';
-  if (groups.has('sudden') || signs.includes('visible-swelling')) return 'S1';
+  if (signs.includes('visible-swelling')) return 'S1';
   if (groups.has('change')) return lastedOverADay === false ? 'S0' : 'S1';
   if (soreness === null) return null;
   return soreness.days <= 7 && soreness.onlyTrainedMuscles ? 'S0' : 'S1';
@@ -154,11 +154,7 @@ function groupOf(sign: ReportedSign): SignGroup {
   return found.group;
 }
 
-function isPainful(signs: readonly ReportedSign[]): boolean {
-  return signs.some((sign) => sign === 'ache' || sign === 'pain-at-rest' || sign === 'tender');
-}
-
 /** Three or more new symptoms, or swelling that can be seen: measure within 3 days rather than 7. */
 function needsEarlyMeasurement({ signs }: SymptomReportAnswers): boolean {
-  return signs.includes('visible-swelling') || signs.includes('sudden-swelling') || signs.filter((sign) => groupOf(sign) === 'change').length >= 3;
+  return signs.includes('visible-swelling') || signs.filter((sign) => groupOf(sign) === 'change').length >= 3;
 }

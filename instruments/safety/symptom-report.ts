@@ -11,7 +11,7 @@ export const reportedSigns = [
   { code: 'shaking', text: 'Shaking chills that will not stop', group: 'very ill' },
   { code: 'vomiting', text: 'Being sick', group: 'very ill' },
   { code: 'blue', text: 'Arm or hand blue or dusky', group: 'clot' },
-  { code: 'sudden-swelling', text: 'Arm swelled up suddenly, within hours or days', group: 'sudden' },
+  { code: 'sudden-swelling', text: 'Arm swelled up suddenly, within hours or days', group: 'clot' },
   { code: 'veins', text: 'Veins standing out at the shoulder or chest', group: 'clot' },
   { code: 'fever', text: 'Fever of 38 °C or more', group: 'infection' },
   { code: 'flu-like', text: 'Feeling as if flu were coming, or shivering', group: 'infection' },
@@ -40,6 +40,4 @@ export interface SymptomReportAnswers {
   readonly lastedOverADay: boolean | null;
   /** Sore muscles after training, for how long, and whether only the trained muscles or both sides. */
   readonly soreness: { readonly days: number; readonly onlyTrainedMuscles: boolean } | null;
-  /** A port or central line on that side. */
-  readonly hasLine: boolean | null;
 }
