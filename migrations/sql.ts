@@ -31,7 +31,7 @@ const conditions: Record<Reach, string> = {
   screening: `${inReach} and ${ownScreening} and ((select app_participant()) is null or participant_id = (select app_participant()))`,
   'screening-identity': `${inReach} and ${ownScreening} and ((select app_participant()) is null or participant_id = (select app_participant())) and ${identityOn}`,
   known: `(select app_actor()) is not null`,
-  account: `(select app_participant()) is null or account_id = (select app_actor())`,
+  account: `(select app_actor()) is not null and ((select app_participant()) is null or account_id = (select app_actor()))`,
   'sign-in': `(select app_identity()) = 'sign-in'`,
 };
 
