@@ -42,15 +42,19 @@ export function twoWayAnova(columns: readonly ArrayLike<number>[]): TwoWayAnova 
       error += (deviation - (columnMeans[c]! - grand)) ** 2;
     }
   }
+  const largest = table.reduce((most, column) => column.reduce((m, value) => Math.max(m, Math.abs(value)), most), 0);
+  // Readings that agree exactly leave dust of this size behind; it is none, not an F ratio of 1e31.
+  const dust = n * k * (4 * Number.EPSILON * largest) ** 2;
+  const settle = (sum: number): number => (sum <= dust ? 0 : sum);
   const between = columnMeans.reduce((sum, mean) => sum + (mean - grand) ** 2, 0);
   return {
     method: 'Two-way analysis of variance, one reading a cell',
     n,
     k,
     leftOut: usable.leftOut,
-    meanSquareRows: (k * rows) / (n - 1),
-    meanSquareColumns: (n * between) / (k - 1),
-    meanSquareError: error / ((n - 1) * (k - 1)),
-    meanSquareWithin: within / (n * (k - 1)),
+    meanSquareRows: (k * settle(rows)) / (n - 1),
+    meanSquareColumns: (n * settle(between)) / (k - 1),
+    meanSquareError: settle(error) / ((n - 1) * (k - 1)),
+    meanSquareWithin: settle(within) / (n * (k - 1)),
   };
 }
