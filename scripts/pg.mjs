@@ -37,7 +37,8 @@ function makeRoles(cluster) {
   );
 }
 
-function makeDatabase(cluster, database) {
+function makeDatabase(cluster, database, fresh) {
+  if (fresh) cluster.sql('postgres', `drop database if exists ${database} with (force)`);
   if (cluster.sql('postgres', `select 1 from pg_database where datname = '${database}'`) === '1') return;
   cluster.sql('postgres', `create database ${database} owner app_owner`);
   cluster.sql('postgres', `revoke all on database ${database} from public; grant connect on database ${database} to app_rw`);
@@ -47,9 +48,10 @@ function makeDatabase(cluster, database) {
  * The data base to work with. DATABASE_URL (the application) and OWNER_DATABASE_URL (migrations) name one of the
  * user's own; without them the private cluster in `.data/pg` is made and started.
  *
+ * @param options.fresh empties the data base first.
  * @returns { appUrl, ownerUrl, stop } where `stop` ends only what this call may end.
  */
-export async function ensureDatabase({ name = 'pg', fsync = true, database = databaseName } = {}) {
+export async function ensureDatabase({ name = 'pg', fsync = true, database = databaseName, fresh = false } = {}) {
   const own = process.env.DATABASE_URL;
   if (name === 'pg' && own) {
     const ownerUrl = process.env.OWNER_DATABASE_URL;
@@ -58,7 +60,7 @@ export async function ensureDatabase({ name = 'pg', fsync = true, database = dat
   }
   const cluster = await startCluster(name, { fsync });
   makeRoles(cluster);
-  makeDatabase(cluster, database);
+  makeDatabase(cluster, database, fresh);
   return {
     appUrl: cluster.url('app_login', database),
     ownerUrl: cluster.url('app_owner', database),
