@@ -9,7 +9,8 @@ export const TIME_TOLERANCE = 1e-12;
 
 /** True when a is earlier than b by more than rounding. */
 export function isBefore(a: number, b: number): boolean {
-  return a < b && b - a > TIME_TOLERANCE * Math.max(Math.abs(a), Math.abs(b));
+  const gap = b - a;
+  return gap > 0 && (gap === Infinity || gap > TIME_TOLERANCE * Math.max(Math.abs(a), Math.abs(b)));
 }
 
 /** Rows sorted by time, and where each distinct time starts in that order. */
