@@ -4,7 +4,7 @@
  *
  * @typedef {object} DemoAccount
  * @property {string} key name of the account in tests
- * @property {'coordinator' | 'assessor' | 'site-investigator' | 'monitor' | 'investigator' | 'data-manager' | 'administrator' | 'auditor' | 'participant'} role
+ * @property {'site-coordinator' | 'assessor' | 'site-investigator' | 'monitor' | 'investigator' | 'data-manager' | 'administrator' | 'auditor' | 'participant'} role
  * @property {string} roleLabel the role in words
  * @property {string | null} siteName null: the whole study
  * @property {string} name
@@ -21,7 +21,7 @@ const account = (key, role, roleLabel, siteName, name) => ({
 
 /** @type {readonly DemoAccount[]} */
 export const demoAccounts = [
-  account('coordinator', 'coordinator', 'Site coordinator', 'Northmoor', 'Robin Ashdown'),
+  account('coordinator', 'site-coordinator', 'Site coordinator', 'Northmoor', 'Robin Ashdown'),
   account('assessor', 'assessor', 'Assessor', 'Northmoor', 'Imre Castell'),
   account('site-investigator', 'site-investigator', 'Site investigator', 'Northmoor', 'Dr Hester Vale'),
   account('monitor', 'monitor', 'Monitor', null, 'Tomas Wren'),
