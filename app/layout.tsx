@@ -1,6 +1,7 @@
 import type { Metadata, Viewport } from 'next';
 import { connection } from 'next/server';
 import type { ReactNode } from 'react';
+import { ToastProvider } from '@/components/ui/toast';
 import { hyperlegible, hyperlegibleMono, newsreader } from './fonts';
 import './globals.css';
 
@@ -28,7 +29,7 @@ export default async function RootLayout({ children }: Readonly<{ children: Reac
         <a className="skip-link" href="#main">
           Skip to the main part
         </a>
-        {children}
+        <ToastProvider>{children}</ToastProvider>
       </body>
     </html>
   );
