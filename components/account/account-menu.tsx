@@ -16,7 +16,7 @@ export interface HeldRole {
 /** Under role and code: another role of the same person, and the way out. */
 export function AccountMenu({ current, grants }: { current: string; grants: readonly HeldRole[] }) {
   const router = useRouter();
-  const toast = useToast();
+  const { say } = useToast();
   const [leaving, setLeaving] = useState(false);
   const fieldId = useId();
   const choose = async (grantId: string) => {
@@ -25,7 +25,7 @@ export function AccountMenu({ current, grants }: { current: string; grants: read
       router.push('/');
       router.refresh();
     } catch (error) {
-      toast({
+      say({
         kind: 'needs',
         word: 'Not changed.',
         text: error instanceof ProblemError ? error.message : 'The role was not changed. Try again.',

@@ -1,4 +1,4 @@
-import type { Role } from './roles';
+import { grantedRoles, type Role } from './roles';
 
 /** What a role needs to do an act, and which doors the act opens in the data base. */
 export interface Rule {
@@ -30,6 +30,8 @@ export const policy = {
   'session.check': signIn(write('system')),
   'session.choose-role': signIn(write('system')),
   'invitation.view': signIn(read('system')),
+  // What the masthead says on every page.
+  'shell.view': read(...grantedRoles),
   // The site's day.
   'today.view': read(...siteTeam),
   // Screening and consent.
