@@ -40,9 +40,12 @@ export class Foundation extends Migration {
   }
 
   private audit(): void {
+    // The moment the trail is written with. Only the owner of the tables may set another (to load a record made before); the application never can.
+    this.addSql(`create function app_now() returns timestamptz language sql stable security definer set search_path = public as $$
+      select coalesce(case when pg_has_role(session_user, current_user, 'usage') then nullif(current_setting('app.clock', true), '')::timestamptz end, now()) $$`);
     this.addSql(`create table audit_entry (
       id bigint generated always as identity primary key,
-      at timestamptz not null default now(),
+      at timestamptz not null default app_now(),
       txid xid8 not null default pg_current_xact_id(),
       actor_id uuid not null,
       role text not null,
@@ -61,6 +64,8 @@ export class Foundation extends Migration {
     this.addSql('create index audit_entry_row on audit_entry (table_name, row_id, id)');
     this.addSql('create index audit_entry_site on audit_entry (site_id, id)');
     this.addSql('create index audit_entry_participant on audit_entry (participant_id, id)');
+    // The order in which seals take rows: a lower id may commit after a higher one, a lower transaction below the horizon may not.
+    this.addSql('create index audit_entry_txid on audit_entry (txid, id)');
     this.addSql('create index audit_entry_at on audit_entry (at, id)');
     this.addSql('create index audit_entry_actor on audit_entry (actor_id, id)');
     this.addSql('alter table audit_entry enable row level security');

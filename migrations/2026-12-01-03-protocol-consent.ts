@@ -61,7 +61,20 @@ export class ProtocolConsent extends Migration {
       ...guard({ table: 'invitation', reach: 'sign-in', grants: change, audit: { without: ['token_hash'], identity: true } }),
     ])
       this.addSql(line);
-    // Site staff issue invitations for their own site; only the sign-in acts may read or use them.
-    this.addSql(`create policy invitation_issue on invitation for insert with check (site_id = any ((select app_reach())::uuid[]) and (select app_participant()) is null)`);
+    this.links();
+  }
+
+  /** A site issues and ends its own links; the holder of a consent link ends it by signing; everything else needs a sign-in act. */
+  private links(): void {
+    const issuer = `site_id = any ((select app_reach())::uuid[]) and (select app_participant()) is null`;
+    const holder = `kind = 'consent' and screening_id = (select app_screening())`;
+    const ends = `(select app_identity()) = 'on' and ((${issuer}) or (${holder}))`;
+    this.addSql(`create policy invitation_issue on invitation for insert with check (${issuer})`);
+    this.addSql(`create policy invitation_ends_read on invitation for select using (${ends})`);
+    this.addSql(`create policy invitation_ends on invitation for update using (${ends}) with check (${ends})`);
+    // Joining takes the address that the link was sent to; only while somebody joins, and only for people who were invited.
+    this.addSql(`create policy participant_identity_join on participant_identity for select using (
+      (select app_identity()) = 'sign-in' and (select app_act()) = 'account.join'
+      and exists (select 1 from invitation i where i.kind = 'join' and i.participant_id = participant_identity.participant_id))`);
   }
 }

@@ -31,7 +31,7 @@ export class ReviewRelease extends Migration {
     declare before_image jsonb := to_jsonb(old); after_image jsonb := to_jsonb(new);
     begin
       if before_image = after_image then return null; end if;
-      update verification set fell_at = now(), version = version + 1
+      update verification set fell_at = app_now(), version = version + 1
       where target_id = new.id and fell_at is null
         and before_image #> string_to_array(field, '.') is distinct from after_image #> string_to_array(field, '.');
       return null;
@@ -45,7 +45,7 @@ export class ReviewRelease extends Migration {
     this.addSql(`create table extract (
       id uuid primary key default gen_random_uuid(), study_id uuid not null references study, number bigint generated always as identity unique, profile text not null check (profile in ('open', 'controlled')), purpose text not null check (length(purpose) between 1 and 500), recipient text not null, as_of timestamptz not null,
       state text not null default 'waiting' check (state in ('waiting', 'preparing', 'ready', 'failed')), progress integer not null default 0 check (progress between 0 and 100), files jsonb not null default '[]', removed jsonb not null default '[]', counts jsonb not null default '{}', failure text, requested_by uuid not null references account, requested_label text not null, requested_at timestamptz not null, ready_at timestamptz, version integer not null default 1)`);
-    this.addSql(`create table seal (id bigint generated always as identity primary key, tree_size bigint not null unique, last_entry_id bigint not null, root_hash text not null, sealed_at timestamptz not null)`);
+    this.addSql(`create table seal (id bigint generated always as identity primary key, tree_size bigint not null unique, last_entry_id bigint not null, below_txid xid8 not null, root_hash text not null, peaks text[] not null, sealed_at timestamptz not null)`);
     for (const line of [
       ...guard({ table: 'extract', reach: 'known', grants: ['select', 'insert', 'update'], audit: {} }),
       // A seal is itself the proof over the trail; it is append-only and never part of it.

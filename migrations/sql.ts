@@ -21,15 +21,16 @@ export type Reach =
   | 'sign-in';
 
 const own = `((select app_participant()) is null or participant_id = (select app_participant()))`;
-const ownScreening = `((select app_screening()) is null or screening_id = (select app_screening()))`;
+// The holder of a consent link reaches one screening; a participant only what hangs on the own record.
+const ownScreening = `case when (select app_screening()) is not null then screening_id = (select app_screening()) else ${own} end`;
 const inReach = `site_id = any ((select app_reach())::uuid[])`;
 const identityOn = `(select app_identity()) = 'on'`;
 
 const conditions: Record<Reach, string> = {
   record: `${inReach} and ${own}`,
   identity: `${inReach} and ${own} and ${identityOn}`,
-  screening: `${inReach} and ${ownScreening} and ((select app_participant()) is null or participant_id = (select app_participant()))`,
-  'screening-identity': `${inReach} and ${ownScreening} and ((select app_participant()) is null or participant_id = (select app_participant())) and ${identityOn}`,
+  screening: `${inReach} and ${ownScreening}`,
+  'screening-identity': `${inReach} and ${ownScreening} and ${identityOn}`,
   known: `(select app_actor()) is not null`,
   account: `(select app_actor()) is not null and ((select app_participant()) is null or account_id = (select app_actor()))`,
   'sign-in': `(select app_identity()) = 'sign-in'`,

@@ -91,5 +91,8 @@ function untilTold(children) {
       resolve('told');
     };
     for (const sign of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(sign, hear);
+    // npm may be ended without passing the signal on: nothing is left serving behind its back.
+    const parent = process.ppid;
+    if (process.env.npm_lifecycle_event) setInterval(() => process.ppid !== parent && hear(), 1000).unref();
   });
 }

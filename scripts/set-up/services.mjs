@@ -22,7 +22,7 @@ function sessionSecret() {
 /** Migrates a data base as its owner. */
 export function migrate({ appUrl, ownerUrl }) {
   const env = { ...process.env, DATABASE_URL: appUrl, OWNER_DATABASE_URL: ownerUrl };
-  run(node, ['--import', 'tsx', 'scripts/migrate.ts'], { env, mend: "The data base could not be migrated: see above; 'npm run db:reset' starts with an empty one." });
+  run(node, ['--import', 'tsx', '--conditions=react-server', 'scripts/migrate.ts'], { env, mend: "The data base could not be migrated: see above; 'npm run db:reset' starts with an empty one." });
 }
 
 /** Fills an empty data base with the invented study; one that holds data is left as it is. */

@@ -38,7 +38,7 @@ function at(url: string, database: string): string {
 }
 
 function migrate(ownerUrl: string, appUrl: string): void {
-  const child = spawnSync(process.execPath, ['--import', 'tsx', 'scripts/migrate.ts'], {
+  const child = spawnSync(process.execPath, ['--import', 'tsx', '--conditions=react-server', 'scripts/migrate.ts'], {
     cwd: root,
     env: { ...process.env, OWNER_DATABASE_URL: ownerUrl, DATABASE_URL: appUrl },
     encoding: 'utf8',

@@ -40,6 +40,8 @@ Object.assign(process.env, {
 });
 
 afterAll(async () => {
+  // The code under test keeps one pool per process; its connections would hold the clone.
+  await (await (globalThis as typeof globalThis & { tidemarkOrm?: Promise<{ close(force: boolean): Promise<void> }> }).tidemarkOrm)?.close(true);
   await asOwner(`drop database if exists ${clone} with (force)`);
   rmSync(files, { recursive: true, force: true });
 });

@@ -1,0 +1,48 @@
+import { Client } from 'pg';
+import { afterAll, beforeAll, expect, test } from 'vitest';
+import { sealTrail } from '@/lib/audit/seal-trail';
+import { systemActor } from '@/lib/auth/roles';
+import { withWork } from '@/lib/work/with-work';
+import { verifyAudit } from '@/scripts/verify-audit.mjs';
+
+let owner: Client;
+const ownerUrl = () => process.env['OWNER_DATABASE_URL'] ?? '';
+
+beforeAll(async () => {
+  owner = new Client({ connectionString: ownerUrl() });
+  await owner.connect();
+});
+afterAll(() => owner.end());
+
+/** Writes rows that the trail watches. */
+const write = (count: number) =>
+  withWork(systemActor(), 'account.join', (work) =>
+    work.sql(`insert into account (kind, label) select 'staff', 'T-' || n from generate_series(1, ?) n`, [count]),
+  );
+const seal = () => withWork(systemActor(), 'job.seal', sealTrail);
+
+test('seals grow with the trail, hold, and name the range in which an owner edited a row', async () => {
+  await write(7);
+  const first = await seal();
+  expect(first?.treeSize).toBeGreaterThanOrEqual(7);
+  expect(await seal()).toBeNull();
+  await write(12);
+  const second = await seal();
+  expect(second?.treeSize).toBe((first?.treeSize ?? 0) + 12);
+  expect((await verifyAudit(ownerUrl())).sentence).toMatch(/^Unbroken/);
+
+  // The data base's owner can switch the guard off; the seals still tell.
+  await owner.query('alter table audit_entry disable trigger user');
+  await owner.query(`update audit_entry set after = jsonb_set(after, '{label}', '"T-99"') where id = (select max(id) from audit_entry)`);
+  await owner.query('alter table audit_entry enable trigger user');
+  const verdict = await verifyAudit(ownerUrl());
+  expect(verdict.ok).toBe(false);
+  expect(verdict.sentence).toMatch(/does not hold/);
+});
+
+test('a row that disappeared is missed', async () => {
+  await owner.query('alter table audit_entry disable trigger user');
+  await owner.query(`delete from audit_entry where id = (select max(id) from audit_entry)`);
+  await owner.query('alter table audit_entry enable trigger user');
+  expect((await verifyAudit(ownerUrl())).ok).toBe(false);
+});
