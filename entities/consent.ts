@@ -42,3 +42,15 @@ export function signByStaff(consent: Consent, by: string, at: Date): void {
   consent.staffSignedAt = at;
   consent.staffSignedBy = by;
 }
+
+/** Another way of consenting, or a newer form. What was read stays read as long as the form is the same. */
+export function changeMode(consent: Consent, mode: Consent['mode']): void {
+  lawful(consent.state === 'reading', 'This consent is already signed.');
+  consent.mode = mode;
+}
+
+/** The consent will not be signed: a newer form has taken its place. */
+export function setAside(consent: Consent): void {
+  lawful(consent.state === 'reading', 'This consent is already signed.');
+  consent.state = 'set aside';
+}

@@ -32,3 +32,20 @@ export function leaveNotEnrolled(screening: Screening, reason: string, note: str
   screening.notEnrolledReason = reason;
   screening.notEnrolledNote = note;
 }
+
+/** The answers let the person in; who confirmed it, and when, is kept. */
+export function confirmEligibility(screening: Screening, by: string, at: Date): void {
+  lawful(screening.state === 'screening', 'This screening has already ended.');
+  lawful(screening.eligibilityConfirmedAt == null, 'Eligibility is already confirmed.');
+  screening.eligibilityConfirmedAt = at;
+  screening.eligibilityConfirmedBy = by;
+}
+
+/** The screening ends in enrolment. Consent is asked of the data base as well, whoever enrols. */
+export function endInEnrolment(screening: Screening, participantId: string, hasConsent: boolean): void {
+  lawful(screening.state === 'screening', 'This screening has already ended.');
+  lawful(screening.eligibilityConfirmedAt != null, 'Confirm eligibility first: nobody can be enrolled without it.');
+  lawful(hasConsent, 'Consent is not complete: both signatures are needed before anybody can be enrolled.');
+  screening.state = 'enrolled';
+  screening.participantId = participantId;
+}
