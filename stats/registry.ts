@@ -41,6 +41,23 @@ export const statistics = [
     reference: 'Cornfield J. Proc 3rd Berkeley Symp 1956;4:135-148; Berry G, Armitage P. Statistician 1995;44:417-423',
   }),
   defineStatistic({
+    name: 'cox',
+    method: 'Cox proportional-hazards regression, Efron’s or Breslow’s ties, strata, Lin-Wei standard errors by cluster',
+    reference:
+      'Cox DR. J R Stat Soc B 1972;34:187-220; Efron B. J Am Stat Assoc 1977;72:557-565; Breslow N. Biometrics 1974;30:89-99; Lin DY, Wei LJ. J Am Stat Assoc 1989;84:1074-1078',
+  }),
+  defineStatistic({
+    name: 'cumulativeHazard',
+    method: 'Cumulative hazard at given covariates from a Cox fit',
+    reference: 'Link CL. Biometrics 1984;40:601-610; Therneau TM, Grambsch PM. Modeling Survival Data, 2000, ch. 10',
+  }),
+  defineStatistic({
+    name: 'cumulativeIncidence',
+    method: 'Aalen-Johansen cumulative incidence with competing causes, multinomial variance, log-log limits',
+    reference:
+      'Aalen OO, Johansen S. Scand J Stat 1978;5:141-150; Marubini E, Valsecchi MG. Analysing Survival Data from Clinical Trials and Observational Studies, 1995, ch. 10',
+  }),
+  defineStatistic({
     name: 'digitPreference',
     method: 'Chi-square test that terminal digits are even',
     reference: 'Pearson K. Phil Mag 1900;50:157-175; thresholds of the flag are common practice, no source',
@@ -66,6 +83,27 @@ export const statistics = [
     reference: 'Freeman GH, Halton JH. Biometrika 1951;38:141-149; Mehta CR, Patel NR. J Am Stat Assoc 1983;78:427-434',
   }),
   defineStatistic({
+    name: 'grayTest',
+    method: 'Gray’s test of cumulative incidence, k groups, strata',
+    reference: 'Gray RJ. Ann Stat 1988;16:1141-1154',
+  }),
+  defineStatistic({
+    name: 'intervalOnset',
+    method: 'Non-parametric maximum likelihood for onset seen between visits (Turnbull sets, EMICM, stopped on the KKT gap)',
+    reference: 'Turnbull BW. J R Stat Soc B 1976;38:290-295; Wellner JA, Zhan Y. J Am Stat Assoc 1997;92:945-959',
+  }),
+  defineStatistic({
+    name: 'intervalRegression',
+    method: 'Weibull or exponential regression for interval-censored times, maximum likelihood',
+    reference: 'Odell PM, Anderson KM, D’Agostino RB. Biometrics 1992;48:951-959; Lindsey JC, Ryan LM. Stat Med 1998;17:219-238',
+  }),
+  defineStatistic({
+    name: 'kaplanMeier',
+    method: 'Kaplan-Meier survival curve, Greenwood variance, log-log limits (log and plain on request)',
+    reference:
+      'Kaplan EL, Meier P. J Am Stat Assoc 1958;53:457-481; Greenwood M. Rep Public Health Med Subj 33, 1926; Kalbfleisch JD, Prentice RL. The Statistical Analysis of Failure Time Data, 1980',
+  }),
+  defineStatistic({
     name: 'katzRiskRatio',
     method: 'Risk ratio with Katz log limits',
     reference: 'Katz D, Baptista J, Azen SP, Pike MC. Biometrics 1978;34:469-474',
@@ -79,6 +117,12 @@ export const statistics = [
     name: 'leastSquares',
     method: 'Linear regression by least squares',
     reference: 'Golub GH. Numer Math 1965;7:206-216 (Householder triangularisation)',
+  }),
+  defineStatistic({
+    name: 'logRank',
+    method: 'Log-rank test of k groups, with strata, weights S(t-)^rho and a test for trend',
+    reference:
+      'Mantel N. Cancer Chemother Rep 1966;50:163-170; Peto R, Peto J. J R Stat Soc A 1972;135:185-207; Harrington DP, Fleming TR. Biometrika 1982;69:553-566; Tarone RE. Biometrika 1975;62:679-690',
   }),
   defineStatistic({
     name: 'mantelHaenszel',
@@ -107,6 +151,11 @@ export const statistics = [
     reference: 'Miettinen O, Nurminen M. Stat Med 1985;4:213-226',
   }),
   defineStatistic({
+    name: 'nelsonAalen',
+    method: 'Nelson-Aalen cumulative hazard',
+    reference: 'Nelson W. Technometrics 1972;14:945-966; Aalen O. Ann Stat 1978;6:701-726',
+  }),
+  defineStatistic({
     name: 'newcombeDifference',
     method: 'Difference of two proportions with Newcombe hybrid score limits (method 10)',
     reference: 'Newcombe RG. Stat Med 1998;17:873-890',
@@ -132,6 +181,16 @@ export const statistics = [
     reference: 'Rothman KJ, Greenland S, Lash TL. Modern Epidemiology, 3rd ed. 2008, ch. 3',
   }),
   defineStatistic({
+    name: 'proportionalHazardsTest',
+    method: 'Test of proportional hazards against a covariate-by-time interaction, score form or the 1994 form by scaled Schoenfeld residuals',
+    reference: 'Grambsch PM, Therneau TM. Biometrika 1994;81:515-526; Therneau TM, Grambsch PM. Modeling Survival Data, 2000, ch. 6',
+  }),
+  defineStatistic({
+    name: 'quantileOf',
+    method: 'Quantile of a survival curve, limits by inverting the pointwise limits',
+    reference: 'Brookmeyer R, Crowley J. Biometrics 1982;38:29-41',
+  }),
+  defineStatistic({
     name: 'rateDifference',
     method: 'Difference of two incidence rates with Wald limits',
     reference: 'Rothman KJ, Greenland S, Lash TL. Modern Epidemiology, 3rd ed. 2008, ch. 14',
@@ -155,6 +214,16 @@ export const statistics = [
     name: 'riskRatio',
     method: 'Risk ratio with Katz log limits, Koopman score limits where a cell is zero',
     reference: 'Katz D, Baptista J, Azen SP, Pike MC. Biometrics 1978;34:469-474; Koopman PAR. Biometrics 1984;40:513-517',
+  }),
+  defineStatistic({
+    name: 'rmst',
+    method: 'Restricted mean survival time, Greenwood-type variance',
+    reference: 'Klein JP, Moeschberger ML. Survival Analysis, 2nd ed. 2003, section 4.5',
+  }),
+  defineStatistic({
+    name: 'rmstDifference',
+    method: 'Difference of two restricted mean survival times',
+    reference: 'Royston P, Parmar MKB. BMC Med Res Methodol 2013;13:152',
   }),
   defineStatistic({
     name: 'waldDifference',

@@ -1,4 +1,4 @@
-import { normal } from '../distributions';
+import { criticalValue } from '../critical-value';
 import { requireRange, type Interval } from '../result';
 import { coefficientsOf, type CoxFit } from './cox';
 import { coxDesign, type CoxData, type CoxDesign } from './cox-design';
@@ -87,7 +87,7 @@ export function predictSurvival(
   const curves = cumulativeHazard(data, fit, x);
   const curve = options.stratum === undefined ? curves[0] : curves.find(({ stratum }) => stratum === options.stratum);
   requireRange(curve !== undefined && (options.stratum !== undefined || curves.length === 1), 'Name the stratum to predict for; it must be one of the data.');
-  const z = normal.isf((1 - fit.level) / 2);
+  const z = criticalValue(fit.level);
   const { level } = fit;
   return times.map((time) => {
     const k = lastNotAfter(curve.time, time);

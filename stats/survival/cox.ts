@@ -1,3 +1,4 @@
+import { criticalValue } from '../critical-value';
 import { chiSquare, normal } from '../distributions';
 import { requireLevel, requireRange, type Interval, type Provenance } from '../result';
 import { quadraticForm, rowsOf } from './cholesky';
@@ -70,7 +71,7 @@ export function cox(data: CoxData, options: CoxOptions = {}): CoxFit {
   const robust = data.cluster !== undefined || options.robust === true ? robustCovariance(design, ties, fit, data) : undefined;
   const p = names.length;
   const covariance = unscale(fit.covariance, design);
-  const z = normal.isf((1 - level) / 2);
+  const z = criticalValue(level);
   const beta = Array.from(fit.beta, (b, j) => b / design.spread[j]!);
   const whole = wholeTests(fit, design.events);
   return {

@@ -1,4 +1,4 @@
-import { normal } from '../distributions';
+import { criticalValue } from '../critical-value';
 import { requireLevel, requireRange, type Interval, type Provenance } from '../result';
 import { checkFollowUp, take } from './follow-up';
 import { atRiskAt } from './risk-table';
@@ -76,7 +76,7 @@ export function cumulativeIncidence(data: CompetingFollowUp, options: Cumulative
       if (counts) counts[g]!++;
     }
   }
-  const z = normal.isf((1 - level) / 2);
+  const z = criticalValue(level);
   return {
     time: sorted.time,
     atRisk,

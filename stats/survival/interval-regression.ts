@@ -1,4 +1,5 @@
-import { chiSquare, normal } from '../distributions';
+import { criticalValue } from '../critical-value';
+import { chiSquare } from '../distributions';
 import { requireLevel, requireRange, type Interval, type Provenance } from '../result';
 import { factor, inverse, rowsOf } from './cholesky';
 import { informativeRows } from './interval-onset';
@@ -82,7 +83,7 @@ function describe({ parameters, information, logLikelihood }: WeibullFit, p: num
   const size = p + (distribution === 'weibull' ? 2 : 1);
   const covariance = inverse(factor(information, size));
   const sigma = distribution === 'weibull' ? Math.exp(parameters[p + 1]!) : 1;
-  const z = normal.isf((1 - level) / 2);
+  const z = criticalValue(level);
   const ratios = Array.from({ length: p }, (_, j) => {
     const estimate = -parameters[j + 1]! / sigma;
     const at = (a: number, b: number) => covariance[a * size + b]!;

@@ -1,4 +1,4 @@
-import { normal } from '../distributions';
+import { criticalValue } from '../critical-value';
 import { requireLevel, type Provenance } from '../result';
 import { type FollowUp, usableFollowUp } from './follow-up';
 import { LIMIT_NAMES, type LimitKind, survivalLimit } from './limits';
@@ -45,7 +45,7 @@ export function kaplanMeier(data: FollowUp, options: KaplanMeierOptions = {}): S
   const usable = usableFollowUp(data);
   const chosen = options.given === undefined ? usable : conditional(usable, options.given);
   const table = riskTable(chosen.data, options.order ?? orderTimes(chosen.data.time));
-  const z = normal.isf((1 - level) / 2);
+  const z = criticalValue(level);
   const curve = productLimit(table, z, limits);
   return {
     ...table,

@@ -1,3 +1,4 @@
+import { criticalValue } from '../critical-value';
 import { normal } from '../distributions';
 import { type Estimate, type Interval, requireRange } from '../result';
 import type { SurvivalCurve } from './kaplan-meier';
@@ -27,7 +28,7 @@ export function rmst(curve: SurvivalCurve, tau: number): RestrictedMean {
   }
   const { area, variance, events } = areaBackwards(curve, tau);
   const se = Math.sqrt(variance);
-  const half = normal.isf((1 - curve.level) / 2) * se;
+  const half = criticalValue(curve.level) * se;
   return { ...about, events, estimate: area, se, lower: area - half, upper: area + half };
 }
 
@@ -57,7 +58,7 @@ export function rmstDifference(a: RestrictedMean, b: RestrictedMean): Interval &
   }
   const estimate = a.estimate - b.estimate;
   const se = Math.hypot(a.se ?? 0, b.se ?? 0);
-  const half = normal.isf((1 - level) / 2) * se;
+  const half = criticalValue(level) * se;
   if (se === 0) return { estimate, se, lower: estimate, upper: estimate, p: null, level, reason: 'no event in either group, so no test' };
   return { estimate, se, lower: estimate - half, upper: estimate + half, p: 2 * normal.sf(Math.abs(estimate) / se), level };
 }
