@@ -10,7 +10,7 @@ export interface FisherExact extends Provenance {
   readonly pLess: number;
   /** P(X >= a), evidence that it is above 1. */
   readonly pGreater: number;
-  /** The same two-sided sum, the observed table counted half. */
+  /** The same two-sided sum, tables as probable as the observed counted half. */
   readonly pMid: number;
   /** Twice the smaller mid-P tail, at most 1: the one that agrees with mid-P limits. */
   readonly pMidCentral: number;
@@ -27,20 +27,22 @@ export function fisherExact(table: FourfoldTable): FisherExact {
   let all = 0;
   let less = 0;
   let greater = 0;
-  let rare = 0;
+  let rarer = 0;
+  let ties = 0;
   for (let k = 0; k < logWeights.length; k++) {
     const weight = Math.exp(logWeights[k] as number);
     all += weight;
     if (k < observed) less += weight;
     if (k > observed) greater += weight;
-    if (weight <= own * TIE_SLACK) rare += weight;
+    if (weight * TIE_SLACK < own) rarer += weight;
+    else if (weight <= own * TIE_SLACK) ties += weight;
   }
   const { a, b, c, d } = table;
   return {
-    p: Math.min(1, rare / all),
+    p: Math.min(1, (rarer + ties) / all),
     pLess: Math.min(1, (less + own) / all),
     pGreater: Math.min(1, (greater + own) / all),
-    pMid: (rare - own / 2) / all,
+    pMid: (rarer + ties / 2) / all,
     pMidCentral: Math.min(1, (2 * Math.min(less, greater) + own) / all),
     method: methodOf('fisherExact'),
     n: a + b + c + d,
