@@ -95,7 +95,7 @@ function newWeek(facts: LoadFacts, previous: PastLoad, settings: TrainingSetting
 function reasonNotToRaise(facts: LoadFacts, weekKg: number, settings: TrainingSettings): string | null {
   const { minDaysSinceRaise, minSessionsAtLoad, breakDays: withinDays } = settings;
   const stay = `Stay at ${printKg(weekKg)} kg or lighter`;
-  if (facts.arm === 'unknown') return `${stay} until you have answered the arm check.`;
+  if (facts.arm !== 'clear') return `${stay} until you have answered the arm check.`;
   if (isShortBreak(facts, settings)) return `You had ${facts.gapDays} days off this. Stay at ${printKg(facts.previous?.load ?? weekKg)} kg or go lighter this time.`;
   const raisedOn = lastRaiseOn(facts.past, withinDays);
   if (minDaysSinceRaise !== null && raisedOn !== null && daysBetween({ from: raisedOn, to: facts.on }) < minDaysSinceRaise) {
