@@ -22,7 +22,7 @@ export function ChoiceInSentence({ label, choices, className, ...rest }: ChoiceI
   );
 }
 
-export interface ValueInSentenceProps extends Omit<ComponentProps<'input'>, 'size' | 'disabled'> {
+export interface ValueInSentenceProps extends Omit<ComponentProps<'input'>, 'disabled'> {
   label: string;
   type?: 'text' | 'date' | 'number';
 }

@@ -1,0 +1,6 @@
+import { PhoneShellExample } from '@/components/shell/shell.examples';
+
+/** The participant's frame by itself. */
+export default function PhoneShellPage() {
+  return <PhoneShellExample />;
+}
