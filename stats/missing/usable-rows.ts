@@ -1,4 +1,4 @@
-import { requireRange } from '@/stats/result';
+import { requireRange } from '../result';
 
 /** The rows on which every column has a value, and how many rows that leaves out. */
 export interface UsableRows {
@@ -20,22 +20,26 @@ export function usableRows(columns: Readonly<Record<string, ArrayLike<number>>>)
   for (const [name, column] of named) {
     requireRange(column.length === total, `Columns must be equally long: ${name} has ${column.length} rows, not ${total}.`);
   }
+  // Column by column: a mark for each row that lacks a value, so that a million rows cost one plain loop a column.
+  const gap = new Uint8Array(total);
+  for (const [name, column] of named) {
+    for (let row = 0; row < total; row++) {
+      const value = column[row] as number;
+      if (value - value === 0) continue;
+      requireRange(Number.isNaN(value), `${name} is not finite in row ${row}.`);
+      gap[row] = 1;
+    }
+  }
   const rows = new Int32Array(total);
   let used = 0;
-  for (let row = 0; row < total; row++) {
-    let complete = true;
-    for (const [name, column] of named) {
-      const value = column[row] as number;
-      if (Number.isNaN(value)) complete = false;
-      else requireRange(Number.isFinite(value), `${name} is not finite in row ${row}.`);
-    }
-    if (complete) rows[used++] = row;
-  }
+  for (let row = 0; row < total; row++) if (gap[row] === 0) rows[used++] = row;
   const missing = total - used;
   return { rows: rows.slice(0, used), total, leftOut: missing > 0 ? [{ reason: 'value missing', count: missing }] : [] };
 }
 
 /** The named rows of a column, as a new Float64Array. */
 export function pickRows(column: ArrayLike<number>, rows: Int32Array): Float64Array {
-  return Float64Array.from(rows, (row) => column[row] as number);
+  const picked = new Float64Array(rows.length);
+  for (let i = 0; i < rows.length; i++) picked[i] = column[rows[i] as number] as number;
+  return picked;
 }

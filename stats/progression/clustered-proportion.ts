@@ -1,6 +1,6 @@
-import { studentT } from '@/stats/distributions';
-import { usableRows } from '@/stats/missing/usable-rows';
-import { requireLevel, requireRange, type Estimate } from '@/stats/result';
+import { studentT } from '../distributions';
+import { usableRows } from '../missing/usable-rows';
+import { requireLevel, requireRange, type Estimate } from '../result';
 
 /** A pooled proportion whose standard error knows that rows of one participant go together. */
 export interface ClusteredProportion extends Estimate {

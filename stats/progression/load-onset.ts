@@ -1,5 +1,5 @@
-import { usableRows } from '@/stats/missing/usable-rows';
-import { requireRange, type Provenance } from '@/stats/result';
+import { usableRows } from '../missing/usable-rows';
+import { requireRange, type Provenance } from '../result';
 
 /** When each participant's logs first reached a load; one row a participant, ascending by participant. */
 export interface LoadOnset extends Provenance {

@@ -1,7 +1,7 @@
-import { binomial } from '@/stats/distributions';
-import { pickRows, usableRows } from '@/stats/missing/usable-rows';
-import { quantileSorted } from '@/stats/progression/quantile';
-import { requireLevel, requireRange, type Estimate } from '@/stats/result';
+import { binomial } from '../distributions';
+import { pickRows, usableRows } from '../missing/usable-rows';
+import { quantileSorted } from './quantile';
+import { requireLevel, requireRange, type Estimate } from '../result';
 
 /** A quantile with distribution-free limits that are two of the observed values. */
 export interface MedianLimits extends Estimate {

@@ -1,7 +1,7 @@
-import { pickRows, usableRows } from '@/stats/missing/usable-rows';
-import { moments } from '@/stats/progression/moments';
-import { quantileSorted, type QuantileType } from '@/stats/progression/quantile';
-import { requireRange, type Provenance } from '@/stats/result';
+import { pickRows, usableRows } from '../missing/usable-rows';
+import { moments } from './moments';
+import { quantileSorted, type QuantileType } from './quantile';
+import { requireRange, type Provenance } from '../result';
 
 /** The spread of the values logged in one week. */
 export interface WeekBand {

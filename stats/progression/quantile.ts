@@ -1,4 +1,4 @@
-import { requireRange } from '@/stats/result';
+import { requireRange } from '../result';
 
 /** The continuous sample quantiles of Hyndman & Fan; 7 is the default here and says so in every method line. */
 export type QuantileType = 4 | 5 | 6 | 7 | 8 | 9;

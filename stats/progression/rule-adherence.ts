@@ -1,7 +1,7 @@
-import { clusteredProportion, type ClusteredProportion } from '@/stats/progression/clustered-proportion';
-import { quantile } from '@/stats/progression/quantile';
-import { weeklySteps } from '@/stats/progression/weekly-steps';
-import { requireRange } from '@/stats/result';
+import { clusteredProportion, type ClusteredProportion } from './clustered-proportion';
+import { quantile } from './quantile';
+import { weeklySteps } from './weekly-steps';
+import { requireRange } from '../result';
 
 /** How many weekly steps kept to a rule of progression, pooled over participants. */
 export interface RuleAdherence extends ClusteredProportion {

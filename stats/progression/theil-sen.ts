@@ -1,9 +1,9 @@
-import { normal } from '@/stats/distributions';
-import { pickRows, usableRows } from '@/stats/missing/usable-rows';
-import { kendall } from '@/stats/progression/kendall';
-import { quantile } from '@/stats/progression/quantile';
-import { slopesAtRanks } from '@/stats/progression/pairwise-slopes';
-import { requireLevel, requireRange, type Estimate } from '@/stats/result';
+import { normal } from '../distributions';
+import { pickRows, usableRows } from '../missing/usable-rows';
+import { kendall } from './kendall';
+import { quantile } from './quantile';
+import { slopesAtRanks } from './pairwise-slopes';
+import { requireLevel, requireRange, type Estimate } from '../result';
 
 /** A median slope with its rank limits; `estimate` is the slope, in units of y for one unit of x. */
 export interface TheilSen extends Estimate {

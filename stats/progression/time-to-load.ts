@@ -1,8 +1,8 @@
-import { loadOnset, type LoadOnset } from '@/stats/progression/load-onset';
-import { requireLevel, type Interval, type Provenance } from '@/stats/result';
-import { kaplanMeier, type SurvivalCurve } from '@/stats/survival/kaplan-meier';
-import type { LimitKind } from '@/stats/survival/limits';
-import { quantileOf } from '@/stats/survival/quantile-of';
+import { loadOnset, type LoadOnset } from './load-onset';
+import { requireLevel, type Interval, type Provenance } from '../result';
+import { kaplanMeier, type SurvivalCurve } from '../survival/kaplan-meier';
+import type { LimitKind } from '../survival/limits';
+import { quantileOf } from '../survival/quantile-of';
 
 /** How long it took to reach a load, censored at the last log of those who did not. */
 export interface TimeToLoad extends Provenance {

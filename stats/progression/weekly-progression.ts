@@ -1,5 +1,5 @@
-import { moments } from '@/stats/progression/moments';
-import { requireRange } from '@/stats/result';
+import { moments } from './moments';
+import { requireRange } from '../result';
 
 /** How one participant's load moved over consecutive weeks, described and not tested. */
 export interface WeeklyProgression {

@@ -1,5 +1,5 @@
-import { usableRows } from '@/stats/missing/usable-rows';
-import { requireRange, type Provenance } from '@/stats/result';
+import { usableRows } from '../missing/usable-rows';
+import { requireRange, type Provenance } from '../result';
 
 /** One row for each pair of logs of a participant exactly one week apart. */
 export interface WeeklySteps extends Provenance {

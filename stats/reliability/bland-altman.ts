@@ -1,7 +1,7 @@
-import { noncentralT, normal, studentT } from '@/stats/distributions';
-import { pickRows, usableRows } from '@/stats/missing/usable-rows';
-import { moments } from '@/stats/progression/moments';
-import { requireLevel, requireRange, type Estimate, type Interval } from '@/stats/result';
+import { noncentralT, normal, studentT } from '../distributions';
+import { pickRows, usableRows } from '../missing/usable-rows';
+import { moments } from '../progression/moments';
+import { requireLevel, requireRange, type Estimate, type Interval } from '../result';
 
 /** Agreement of two methods; the estimate is the bias (first minus second), in the unit of the readings. */
 export interface BlandAltman extends Estimate {

@@ -1,5 +1,5 @@
-import { normal } from '@/stats/distributions';
-import { requireRange } from '@/stats/result';
+import { normal } from '../distributions';
+import { requireRange } from '../result';
 
 /** Readings behind a relative change of one limb against the other: two limbs at two times. */
 const READINGS = 4;

@@ -1,6 +1,6 @@
-import { fisherF } from '@/stats/distributions';
-import { twoWayAnova, type TwoWayAnova } from '@/stats/reliability/two-way-anova';
-import { requireLevel, type Interval, type Provenance } from '@/stats/result';
+import { fisherF } from '../distributions';
+import { twoWayAnova, type TwoWayAnova } from './two-way-anova';
+import { requireLevel, type Interval, type Provenance } from '../result';
 
 /** An F test with its real-valued degrees of freedom; p is null where F does not exist. */
 export interface FTest {

@@ -1,7 +1,7 @@
-import { chiSquare } from '@/stats/distributions';
-import { sdcFromSem } from '@/stats/reliability/sdc-from-sem';
-import { twoWayAnova } from '@/stats/reliability/two-way-anova';
-import { requireLevel, type Estimate } from '@/stats/result';
+import { chiSquare } from '../distributions';
+import { sdcFromSem } from './sdc-from-sem';
+import { twoWayAnova } from './two-way-anova';
+import { requireLevel, type Estimate } from '../result';
 
 /** Standard errors of measurement in the unit of the readings; the estimate and limits are the consistency form. */
 export interface MeasurementError extends Estimate {

@@ -1,5 +1,5 @@
-import { normal } from '@/stats/distributions';
-import { requireLevel, requireRange } from '@/stats/result';
+import { normal } from '../distributions';
+import { requireLevel, requireRange } from '../result';
 
 /**
  * Smallest detectable change between two readings of one person,

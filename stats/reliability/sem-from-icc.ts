@@ -1,4 +1,4 @@
-import { requireRange } from '@/stats/result';
+import { requireRange } from '../result';
 
 /**
  * Standard error of measurement from a published reliability, SD sqrt(1 - ICC),

@@ -1,7 +1,7 @@
-import { chiSquare } from '@/stats/distributions';
-import { pickRows, usableRows } from '@/stats/missing/usable-rows';
-import { moments } from '@/stats/progression/moments';
-import { requireLevel, type Estimate } from '@/stats/result';
+import { chiSquare } from '../distributions';
+import { pickRows, usableRows } from '../missing/usable-rows';
+import { moments } from '../progression/moments';
+import { requireLevel, type Estimate } from '../result';
 
 /** Technical error of measurement in the unit of the readings. */
 export interface TechnicalError extends Estimate {

@@ -1,5 +1,5 @@
-import { pickRows, usableRows } from '@/stats/missing/usable-rows';
-import { requireRange, type Provenance } from '@/stats/result';
+import { pickRows, usableRows } from '../missing/usable-rows';
+import { requireRange, type Provenance } from '../result';
 
 /** Mean squares of a table with one row a subject and one column a rater (trial, method). */
 export interface TwoWayAnova extends Provenance {
