@@ -5,9 +5,11 @@
  *   npm test -- --only=unit,db          some parts: types, lint, unit, db, e2e
  *   npm test -- --only=e2e -- consent   what follows the second -- goes to the parts' own runners
  */
-import { mkdirSync } from 'node:fs';
+import { existsSync, mkdirSync } from 'node:fs';
 import { join } from 'node:path';
+import { keepFile } from './pg.mjs';
 import { ensureChromium } from './set-up/chromium.mjs';
+import { stopCluster } from './set-up/cluster.mjs';
 import { checkNode, ensurePackages } from './set-up/packages.mjs';
 import { command, playwrightCounts, vitestCounts } from './set-up/test-counts.mjs';
 import { withTestServers } from './set-up/test-servers.mjs';
@@ -59,8 +61,15 @@ async function main(args) {
   checkNode();
   ensurePackages();
   mkdirSync(results, { recursive: true });
+  // Told to stop, the part in hand ends and puts away what it started; the rest is not begun.
+  let told = false;
+  for (const sign of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(sign, () => (told = true));
   const done = [];
-  for (const name of names) done.push(await runPart(name, extra));
+  for (const name of names) if (!told) done.push(await runPart(name, extra));
+  if (told) {
+    if (!existsSync(keepFile('pg-test'))) stopCluster('pg-test');
+    throw new Mendable('Stopped before the end.');
+  }
   const sum = (key) => done.reduce((total, part) => total + part[key], 0);
   tell('');
   for (const { name, passed, failed, skipped, seconds } of done) tell(`${name.padEnd(6)} ${passed} passed, ${failed} failed, ${skipped} skipped in ${seconds} s`);

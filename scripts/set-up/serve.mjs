@@ -53,32 +53,40 @@ function printAddress(url, mailUrl) {
 export async function serve(mode) {
   checkNode();
   claimClone();
-  ensurePackages();
-  const base = await ensureDatabase();
-  let services;
-  const finish = async () => {
-    await services?.stop();
-    base.stop();
-    rmSync(runFile, { force: true });
-  };
-  const told = untilTold(() => services?.children ?? []);
+  const running = { base: null, services: null };
+  const told = untilTold(() => running.services?.children ?? []);
   try {
-    migrate(base);
-    seed({ ...base, filesFolder: join(dataFolder, 'files') });
-    services = await startServices({ appUrl: base.appUrl, mode, folder: dataFolder, preferredPort: Number(process.env.PORT) || 3000 });
-    const children = services.children.map(({ child }) => ({ pid: child.pid, startedAt: processStart(child.pid) }));
-    writeFileSync(runFile, JSON.stringify({ pid: process.pid, url: services.url, children }));
-    printAddress(services.url, services.mailUrl);
-    const end = await Promise.race([told, firstToEnd(services.children)]);
+    await bringUp(mode, running);
+    const end = await Promise.race([told, firstToEnd(running.services.children)]);
     if (end instanceof Mendable) throw end;
     tell('\nStopping …');
   } catch (error) {
-    await finish();
+    await putAway(running);
     fail(error);
   }
-  await finish();
+  await putAway(running);
   tell('Stopped. The data is kept.');
   process.exit(0);
+}
+
+/** Notes in `running` what it has started, so that a failure half-way is put away too. */
+async function bringUp(mode, running) {
+  ensurePackages();
+  running.base = await ensureDatabase();
+  migrate(running.base);
+  seed({ ...running.base, filesFolder: join(dataFolder, 'files') });
+  const preferredPort = Number(process.env.PORT) || 3000;
+  running.services = await startServices({ appUrl: running.base.appUrl, mode, folder: dataFolder, preferredPort });
+  const { url, mailUrl } = running.services;
+  const children = running.services.children.map(({ child }) => ({ pid: child.pid, startedAt: processStart(child.pid) }));
+  writeFileSync(runFile, JSON.stringify({ pid: process.pid, url, children }));
+  printAddress(url, mailUrl);
+}
+
+async function putAway({ base, services }) {
+  await services?.stop();
+  base?.stop();
+  rmSync(runFile, { force: true });
 }
 
 /** Resolves at the first Ctrl-C or SIGTERM; a later one ends the children by force. */

@@ -6,8 +6,14 @@ import { root, tell } from './tell.mjs';
 function node(args, env = process.env) {
   return new Promise((resolve, reject) => {
     const child = spawn(process.execPath, args, { cwd: root, env, stdio: 'inherit' });
+    // Ctrl-C reaches the child by itself, SIGTERM does not.
+    const passOn = () => child.kill('SIGTERM');
+    process.on('SIGTERM', passOn);
     child.once('error', reject);
-    child.once('exit', (code) => resolve(code ?? 1));
+    child.once('exit', (code) => {
+      process.off('SIGTERM', passOn);
+      resolve(code ?? 1);
+    });
   });
 }
 
