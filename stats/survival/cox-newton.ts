@@ -56,14 +56,16 @@ export function fitCox(design: CoxDesign, ties: Ties): ScaledFit {
     const next = halvedStep(sweep, beta, step, look);
     if (next === undefined) {
       converged = promised < 1e-8;
+      if (converged) markRunaways(missing, beta, step);
       break;
     }
     ({ beta, look } = next);
-    if (promised < 1e-11 || beta.some((b) => Math.abs(b) > RUNAWAY)) {
+    if (promised < 1e-11) {
       markRunaways(missing, beta, step);
       converged = true;
     }
   }
+  if (!converged) markRunaways(missing, beta, new Float64Array(p));
   return {
     beta,
     covariance: inverse(restricted(look.information, p, missing)),

@@ -51,6 +51,12 @@ export interface Predictors {
 }
 
 /**
+ * When rows taken off leave less than this share of the largest sum so far, the
+ * digits of what remains went with them, and the risk set is summed afresh.
+ */
+const WORN = 1e-3;
+
+/**
  * One pass from the last time to the first, each row added once when its time
  * comes and, with delayed entry, taken off once when its entry is reached.
  * @see Efron, JASA 1977;72:557. Therneau & Grambsch, Modeling Survival Data, 2000
@@ -106,22 +112,22 @@ export class CoxSweep {
     const { starts, time, event, entry, byEntry } = this.design;
     const { sums } = this;
     this.clearRisk();
-    let inside = 0;
+    let highest = 0;
     let leaving = starts[from]!;
     for (let g = to - 1; g >= from; g--) {
       if (entry !== undefined && byEntry !== undefined) {
-        while (leaving < starts[to]! && !isBefore(entry[byEntry[leaving]!]!, time[g]!)) {
-          this.addRow(byEntry[leaving++]!, -1);
-          inside--;
+        while (leaving < starts[to]! && !isBefore(entry[byEntry[leaving]!]!, time[g]!)) this.addRow(byEntry[leaving++]!, -1);
+        if (sums.s0 < WORN * highest) {
+          this.sumAfresh(starts[g + 1]!, starts[to]!, time[g]!);
+          highest = 0;
         }
-        if (inside === 0) this.clearRisk(); // no rounding is carried over an empty risk set
       }
       let deaths = 0;
       for (let i = starts[g]!; i < starts[g + 1]!; i++) {
         this.addRow(i, 1);
         deaths += event[i]!;
       }
-      inside += starts[g + 1]! - starts[g]!;
+      if (sums.s0 > highest) highest = sums.s0;
       if (deaths === 0) continue;
       this.sumDeaths(starts[g]!, starts[g + 1]!);
       sums.deaths = deaths;
@@ -134,6 +140,12 @@ export class CoxSweep {
     this.sums.s0 = 0;
     this.sums.s1.fill(0);
     this.sums.s2.fill(0);
+  }
+
+  /** The risk set just before the rows of time t join: those who leave later and entered before. */
+  private sumAfresh(from: number, to: number, t: number): void {
+    this.clearRisk();
+    for (let i = from; i < to; i++) if (isBefore(this.design.entry![i]!, t)) this.addRow(i, 1);
   }
 
   private addRow(i: number, sign: 1 | -1): void {

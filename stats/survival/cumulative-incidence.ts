@@ -180,8 +180,8 @@ class AalenVariance {
 
 /** F to the power exp(-/+ z se / (F log F)): limits on the log(-log) scale. */
 function incidenceLimit(incidence: number, se: number, z: number, side: -1 | 1): number {
+  if (incidence >= 1 - 1e-12) return NaN;
   if (incidence === 0 || se === 0) return incidence;
-  if (incidence >= 1) return NaN;
   return Math.pow(incidence, Math.exp((side * z * se) / (incidence * Math.log(incidence))));
 }
 

@@ -18,7 +18,10 @@ export interface IntervalOnset extends Provenance {
   readonly converged: boolean;
   readonly iterations: number;
   readonly candidateSets: number;
-  /** False when other masses give the same likelihood; null when it was not checked. */
+  /**
+   * True when no other masses give the same likelihood. On one line that is
+   * always so (each set ends some row); it is checked by rank, null when there were too many sets to check.
+   */
   readonly unique: boolean | null;
 }
 

@@ -20,8 +20,13 @@ export interface WeibullFit {
   readonly reason: string;
 }
 
-/** Beyond this many standard deviations on the log-time scale a coefficient runs to infinity. */
+/** Beyond this a coefficient (of a scaled covariate, on the log-time scale) runs to infinity. */
 const RUNAWAY = 15;
+/** A step of this size when the likelihood has stopped rising means that there is no maximum. */
+const RESTLESS = 1e-3;
+
+const ALIASED = 'a covariate is constant or a combination of others';
+const SEPARATED = 'the likelihood keeps rising as a coefficient grows: a covariate separates those with onset';
 
 /**
  * Newton's method with halving, on covariates centred and scaled inside (a year
@@ -35,32 +40,37 @@ export function fitWeibull(input: WeibullInput): WeibullFit {
   const state = new Likelihood({ ...input, x: scaled }, size);
   let parameters = start(input, size);
   let value = state.evaluate(parameters);
-  let converged = false;
-  for (let iteration = 0; iteration < 100 && !converged; iteration++) {
+  const done = (reason: string) => unscaled(state, parameters, value, scales, reason);
+  if (isAliased(scaled, input.left.length)) return done(ALIASED);
+  for (let iteration = 0; iteration < 100; iteration++) {
     const step = ascent(state, size);
-    let gain = 0; // promised rise, twice: score' step
-    for (let j = 0; j < size; j++) gain += step[j]! * state.score[j]!;
-    converged = gain < 1e-18 * (1 + Math.abs(value));
-    let share = 1;
-    for (; share > 1e-10; share /= 2) {
-      const trial = parameters.map((b, j) => b + share * step[j]!);
-      const reached = state.evaluate(trial);
-      if (reached >= value - 1e-13 * Math.abs(value)) {
-        parameters = trial;
-        value = reached;
-        break;
-      }
-    }
-    if (share <= 1e-10) {
-      value = state.evaluate(parameters);
-      converged = gain < 1e-9;
-      break;
-    }
-    if (parameters.some((b, j) => j > 0 && j <= p && Math.abs(b) > RUNAWAY)) return unscaled(state, parameters, value, scales, false, 'the likelihood keeps rising as a coefficient grows: a covariate separates those with onset');
+    const promised = step.reduce((sum, s, j) => sum + s * state.score[j]!, 0);
+    const next = halvedStep(state, parameters, step, value);
+    if (next !== undefined) ({ parameters, value } = next);
+    else value = state.evaluate(parameters);
+    const running = parameters.some((b, j) => j > 0 && j <= p && (Math.abs(b) > RUNAWAY || (promised < 1e-9 && Math.abs(step[j]!) > RESTLESS)));
+    if (running) return done(SEPARATED);
+    if (promised < 1e-18 * (1 + Math.abs(value))) return done('');
+    if (next === undefined) return done(promised < 1e-9 ? '' : 'no maximum was found');
   }
-  const flat = factor(state.information, size).rank < size;
-  const reason = flat ? 'a covariate is constant or a combination of others' : converged ? '' : 'no maximum was found';
-  return unscaled(state, parameters, value, scales, converged && !flat, reason);
+  return done('no maximum was found');
+}
+
+function halvedStep(state: Likelihood, parameters: Float64Array, step: Float64Array, value: number): { parameters: Float64Array; value: number } | undefined {
+  for (let share = 1; share > 1e-10; share /= 2) {
+    const trial = parameters.map((b, j) => b + share * step[j]!);
+    const reached = state.evaluate(trial);
+    if (reached >= value - 1e-13 * Math.abs(value)) return { parameters: trial, value: reached };
+  }
+  return undefined;
+}
+
+/** True when the scaled covariates (already centred) do not span as many directions as there are columns. */
+function isAliased(scaled: readonly Float64Array[], n: number): boolean {
+  const p = scaled.length;
+  const products = new Float64Array(p * p);
+  scaled.forEach((a, j) => scaled.forEach((b, l) => a.forEach((value, i) => (products[j * p + l]! += (value * b[i]!) / n))));
+  return factor(products, p).rank < p;
 }
 
 class Likelihood {
@@ -138,7 +148,7 @@ function centreAndSpread(column: Float64Array): { centre: number; spread: number
 }
 
 /** Back to the caller's covariates: a linear change of parameters, so information' = J' information J. */
-function unscaled(state: Likelihood, parameters: Float64Array, value: number, scales: readonly { centre: number; spread: number }[], converged: boolean, reason: string): WeibullFit {
+function unscaled(state: Likelihood, parameters: Float64Array, value: number, scales: readonly { centre: number; spread: number }[], reason: string): WeibullFit {
   const size = parameters.length;
   const out = parameters.slice();
   const jacobian = new Float64Array(size * size); // d scaled / d caller's
@@ -149,7 +159,7 @@ function unscaled(state: Likelihood, parameters: Float64Array, value: number, sc
     jacobian[(j + 1) * size + j + 1] = spread;
     jacobian[j + 1] = centre;
   });
-  return { parameters: out, logLikelihood: value, information: sandwich(jacobian, state.information, size), converged, reason };
+  return { parameters: out, logLikelihood: value, information: sandwich(jacobian, state.information, size), converged: reason === '', reason };
 }
 
 function sandwich(jacobian: Float64Array, middle: Float64Array, size: number): Float64Array {
