@@ -1,4 +1,57 @@
 import type { RouteTable } from '@/lib/web/openapi';
+import * as consentRoute from './consents/[id]/route';
+import * as consentsCountersignRoute from './consents/[id]/countersign/route';
+import * as consentsFileWhichRoute from './consents/[id]/file/[which]/route';
+import * as consentsLinkRoute from './consents/[id]/link/route';
+import * as consentsPaperRoute from './consents/[id]/paper/route';
+import * as consentsPaperSignatureRoute from './consents/[id]/paper-signature/route';
+import * as consentsPartsRoute from './consents/[id]/parts/route';
+import * as consentsSignRoute from './consents/[id]/sign/route';
+import * as historyRoute from './history/route';
+import * as queriesRoute from './queries/route';
+import * as queriesAnswerRoute from './queries/[id]/answer/route';
+import * as queriesAskAgainRoute from './queries/[id]/ask-again/route';
+import * as queriesCancelRoute from './queries/[id]/cancel/route';
+import * as queriesCloseOneRoute from './queries/[id]/close/route';
+import * as queriesRemindRoute from './queries/[id]/remind/route';
+import * as queriesCloseRoute from './queries/close/route';
+import * as invitationsRoute from './invitations/route';
+import * as screeningsRoute from './screenings/route';
+import * as screeningRoute from './screenings/[id]/route';
+import * as screeningsAnswersRoute from './screenings/[id]/answers/route';
+import * as screeningsConfirmRoute from './screenings/[id]/confirm/route';
+import * as screeningsConsentsRoute from './screenings/[id]/consents/route';
+import * as screeningsEnrolRoute from './screenings/[id]/enrol/route';
+import * as screeningsIdentityRoute from './screenings/[id]/identity/route';
+import * as screeningsLeaveRoute from './screenings/[id]/leave/route';
+import * as verificationsRoute from './verifications/route';
 
 /** Every address of the API. tests/house.test.ts fails when a route.ts is missing here. */
-export const routes: RouteTable = {};
+export const routes: RouteTable = {
+  '/api/consents/{id}': { GET: consentRoute.GET },
+  '/api/consents/{id}/countersign': { POST: consentsCountersignRoute.POST },
+  '/api/consents/{id}/file/{which}': { GET: consentsFileWhichRoute.GET },
+  '/api/consents/{id}/link': { POST: consentsLinkRoute.POST },
+  '/api/consents/{id}/paper': { POST: consentsPaperRoute.POST },
+  '/api/consents/{id}/paper-signature': { POST: consentsPaperSignatureRoute.POST },
+  '/api/consents/{id}/parts': { POST: consentsPartsRoute.POST },
+  '/api/consents/{id}/sign': { POST: consentsSignRoute.POST },
+  '/api/history': { GET: historyRoute.GET },
+  '/api/invitations': { POST: invitationsRoute.POST },
+  '/api/queries': { GET: queriesRoute.GET, POST: queriesRoute.POST },
+  '/api/queries/close': { POST: queriesCloseRoute.POST },
+  '/api/queries/{id}/answer': { POST: queriesAnswerRoute.POST },
+  '/api/queries/{id}/ask-again': { POST: queriesAskAgainRoute.POST },
+  '/api/queries/{id}/cancel': { POST: queriesCancelRoute.POST },
+  '/api/queries/{id}/close': { POST: queriesCloseOneRoute.POST },
+  '/api/queries/{id}/remind': { POST: queriesRemindRoute.POST },
+  '/api/screenings': { GET: screeningsRoute.GET, POST: screeningsRoute.POST },
+  '/api/screenings/{id}': { GET: screeningRoute.GET },
+  '/api/screenings/{id}/answers': { PUT: screeningsAnswersRoute.PUT },
+  '/api/screenings/{id}/confirm': { POST: screeningsConfirmRoute.POST },
+  '/api/screenings/{id}/consents': { POST: screeningsConsentsRoute.POST },
+  '/api/screenings/{id}/enrol': { POST: screeningsEnrolRoute.POST },
+  '/api/screenings/{id}/identity': { GET: screeningsIdentityRoute.GET, PUT: screeningsIdentityRoute.PUT },
+  '/api/screenings/{id}/leave': { POST: screeningsLeaveRoute.POST },
+  '/api/verifications': { POST: verificationsRoute.POST },
+};

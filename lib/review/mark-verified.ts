@@ -1,0 +1,37 @@
+import type { FieldTarget } from '@/lib/queries/targets';
+import { findTarget } from '@/lib/queries/targets';
+import { VerificationSchema } from '@/entities/verification';
+import type { Work } from '@/lib/work/work';
+
+/** A mark as the gutter shows it. */
+export interface MarkView {
+  readonly table: string;
+  readonly id: string;
+  readonly field: string;
+  readonly label: string;
+  readonly at: string;
+}
+
+/** A monitor has seen the values at source. A mark stands on the value and falls, in the data base, when the value changes. */
+export async function markVerified(work: Work, { targets }: { targets: readonly FieldTarget[] }): Promise<{ marked: number }> {
+  let marked = 0;
+  for (const target of targets) {
+    const found = await findTarget(work, target);
+    const standing = await work.em.findOne(VerificationSchema, { targetId: target.id, field: target.field, fellAt: null });
+    if (standing) continue;
+    work.em.create(VerificationSchema, {
+      siteId: found.siteId,
+      participantId: found.participantId,
+      visitId: found.visitId,
+      targetTable: found.table,
+      targetId: found.id,
+      field: found.field,
+      value: found.value,
+      verifiedBy: work.actor.accountId,
+      verifiedLabel: work.actor.label,
+      verifiedAt: work.now,
+    });
+    marked += 1;
+  }
+  return { marked };
+}
