@@ -14,7 +14,7 @@ import { STANDARD_ARM_MAP } from '@/instruments/measurement/map';
 /** The arm of check VOL-03 and one a millimetre wider. */
 const LEFT = [160, 172, 190, 212, 234, 251, 260, 264, 270, 282, 296];
 const RIGHT = LEFT.map((girth) => girth + 1);
-const none = LEFT.map(() => null);
+const none: (number | null)[] = LEFT.map(() => null);
 
 function sitting(over: Partial<LimbSitting> = {}): LimbSitting {
   return { map: STANDARD_ARM_MAP, method: 'frustum', left: { first: LEFT, second: LEFT, third: none }, right: { first: RIGHT, second: RIGHT, third: none }, ...over };
@@ -81,9 +81,15 @@ describe('a limb sitting', () => {
   });
 
   test('half filled in says nothing of levels until it is to be complete', () => {
-    const half = sitting({ left: { first: LEFT.with(10, null), second: none, third: none } });
+    const half = sitting({ left: { first: [...LEFT.slice(0, 10), null], second: none, third: none } });
     expect(checkOpenTrials(half)).toEqual([]);
     expect(idsOf(checkLimbSitting(half))).toEqual(['arms.levels']);
+  });
+
+  test('a level may widen by the limit exactly, and no further', () => {
+    const step = (riseMm: number) => idsOf(checkOpenTrials({ ...sitting(), map: { startOffsetMm: 200, stepMm: 40, levels: 2 }, left: { first: [250, 250 + riseMm], second: [null, null], third: [null, null] }, right: { first: [null, null], second: [null, null], third: [null, null] } }));
+    expect([step(35), step(36), step(-10), step(-11)]).toEqual([[], ['taper.range'], [], ['taper.range']]);
+    expect([step(80), step(81)].map(([first]) => first)).toEqual(['taper.range', 'taper.limit']);
   });
 
   test('the same arm twice is asked about', () => {

@@ -22,7 +22,7 @@ import { isAtLeast } from '@/instruments/threshold';
 import { resumeWindow } from '@/instruments/training/load-facts';
 import { judgeSessions } from '@/instruments/training/judge-sessions';
 import { adherencePct, oneRepMax, relativeDosePct, resumeTwoWeeksPerWeek, sessionLoad, volumeLoad, weeklyProgression } from '@/instruments/training/measures';
-import type { TrainingSession } from '@/instruments/training/session';
+import type { ExerciseEntry, TrainingSession } from '@/instruments/training/session';
 import { defaultTrainingSettings } from '@/instruments/training/settings';
 import { bmi, inchesToCm, massToKg } from '@/instruments/units';
 
@@ -176,7 +176,7 @@ function loadRules({ entries, baseline, assess, cfg }: Inputs) {
   const sessions = new Map<string, TrainingSession>();
   for (const { date, exercise, load, changed, unit = 'kg', equipment = 'dumbbell', side = 'both' } of entries as Entry[]) {
     const earlier = sessions.get(date);
-    const entry = { exercise, equipment, side, basis: 'per hand' as const, sets: [{ reps: 10, loadKg: massToKg(load, unit) }] };
+    const entry: ExerciseEntry = { exercise, equipment, side, basis: 'per hand', sets: [{ reps: 10, loadKg: massToKg(load, unit) }] };
     sessions.set(date, { id: date, on: date, armChanged: changed, entries: [...(earlier?.entries ?? []), entry] });
   }
   const settings = { ...defaultTrainingSettings, toleranceKg: (cfg as { tol?: number } | undefined)?.tol ?? 0 };

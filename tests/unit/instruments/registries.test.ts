@@ -105,9 +105,9 @@ describe('a questionnaire', () => {
   });
 });
 
-/** Flesch-Kincaid grade (Kincaid 1975): 0.39 words per sentence + 11.8 syllables per word − 15.59; commas in a lead-in end a phrase. */
+/** Flesch-Kincaid grade (Kincaid 1975): 0.39 words per sentence + 11.8 syllables per word − 15.59. */
 function readingGrade(text: string): number {
-  const sentences = text.split(/[.?,]+/).filter((sentence) => sentence.trim() !== '');
+  const sentences = text.split(/[.?]+/).filter((sentence) => sentence.trim() !== '');
   const words = text.match(/[a-z’]+/gi) ?? [];
   const syllables = words.reduce((sum, word) => sum + syllablesIn(word.toLowerCase()), 0);
   return (0.39 * words.length) / sentences.length + (11.8 * syllables) / words.length - 15.59;

@@ -67,6 +67,12 @@ describe('judging a log', () => {
     expect(back(2)).toEqual(['RESUME_HIGH']);
   });
 
+  test('an assessment on the day of the change answers it for the sessions after; one before it does not', () => {
+    const log = [session('2024-01-08', 2, { armChanged: true }), session('2024-01-11', 2)];
+    expect(rulesOf(judgeSessions(log, ['2024-01-08'], BASELINE))).toEqual(['ASSESSMENT_REQUIRED']);
+    expect(rulesOf(judgeSessions(log, ['2024-01-07'], BASELINE))).toEqual(['ASSESSMENT_REQUIRED', 'TRAINED_BEFORE_ASSESSMENT']);
+  });
+
   test('an edited session is judged in place of the old one', () => {
     const recorded = [session('2024-01-08', 2), session('2024-01-15', 8)];
     expect(rulesOf(judgeDraft(session('2024-01-15', 4), recorded, [], BASELINE))).toEqual([]);
