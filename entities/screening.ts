@@ -41,11 +41,16 @@ export function confirmEligibility(screening: Screening, by: string, at: Date): 
   screening.eligibilityConfirmedBy = by;
 }
 
-/** The screening ends in enrolment. Consent is asked of the data base as well, whoever enrols. */
-export function endInEnrolment(screening: Screening, participantId: string, hasConsent: boolean): void {
+/** Nobody is enrolled without confirmed eligibility and complete consent. The data base asks for the consent as well, whoever enrols. */
+export function assertEnrollable(screening: Screening, hasConsent: boolean): void {
   lawful(screening.state === 'screening', 'This screening has already ended.');
   lawful(screening.eligibilityConfirmedAt != null, 'Confirm eligibility first: nobody can be enrolled without it.');
   lawful(hasConsent, 'Consent is not complete: both signatures are needed before anybody can be enrolled.');
+}
+
+/** The screening ends in enrolment. */
+export function endInEnrolment(screening: Screening, participantId: string): void {
+  lawful(screening.state === 'screening', 'This screening has already ended.');
   screening.state = 'enrolled';
   screening.participantId = participantId;
 }

@@ -1,10 +1,15 @@
+import { randomUUID } from 'node:crypto';
 import { Client } from 'pg';
 import { afterAll } from 'vitest';
 import { participantCode } from '@/instruments/participant-code';
 import { grantedRoles, nobody, inviteeAccountId, systemActor, type Actor, type GrantedRole } from '@/lib/auth/roles';
 import { env } from '@/lib/env';
+import type { JobDeps } from '@/lib/jobs/define-job';
+import { makeLog } from '@/lib/log';
 import type { ConsentForm, ProtocolDocument } from '@/lib/protocol/document';
+import { storage } from '@/lib/storage';
 import { getOrm } from '@/lib/work/orm';
+import { clock } from '@/lib/work/time';
 import { withWork } from '@/lib/work/with-work';
 import type { Work } from '@/lib/work/work';
 
@@ -44,6 +49,15 @@ const only = <T>(rows: readonly T[]): T => {
   if (row === undefined) throw new Error('Expected one row.');
   return row;
 };
+
+/** What a job's handler may touch, with the mail and the clock in the test's hands. */
+export const jobDeps = (sendLetter: JobDeps['sendLetter'], now?: Date): JobDeps => ({
+  log: makeLog('silent'),
+  storage: storage(),
+  sendLetter,
+  now: () => now ?? clock(),
+  jobId: randomUUID(),
+});
 
 let made = 0;
 const next = (): number => (made += 1);

@@ -1,0 +1,36 @@
+import { signByStaff } from '@/entities/consent';
+import { ConsentSignatureSchema } from '@/entities/consent-signature';
+import { consentCopy } from '@/lib/jobs/handlers/consent-copy';
+import { Refusal } from '@/lib/work/refusal';
+import type { Work } from '@/lib/work/work';
+import { contentHash } from './consent-content';
+import { findConsent } from './find-consent';
+import { stepOf, type ConsentStep } from './view-consent';
+
+/**
+ * The second signature, by the person who took consent. Completes it; the participant's copy goes out.
+ * @throws Refusal 'conflict' when the participant has not signed; 'locked' when what was signed is no longer what stands there.
+ */
+export async function countersignConsent(work: Work, { id, name }: { id: string; name: string }): Promise<ConsentStep> {
+  const { consent, form } = await findConsent(work, id);
+  work.expect(consent);
+  signByStaff(consent, work.actor.accountId, work.now);
+  const contentSha256 = contentHash({ formNumber: form.number, form: form.form, permissions: consent.permissions });
+  const first = await work.em.findOneOrFail(ConsentSignatureSchema, { consentId: id, who: 'participant' });
+  if (first.contentSha256 !== contentSha256) throw new Refusal('locked', 'The content has changed since the participant signed it. Start the consent again.');
+  work.em.create(ConsentSignatureSchema, {
+    consentId: consent.id,
+    screeningId: consent.screeningId,
+    siteId: consent.siteId,
+    participantId: null,
+    who: 'staff',
+    means: 'typed',
+    name,
+    drawing: null,
+    signedAt: work.now,
+    contentSha256,
+  });
+  await work.em.flush();
+  await work.later(consentCopy, { consentId: consent.id, siteId: consent.siteId });
+  return stepOf(consent);
+}

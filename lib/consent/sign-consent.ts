@@ -1,0 +1,39 @@
+import { signByParticipant } from '@/entities/consent';
+import { ConsentSignatureSchema } from '@/entities/consent-signature';
+import { ParticipantIdentitySchema } from '@/entities/participant-identity';
+import { Refusal } from '@/lib/work/refusal';
+import type { Work } from '@/lib/work/work';
+import { contentHash } from './consent-content';
+import { checkPermissions, checkStatements, findConsent } from './find-consent';
+import type { SignConsentInput } from './input';
+import { stepOf, type ConsentStep } from './view-consent';
+
+/**
+ * The participant signs, on the clinic's tablet or at home. Uses up every link of this screening.
+ * @throws Refusal 'invalid' for an unread part, an unticked statement or an open permission; 'conflict' when signed already.
+ */
+export async function signConsent(work: Work, { id, statements, permissions, signature }: SignConsentInput): Promise<ConsentStep> {
+  const { consent, form } = await findConsent(work, id);
+  const expectedMode = work.actor.role === 'invitee' ? 'home' : 'tablet';
+  if (consent.mode !== expectedMode) throw new Refusal('conflict', 'This consent is now read and signed in another way. Ask your site.');
+  checkStatements(form, statements);
+  checkPermissions(form, permissions);
+  consent.permissions = permissions;
+  signByParticipant(consent, { sections: form.form.sections.map(({ key }) => key), permissions: form.form.permissions.map(({ key }) => key) }, work.now);
+  const identity = await work.em.findOne(ParticipantIdentitySchema, { screeningId: consent.screeningId });
+  work.em.create(ConsentSignatureSchema, {
+    consentId: consent.id,
+    screeningId: consent.screeningId,
+    siteId: consent.siteId,
+    participantId: null,
+    who: 'participant',
+    means: signature.kind,
+    name: signature.kind === 'typed' ? signature.name : (identity?.name ?? ''),
+    drawing: signature.kind === 'drawn' ? JSON.stringify({ path: signature.path, width: signature.width, height: signature.height }) : null,
+    signedAt: work.now,
+    contentSha256: contentHash({ formNumber: form.number, form: form.form, permissions }),
+  });
+  await work.em.flush();
+  await work.sql(`update invitation set used_at = ?, version = version + 1 where kind = 'consent' and screening_id = ? and used_at is null`, [work.now, consent.screeningId]);
+  return stepOf(consent);
+}

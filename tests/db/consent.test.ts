@@ -1,0 +1,225 @@
+import { beforeAll, describe, expect, test } from 'vitest';
+import type { Actor } from '@/lib/auth/roles';
+import { inviteeOf } from '@/lib/auth/invitee';
+import { countersignConsent } from '@/lib/consent/countersign-consent';
+import { fetchConsentFile } from '@/lib/consent/fetch-consent-file';
+import { markPartRead } from '@/lib/consent/mark-part-read';
+import { recogniseForm } from '@/lib/consent/recognise-form';
+import { signConsent } from '@/lib/consent/sign-consent';
+import { sendConsentLink, startConsent } from '@/lib/consent/start-consent';
+import { viewConsent } from '@/lib/consent/view-consent';
+import { consentCopy } from '@/lib/jobs/handlers/consent-copy';
+import { consentLink } from '@/lib/jobs/handlers/consent-link';
+import type { Posting } from '@/lib/mail/send-letter';
+import { secondsAfter } from '@/lib/work/time';
+import { withWork } from '@/lib/work/with-work';
+import { asOwner, givenConsent, givenScene, givenScreening, givenStaff, jobDeps, type GivenScene } from '../given';
+
+let scene: GivenScene;
+beforeAll(async () => {
+  scene = await givenScene();
+});
+
+const typed = { kind: 'typed', name: 'Ada Example' } as const;
+const statements = ['read', 'free'];
+const permissions = { 'data-sharing': 'yes', 'future-contact': 'no' } as const;
+
+const start = async (mode: 'tablet' | 'home' | 'paper', actor = scene.coordinator) => {
+  const screening = await givenScreening(scene.site, scene.protocol);
+  const consent = await withWork(actor, 'consent.start', (work) => startConsent(work, { id: screening.id, mode }));
+  return { screening, id: consent.id };
+};
+const read = (actor: Actor, id: string, part: string) => withWork(actor, 'consent.read-part', (work) => markPartRead(work, { id, part }));
+const readAll = async (actor: Actor, id: string) => {
+  await read(actor, id, 'key-facts');
+  await read(actor, id, 'what-we-ask');
+};
+const sign = (actor: Actor, id: string, change: Partial<Parameters<typeof signConsent>[1]> = {}) =>
+  withWork(actor, 'consent.sign', (work) => signConsent(work, { id, statements, permissions, signature: typed, ...change }));
+const countersign = (actor: Actor, id: string) => withWork(actor, 'consent.countersign', (work) => countersignConsent(work, { id, name: 'Robin Coordinator' }));
+
+/** Runs the job that mails a link, and returns the token in the letter. */
+async function mailedToken(screeningId: string, now?: Date): Promise<string> {
+  const sent: Posting[] = [];
+  await consentLink.run({ siteId: scene.site.id, screeningId }, jobDeps((_letter, posting) => Promise.resolve(void sent.push(posting)), now));
+  const url = (sent[0]?.data as { url: string } | undefined)?.url ?? '';
+  return url.split('/').at(-1) ?? '';
+}
+
+describe('on the clinic’s tablet', () => {
+  test('a consent is read, signed by the participant, then by the staff, and both signatures bind to one content', async () => {
+    const { id } = await start('tablet');
+    await readAll(scene.coordinator, id);
+    expect(await sign(scene.coordinator, id)).toMatchObject({ state: 'signed by participant' });
+    expect(await countersign(scene.coordinator, id)).toMatchObject({ state: 'complete' });
+    const view = await withWork(scene.coordinator, 'consent.view', (work) => viewConsent(work, { id }));
+    expect(view.signatures.map(({ who, name }) => [who, name])).toEqual([
+      ['participant', 'Ada Example'],
+      ['staff', 'Robin Coordinator'],
+    ]);
+    expect(new Set(view.signatures.map(({ contentSha256 }) => contentSha256)).size).toBe(1);
+  });
+
+  test('a drawn signature carries the printed name of the record', async () => {
+    const { id, screening } = await start('tablet');
+    await readAll(scene.coordinator, id);
+    await sign(scene.coordinator, id, { signature: { kind: 'drawn', path: 'M1.0 1.0L20.0 20.0', width: 300, height: 120 } });
+    const view = await withWork(scene.coordinator, 'consent.view', (work) => viewConsent(work, { id }));
+    expect(view.signatures).toMatchObject([{ means: 'drawn', name: screening.name }]);
+  });
+
+  test('an unread part stops the signature', async () => {
+    const { id } = await start('tablet');
+    await read(scene.coordinator, id, 'key-facts');
+    await expect(sign(scene.coordinator, id)).rejects.toMatchObject({ code: 'invalid', message: 'Read every part before signing: 1 still to read.' });
+  });
+
+  test('an unanswered permission, an unknown one and an unticked statement stop it too', async () => {
+    const { id } = await start('tablet');
+    await readAll(scene.coordinator, id);
+    await expect(sign(scene.coordinator, id, { permissions: { 'data-sharing': 'no' } })).rejects.toMatchObject({ code: 'invalid', message: expect.stringContaining('1 still open') as string });
+    await expect(sign(scene.coordinator, id, { permissions: { ...permissions, more: 'yes' } })).rejects.toMatchObject({ code: 'invalid', field: 'permissions' });
+    await expect(sign(scene.coordinator, id, { statements: ['read'] })).rejects.toMatchObject({ code: 'invalid', field: 'statements' });
+  });
+
+  test('the staff cannot sign first, and nobody signs twice', async () => {
+    const { id } = await start('tablet');
+    await expect(countersign(scene.coordinator, id)).rejects.toMatchObject({ code: 'conflict', message: 'The participant signs first.' });
+    await readAll(scene.coordinator, id);
+    await sign(scene.coordinator, id);
+    await expect(sign(scene.coordinator, id)).rejects.toMatchObject({ code: 'conflict', message: 'This consent is already signed.' });
+    await expect(read(scene.coordinator, id, 'key-facts')).rejects.toMatchObject({ code: 'conflict' });
+  });
+
+  test('another site’s coordinator finds nothing; a monitor, an assessor and an investigator may not', async () => {
+    const { id } = await start('tablet');
+    await expect(sign(scene.otherCoordinator, id)).rejects.toMatchObject({ code: 'not-found' });
+    await expect(countersign(scene.otherCoordinator, id)).rejects.toMatchObject({ code: 'not-found' });
+    for (const role of ['monitor', 'assessor', 'investigator', 'data-manager'] as const) {
+      const staff = await givenStaff(role, scene.site);
+      await expect(sign(staff, id)).rejects.toMatchObject({ code: 'forbidden' });
+      await expect(withWork(staff, 'consent.view', (work) => viewConsent(work, { id }))).rejects.toMatchObject({ code: 'forbidden' });
+    }
+  });
+
+  test('content that changed under the first signature is not signed a second time', async () => {
+    const { id } = await start('tablet');
+    await readAll(scene.coordinator, id);
+    await sign(scene.coordinator, id);
+    await asOwner(`update consent set permissions = '{"data-sharing": "no", "future-contact": "no"}' where id = $1`, [id]);
+    await expect(countersign(scene.coordinator, id)).rejects.toMatchObject({ code: 'locked' });
+  });
+});
+
+describe('at home, through a link', () => {
+  test('the link leads to one consent, survives being looked at, and is used up by signing', async () => {
+    const { id, screening } = await start('home');
+    const token = await mailedToken(screening.id);
+    const invitee = await inviteeOf({ token, from: 'home' });
+    expect(await inviteeOf({ token, from: 'a mail scanner' })).toEqual(invitee);
+    await readAll(invitee, id);
+    expect(await sign(invitee, id)).toMatchObject({ state: 'signed by participant' });
+    await expect(inviteeOf({ token, from: 'home' })).rejects.toMatchObject({ code: 'expired' });
+    expect(await countersign(scene.coordinator, id)).toMatchObject({ state: 'complete' });
+  });
+
+  test('the holder of another screening’s link sees and signs nothing here', async () => {
+    const { id } = await start('home');
+    const other = await start('home');
+    const intruder = await inviteeOf({ token: await mailedToken(other.screening.id), from: 'home' });
+    await expect(withWork(intruder, 'consent.view', (work) => viewConsent(work, { id }))).rejects.toMatchObject({ code: 'not-found' });
+    await expect(sign(intruder, id)).rejects.toMatchObject({ code: 'not-found' });
+  });
+
+  test('a link expires after 14 days, and a new one ends the one before', async () => {
+    const { id, screening } = await start('home');
+    const day = 86_400;
+    const old = await mailedToken(screening.id, secondsAfter(new Date(), -14 * day - 60));
+    await expect(inviteeOf({ token: old, from: 'home' })).rejects.toMatchObject({ code: 'expired' });
+    const first = await mailedToken(screening.id, secondsAfter(new Date(), -13 * day));
+    expect(await inviteeOf({ token: first, from: 'home' })).toMatchObject({ screeningId: screening.id });
+    await withWork(scene.coordinator, 'consent.send-link', (work) => sendConsentLink(work, { id }));
+    const second = await mailedToken(screening.id);
+    await expect(inviteeOf({ token: first, from: 'home' })).rejects.toMatchObject({ code: 'expired' });
+    expect(await inviteeOf({ token: second, from: 'home' })).toMatchObject({ screeningId: screening.id });
+  });
+
+  test('a link does not sign what was moved to the tablet, and its holder cannot countersign', async () => {
+    const { id, screening } = await start('home');
+    const invitee = await inviteeOf({ token: await mailedToken(screening.id), from: 'home' });
+    await readAll(invitee, id);
+    await expect(countersign(invitee, id)).rejects.toMatchObject({ code: 'forbidden' });
+    const moved = await withWork(scene.coordinator, 'consent.start', (work) => startConsent(work, { id: screening.id, mode: 'tablet' }));
+    expect(moved.id).toBe(id);
+    await expect(sign(invitee, id)).rejects.toMatchObject({ code: 'conflict' });
+    // What was read stays read: nothing is asked twice.
+    expect(await sign(scene.coordinator, id)).toMatchObject({ state: 'signed by participant' });
+  });
+
+  test('guessing links is throttled', async () => {
+    const guess = () => inviteeOf({ token: 'not-a-token', from: 'a guesser' }).catch((error: { code: string }) => error.code);
+    const answers: unknown[] = [];
+    for (let tries = 0; tries < 21; tries += 1) answers.push(await guess());
+    expect(answers.slice(0, 20)).toEqual(Array.from({ length: 20 }, () => 'expired'));
+    expect(answers[20]).toBe('too-many');
+  });
+
+  test('without an address there is no link', async () => {
+    const screening = await givenScreening(scene.site, scene.protocol);
+    await asOwner('update participant_identity set email = null where screening_id = $1', [screening.id]);
+    await expect(withWork(scene.coordinator, 'consent.start', (work) => startConsent(work, { id: screening.id, mode: 'home' }))).rejects.toMatchObject({ code: 'invalid', field: 'email' });
+  });
+});
+
+describe('the participant’s copy', () => {
+  test('is made once, kept, and mailed as a whole PDF; only the own site and the trail know of it', async () => {
+    const { id, screening } = await start('tablet');
+    await readAll(scene.coordinator, id);
+    await sign(scene.coordinator, id, { signature: { kind: 'drawn', path: 'M1.0 1.0L20.0 20.0', width: 300, height: 120 } });
+    await expect(withWork(scene.coordinator, 'consent.file', (work) => fetchConsentFile(work, { id, which: 'copy' }))).rejects.toMatchObject({ code: 'not-found' });
+    await countersign(scene.coordinator, id);
+    const sent: Posting[] = [];
+    const deps = jobDeps((_letter, posting) => Promise.resolve(void sent.push(posting)));
+    await consentCopy.run({ siteId: scene.site.id, consentId: id }, deps);
+    await consentCopy.run({ siteId: scene.site.id, consentId: id }, deps);
+    expect(sent.map(({ to }) => to)).toEqual([screening.email, screening.email]);
+    const [first, second] = sent.map(({ attachments }) => attachments?.[0]?.content);
+    expect(recogniseForm(first ?? Buffer.alloc(0)).contentType).toBe('application/pdf');
+    expect(second).toEqual(first);
+    const served = await withWork(scene.coordinator, 'consent.file', (work) => fetchConsentFile(work, { id, which: 'copy' }));
+    expect(served).toMatchObject({ contentType: 'application/pdf', byteCount: first?.length, filename: 'consent-copy.pdf' });
+    await expect(withWork(scene.otherCoordinator, 'consent.file', (work) => fetchConsentFile(work, { id, which: 'copy' }))).rejects.toMatchObject({ code: 'not-found' });
+    const trail = await asOwner(`select act from audit_entry where op = 'EVENT' and table_name = 'stored_file' and act = 'consent.file' and site_id = $1`, [scene.site.id]);
+    expect(trail).toHaveLength(1);
+  });
+});
+
+describe('the data base', () => {
+  test('refuses a complete consent without both signatures, whoever writes it', async () => {
+    const screening = await givenScreening(scene.site, scene.protocol);
+    const { id } = await givenConsent(screening, scene.protocol, scene.coordinator, 'signed by participant');
+    await expect(asOwner(`update consent set state = 'complete' where id = $1`, [id])).rejects.toMatchObject({ code: '23514' });
+  });
+
+  test('holds one open consent for a screening', async () => {
+    const screening = await givenScreening(scene.site, scene.protocol);
+    await givenConsent(screening, scene.protocol, scene.coordinator, 'reading');
+    await expect(givenConsent(screening, scene.protocol, scene.coordinator, 'reading')).rejects.toMatchObject({ code: 'conflict' });
+  });
+
+  test('shows no signature and no name to a monitor’s transaction, even one that reaches the site', async () => {
+    const screening = await givenScreening(scene.site, scene.protocol);
+    await givenConsent(screening, scene.protocol, scene.coordinator);
+    for (const role of ['monitor', 'investigator', 'data-manager', 'assessor', 'auditor'] as const) {
+      const staff = await givenStaff(role, scene.site);
+      const seen = await withWork(staff, role === 'investigator' ? 'results.view' : 'screening.list', async (work) => ({
+        identity: await work.sql('select * from participant_identity'),
+        signatures: await work.sql('select * from consent_signature'),
+        files: await work.sql('select * from stored_file'),
+        links: await work.sql('select * from invitation'),
+        trail: await work.sql(`select * from audit_entry where table_name in ('participant_identity', 'consent_signature')`),
+      }));
+      expect(seen).toEqual({ identity: [], signatures: [], files: [], links: [], trail: [] });
+    }
+  });
+});
