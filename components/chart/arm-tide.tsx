@@ -77,7 +77,12 @@ function ArmMark({ point, x, y }: { point: ArmPoint; x: number; y: number }) {
         strokeWidth="2.5"
       />
       {words ? (
-        <text x={x} y={y - 17} textAnchor={x > 200 && words.length > 8 ? 'end' : 'middle'} className="arm-words halo">
+        <text
+          x={provisional ? x + 14 : x}
+          y={y - 17}
+          textAnchor={x > 200 && words.length > 8 ? 'end' : 'middle'}
+          className="arm-words halo"
+        >
           {words}
         </text>
       ) : null}

@@ -26,7 +26,7 @@ export function FlowDiagram({ stages, finding }: FlowDiagramProps) {
   const drawn = stages.map((stage, index) => ({ ...stage, x: 2 + index * step, foot: top + (120 * stage.people) / most }));
   return (
     <ChartFigure label="Participant flow" finding={finding} least={760} table={<FlowTable stages={stages} />}>
-      <svg width="100%" viewBox="0 0 1000 206" role="img" aria-label={finding}>
+      <svg width="100%" className="max-w-[1000px]" viewBox="0 0 1000 206" role="img" aria-label={finding}>
         <Patterns ids={ids} water={5} />
         <path d={river(drawn)} fill={fillOf(ids.water)} />
         {drawn.map((stage) => (

@@ -57,7 +57,7 @@ export function LoadBandsChart({ weeks, label, finding, firstLoadKg }: LoadBands
     )([...weeks]) ?? '';
   return (
     <ChartFigure label={label} finding={finding} table={<WeekTable weeks={weeks} label={label} />}>
-      <svg width="100%" viewBox="0 0 620 328" className="max-w-[760px]" role="img" aria-label={finding}>
+      <svg width="100%" viewBox="0 0 620 328" className="max-w-[620px]" role="img" aria-label={finding}>
         <Patterns ids={ids} />
         <path d={band('p10', 'p90')} fill="var(--band)" />
         <path d={band('p25', 'p75')} fill="var(--select)" />

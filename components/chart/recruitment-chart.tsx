@@ -43,9 +43,9 @@ export function RecruitmentChart({ from, to, today, target, enrolled, pacePerDay
       )}
       <path d={`M${at(today)} ${y(now) - 9}v18`} stroke="var(--act)" strokeWidth="2.25" />
       <text
-        x={at(today) + (at(today) > 150 ? -6 : 7)}
+        x={at(today) + (at(today) > 190 ? -6 : 7)}
         y={Math.min(98, y(now) + 18)}
-        textAnchor={at(today) > 150 ? 'end' : 'start'}
+        textAnchor={at(today) > 190 ? 'end' : 'start'}
         className="chart-name halo"
       >
         {formatCount(now)} today

@@ -99,18 +99,20 @@ export interface SealedDaysProps {
   cutAt?: string;
   /** The last day is still open: drawn hollow. */
   openDay?: string;
+  /** Words under single days: '4 Jan 2027', 'today, open'. */
+  marks?: readonly { day: string; words: string }[];
   label: string;
 }
 
 /** Entries a day over the sealed line; the line is cut where a seal does not match. */
-export function SealedDays({ days, cutAt, openDay, label }: SealedDaysProps) {
+export function SealedDays({ days, cutAt, openDay, marks = [], label }: SealedDaysProps) {
   const ids = usePatterns();
   const most = Math.max(1, ...days.map(({ entries }) => entries));
   const step = 1000 / Math.max(1, days.length);
   const cut = cutAt === undefined ? days.length : days.findIndex(({ day }) => day >= cutAt);
   const sound = (cut < 0 ? days.length : cut) * step;
   return (
-    <svg width="100%" viewBox="0 0 1000 90" role="img" aria-label={label}>
+    <svg width="100%" viewBox={`0 0 1000 ${marks.length > 0 ? 112 : 90}`} role="img" aria-label={label}>
       <Patterns ids={ids} />
       {days.map(({ day, entries }, index) => {
         const height = (66 * entries) / most;
@@ -127,6 +129,14 @@ export function SealedDays({ days, cutAt, openDay, label }: SealedDaysProps) {
           </g>
         ) : null,
       )}
+      {marks.map(({ day, words }) => {
+        const x = (days.findIndex((one) => one.day === day) + 0.5) * step;
+        return (
+          <text key={day} x={x} y="106" textAnchor={x > 950 ? 'end' : x < 50 ? 'start' : 'middle'} className="axis-word">
+            {words}
+          </text>
+        );
+      })}
       {sound < 1000 ? (
         <>
           <path d={`M${sound + 5} 71l-5 18M${sound + 14} 71l-5 18`} stroke="var(--needs)" strokeWidth="2.25" />

@@ -113,7 +113,15 @@ export function SmallChartExamples() {
           <Sparkline values={[0, 1.4, 4, null, 7.3, 5]} label="Change from baseline, last 5.0 %" />
         </div>
       </div>
-      <SealedDays days={sealed} openDay="day-59" label="Entries a day, every day sealed." />
+      <SealedDays
+        days={sealed}
+        openDay="day-59"
+        marks={[
+          { day: 'day-00', words: '4 Jan 2027' },
+          { day: 'day-59', words: 'today, open' },
+        ]}
+        label="Entries a day, every day sealed."
+      />
       <SealedDays days={sealed} cutAt="day-41" label="Entries a day; the line is cut at day 41." />
     </div>
   );

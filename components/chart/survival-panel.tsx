@@ -36,7 +36,7 @@ export function SurvivalPanel({ curve, beside, riskTimes, timeUnit, readAt, risk
       .y1((step) => y(step.upper ?? step.share))
       .curve(curveStepAfter)(drawn(curve, end)) ?? '';
   return (
-    <svg width="100%" viewBox="0 0 470 350" className="max-w-[560px]" role="img" aria-label={spoken(curve, readAt, timeUnit, eventWords)}>
+    <svg width="100%" viewBox="0 0 470 350" className="max-w-[470px]" role="img" aria-label={spoken(curve, readAt, timeUnit, eventWords)}>
       <path d={band} fill="var(--select)" />
       {beside ? <path d={path(beside)} fill="none" stroke="var(--edge)" strokeWidth="1.25" strokeDasharray="3 3" /> : null}
       <path d={path(curve)} fill="none" stroke="var(--act)" strokeWidth="2.25" />

@@ -124,7 +124,7 @@ function labelled(visits: readonly Measured[], ground: number): { visit: Measure
   return visits
     .filter(({ changePercent }, index) => index > 0 || changePercent !== 0)
     .map((visit) => {
-      const below = visit.px - free < 46 || Math.abs(visit.py - 30 - ground) < 12;
+      const below = visit.px - free < 46 || (ground > visit.py - 32 && ground < visit.py - 12);
       if (!below) free = visit.px;
       return { visit, below };
     });

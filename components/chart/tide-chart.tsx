@@ -30,7 +30,7 @@ export function TideChart({ data, finding }: TideChartProps) {
       reading="Each diamond is a visit; the upright through it joins its two trials. Bars hang from the line: the deeper, the more lifted that week."
       table={<TideTables data={data} />}
     >
-      <svg width="100%" viewBox={`0 0 ${field.width} ${height}`} role="img" aria-label={finding}>
+      <svg width="100%" className="max-w-[1440px]" viewBox={`0 0 ${field.width} ${height}`} role="img" aria-label={finding}>
         <Patterns ids={ids} />
         <TimeAxis data={data} scale={scale} />
         <rect

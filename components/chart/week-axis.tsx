@@ -31,13 +31,7 @@ function scaleOf({ from, weeks, today }: WeekAxis) {
 /** Head of the axis: the staff with its dates and the notch of today, or only the line. */
 export function WeekAxisHead({ axis, labelled }: { axis: WeekAxis; labelled: boolean }) {
   const { now } = scaleOf(axis);
-  if (!labelled) {
-    return (
-      <svg viewBox={`0 0 ${width} 40`} width={width} height="40" preserveAspectRatio="none" aria-hidden="true">
-        <path d={`M${now} -40V40`} stroke="var(--needs)" strokeWidth="1.25" />
-      </svg>
-    );
-  }
+  if (!labelled) return <NowLine now={now} />;
   const week = width / axis.weeks;
   const edges = Array.from({ length: axis.weeks + 1 }, (_, index) => index * week);
   const starts = edges.slice(0, -1).filter((_, index) => index % 2 === 0);
@@ -49,7 +43,7 @@ export function WeekAxisHead({ axis, labelled }: { axis: WeekAxis; labelled: boo
         </text>
       ))}
       <ScaleBar x={0} y={36} edges={edges} now={now} />
-      <path d={`M${now} 32V66`} stroke="var(--needs)" strokeWidth="1.25" />
+      <path d={`M${now} 32V67`} stroke="var(--needs)" strokeWidth="1.25" />
       <path d={`M${now - 5.5} 30h11l-5.5 10z`} fill="var(--needs)" stroke="var(--ground)" strokeWidth="1.2" />
     </svg>
   );
@@ -59,11 +53,17 @@ export function WeekAxisHead({ axis, labelled }: { axis: WeekAxis; labelled: boo
 export function WeekMark({ axis, window }: { axis: WeekAxis; window?: WeekWindow | undefined }) {
   const scale = scaleOf(axis);
   return (
-    <svg viewBox={`0 0 ${width} 58`} width={width} height="58" aria-hidden="true">
-      <path d={`M${scale.now} -1V59`} stroke="var(--needs)" strokeWidth="1.25" />
-      {window ? <Span scale={scale} window={window} /> : null}
-    </svg>
+    <>
+      <NowLine now={scale.now} />
+      <svg viewBox={`0 0 ${width} 58`} width={width} height="58" aria-hidden="true" className="relative">
+        {window ? <Span scale={scale} window={window} /> : null}
+      </svg>
+    </>
   );
+}
+
+function NowLine({ now }: { now: number }) {
+  return <span className="work-now" style={{ left: now }} aria-hidden="true" />;
 }
 
 function Span({ scale, window }: { scale: ReturnType<typeof scaleOf>; window: WeekWindow }) {

@@ -15,13 +15,13 @@ export function Neatline({ segments, gone }: NeatlineProps) {
   return (
     <div className="neatline" aria-hidden="true">
       <svg width="100%" height="11" viewBox={`0 0 ${segments} 11`} preserveAspectRatio="none">
-        <path d={`M0 1H${segments}M0 9H${segments}`} stroke="var(--ink)" vectorEffect="non-scaling-stroke" />
+        <path d={`M0 0.5H${segments}M0 9.5H${segments}`} stroke="var(--ink)" vectorEffect="non-scaling-stroke" />
         {darks.map((from) => {
           const past = Math.min(1, Math.max(0, now - from));
           return (
             <g key={from}>
-              {past > 0 ? <rect x={from} y="2.5" width={past} height="5" fill="var(--ink)" /> : null}
-              {past < 1 ? <rect x={from + past} y="2.5" width={1 - past} height="5" fill="var(--rule-2)" /> : null}
+              {past > 0 ? <rect x={from} y="2" width={past} height="6" fill="var(--ink)" /> : null}
+              {past < 1 ? <rect x={from + past} y="2" width={1 - past} height="6" fill="var(--rule-2)" /> : null}
             </g>
           );
         })}

@@ -41,7 +41,7 @@ export function Loading({ title, detail, level, children }: LoadingProps) {
 /** Where text will stand: still waterlines at its length. No shimmer. */
 export function Waterlines({ widths = [220, 300, 180], label = 'Loading' }: { widths?: readonly number[]; label?: string }) {
   return (
-    <div role="status" className="grid gap-[11px]">
+    <div role="status" className="grid grid-cols-[minmax(0,1fr)] gap-[11px]">
       <span className="sr-only">{label}</span>
       {widths.map((width, index) => (
         <span key={index} className="waterlines" style={{ width }} />
