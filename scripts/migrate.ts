@@ -1,6 +1,6 @@
 /**
  * Brings the data base of OWNER_DATABASE_URL up to date: tables, rows' policies, triggers, grants, then the job queues.
- * Runs in its own process under `node --import tsx`: a bundler or a test runner cannot load the migrations' files.
+ * Runs in its own process under `node --import tsx --conditions=react-server`: a bundler or a test runner cannot load the migrations' files.
  */
 import { MikroORM } from '@mikro-orm/postgresql';
 import { env } from '@/lib/env';

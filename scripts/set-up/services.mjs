@@ -22,7 +22,10 @@ function sessionSecret() {
 /** Migrates a data base as its owner. */
 export function migrate({ appUrl, ownerUrl }) {
   const env = { ...process.env, DATABASE_URL: appUrl, OWNER_DATABASE_URL: ownerUrl };
-  run(node, ['--import', 'tsx', '--conditions=react-server', 'scripts/migrate.ts'], { env, mend: "The data base could not be migrated: see above; 'npm run db:reset' starts with an empty one." });
+  const mend = process.env.DATABASE_URL
+    ? 'The data base could not be migrated: see above, and check that DATABASE_URL and OWNER_DATABASE_URL are the right addresses.'
+    : "The data base could not be migrated: see above; 'npm run db:reset' starts with an empty one.";
+  run(node, [...asServer, 'scripts/migrate.ts'], { env, mend });
 }
 
 /** Fills an empty data base with the invented study; one that holds data is left as it is. */

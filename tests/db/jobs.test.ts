@@ -127,6 +127,6 @@ it('a job by the clock is scheduled under the application’s login', async () =
   const { deps } = depsWith(() => Promise.resolve());
   const running = await runJobs({ databaseUrl: env().DATABASE_URL, deps, jobs: [nightly] });
   await running.stop();
-  const { rows } = await login.query('select name, cron, timezone from pgboss.schedule');
+  const { rows } = await login.query(`select name, cron, timezone from pgboss.schedule where name = 'mail.send'`);
   expect(rows).toEqual([{ name: 'mail.send', cron: '15 2 * * *', timezone: 'UTC' }]);
 });
