@@ -1,4 +1,4 @@
-import { daysBetween, type LocalDate, mondayOf } from '../calendar';
+import { addDays, daysBetween, type LocalDate, mondayOf } from '../calendar';
 import type { ArmState, LoadFacts, PastLoad } from './define-training-rule';
 import { LOAD_EPSILON_KG, type TrainingSettings } from './settings';
 
@@ -9,10 +9,10 @@ export function loadFacts(
 ): LoadFacts {
   const previous = past.at(-1) ?? null;
   const gapDays = previous && daysBetween({ from: previous.on, to: on });
-  const thisMonday = mondayOf(on);
-  const earlier = past.filter((session) => mondayOf(session.on) !== thisMonday);
-  const lastMonday = earlier.at(-1) && mondayOf(earlier.at(-1)?.on ?? on);
-  const lastWeek = earlier.filter((session) => mondayOf(session.on) === lastMonday);
+  // Oldest first, so a week is a run at the end: a long log is not walked again for every load.
+  const thisWeekAt = startOfWeekRun(past, mondayOf(on), past.length);
+  const lastBefore = past[thisWeekAt - 1];
+  const lastWeek = lastBefore ? past.slice(startOfWeekRun(past, mondayOf(lastBefore.on), thisWeekAt), thisWeekAt) : [];
   return {
     load,
     isBand,
@@ -22,9 +22,16 @@ export function loadFacts(
     previous,
     gapDays,
     isAfterBreak: gapDays !== null && gapDays >= settings.breakDays,
-    firstLoadThisWeek: past.find((session) => mondayOf(session.on) === thisMonday)?.load ?? null,
+    firstLoadThisWeek: past[thisWeekAt]?.load ?? null,
     lastWeekMax: lastWeek.length > 0 ? Math.max(...lastWeek.map((session) => session.load)) : null,
   };
+}
+
+/** Index of the first session on or after `monday` among those before `end`. */
+function startOfWeekRun(past: readonly PastLoad[], monday: LocalDate, end: number): number {
+  let start = end;
+  while (start > 0 && (past[start - 1]?.on ?? monday) >= monday) start -= 1;
+  return start;
 }
 
 /** The loads a break lets one resume at, and whether any step of the equipment falls among them. */
@@ -37,9 +44,18 @@ export function resumeWindow(preBreakKg: number, settings: TrainingSettings): { 
 
 /** The day the load last rose above all it had been in the `withinDays` before; a first session counts as a raise. */
 export function lastRaiseOn(past: readonly PastLoad[], withinDays: number): LocalDate | null {
-  const isRaise = (session: PastLoad, i: number): boolean =>
-    past.slice(0, i).every((before) => before.load < session.load - LOAD_EPSILON_KG || daysBetween({ from: before.on, to: session.on }) >= withinDays);
-  return past.findLast(isRaise)?.on ?? null;
+  return past.findLast((session, i) => isRaise(past, i, addDays(session.on, -withinDays)))?.on ?? null;
+}
+
+/** Whether every session between `after` and the one at `index` was lighter. Walks back only as far as it must. */
+function isRaise(past: readonly PastLoad[], index: number, after: LocalDate): boolean {
+  const load = past[index]?.load ?? 0;
+  for (let i = index - 1; i >= 0; i -= 1) {
+    const before = past[i];
+    if (!before || before.on <= after) return true;
+    if (before.load >= load - LOAD_EPSILON_KG) return false;
+  }
+  return true;
 }
 
 /** Sessions at `load` or above in the `withinDays` before `on`. */

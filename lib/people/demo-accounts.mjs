@@ -24,6 +24,7 @@ export const demoAccounts = [
   account('coordinator', 'site-coordinator', 'Site coordinator', 'Northmoor', 'Robin Ashdown'),
   account('assessor', 'assessor', 'Assessor', 'Northmoor', 'Imre Castell'),
   account('site-investigator', 'site-investigator', 'Site investigator', 'Northmoor', 'Dr Hester Vale'),
+  account('coordinator-saltmarsh', 'site-coordinator', 'Site coordinator, and assessor at two sites', 'Saltmarsh', 'Perpetua Lark'),
   account('monitor', 'monitor', 'Monitor', null, 'Tomas Wren'),
   account('investigator', 'investigator', 'Investigator', null, 'Prof. Odile Marsh'),
   account('data-manager', 'data-manager', 'Data manager', null, 'Sunniva Falk'),

@@ -11,7 +11,7 @@ export const raisedSoon = defineTrainingRule({
   severity: 'advice',
   scope: 'load',
   applies: (facts, { minDaysSinceRaise, breakDays }) => {
-    const raisedOn = lastRaiseOn(facts.past, breakDays);
+    const raisedOn = minDaysSinceRaise === null ? null : lastRaiseOn(facts.past, breakDays);
     if (minDaysSinceRaise === null || raisedOn === null || (weeklyRise(facts) ?? 0) <= LOAD_EPSILON_KG) return false;
     return daysBetween({ from: raisedOn, to: facts.on }) < minDaysSinceRaise;
   },
