@@ -5,8 +5,8 @@ import type { Interval } from '../result';
 export interface Coefficient extends Interval {
   readonly name: string;
   readonly se: number;
-  /** Two-sided p of no effect, on the same reference distribution as the limits. */
-  readonly p: number;
+  /** Two-sided p of no effect, on the same reference distribution as the limits; null where the standard error is 0. */
+  readonly p: number | null;
   /** Degrees of freedom of the reference t distribution; absent where limits and p are normal. */
   readonly df?: number;
 }
@@ -16,7 +16,8 @@ export function coefficient(name: string, estimate: number, se: number, level: n
   const tail = (1 - level) / 2;
   const z = df === undefined ? normal.isf(tail) : studentT.isf(tail, df);
   const statistic = Math.abs(estimate / se);
-  const p = 2 * (df === undefined ? normal.sf(statistic) : studentT.sf(statistic, df));
+  const tailOf = (): number => 2 * (df === undefined ? normal.sf(statistic) : studentT.sf(statistic, df));
+  const p = se > 0 ? tailOf() : null;
   const base = { name, estimate, se, lower: estimate - z * se, upper: estimate + z * se, level, p };
   return df === undefined ? base : { ...base, df };
 }

@@ -52,7 +52,8 @@ export function designOf(terms: readonly Term[], rows: Int32Array, intercept = t
       });
     }
     const after = norm(column);
-    requireRange(after > COLLINEAR * before, `Column ${term.name} is a combination of the columns before it.`);
+    // With fewer rows than columns no fit exists, and the caller says so.
+    requireRange(n < p || after > COLLINEAR * before, `Column ${term.name} is a combination of the columns before it.`);
     r[j * p + j] = after;
     for (let row = 0; row < n; row++) column[row]! /= after;
     basis.push(column);

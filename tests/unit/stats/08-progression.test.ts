@@ -9,8 +9,10 @@ import { quantileBands } from '@/stats/progression/quantile-bands';
 import { ruleAdherence } from '@/stats/progression/rule-adherence';
 import { theilSen } from '@/stats/progression/theil-sen';
 import { loadIntervals, timeToLoad } from '@/stats/progression/time-to-load';
+import { wilsonInterval } from '@/stats/proportion/wilson-interval';
 import type { Interval } from '@/stats/result';
 import type { LimitKind } from '@/stats/survival/limits';
+import { intervalOnset, onsetFreeAt } from '@/stats/survival/interval-onset';
 import { numberAtRisk } from '@/stats/survival/number-at-risk';
 import { quantileOf } from '@/stats/survival/quantile-of';
 import { survivalAt } from '@/stats/survival/survival-at';
@@ -43,7 +45,6 @@ const theilSenOf = (reference: ReferenceCase): unknown => {
   };
 };
 
-const wilson = (x: number, n: number) => { const z = 1.959963984540054; const m = (x + z*z/2)/(n + z*z); const h = z*Math.sqrt(x*(n-x)/n + z*z/4)/(n + z*z); return { estimate: x/n, lower: m-h, upper: m+h }; };
 const KINDS: readonly LimitKind[] = ['log-log', 'log', 'plain'];
 
 /** Limits by kind under the names of the cases: loglog_lower and so on. */
@@ -110,8 +111,20 @@ runTopic('08-progression', {
   'time-to-load-8kg': timeTo8,
   'time-to-load-8kg-interval': (reference) => {
     const { participants, weeks, loads } = logsOf(tableOf(reference));
-    const { n, left, right } = loadIntervals(loadOnset(participants, weeks, loads, 8));
-    return { n, left, right };
+    const at = (reference.expected as { survival_at: { time: number[] } }).survival_at.time;
+    const fit = intervalOnset(loadIntervals(loadOnset(participants, weeks, loads, 8)));
+    return {
+      n: fit.n,
+      left: fit.left,
+      right: fit.right,
+      exact_point: fit.exact,
+      mass: fit.mass,
+      n_candidate_sets: fit.candidateSets,
+      loglik: fit.logLikelihood,
+      kkt_gap: fit.kktGap,
+      unique: fit.unique,
+      survival_at: { time: at, lower: at.map((t) => onsetFreeAt(fit, t).lower), upper: at.map((t) => onsetFreeAt(fit, t).upper) },
+    };
   },
   'rule-adherence-': (reference) => {
     const { participants, weeks, loads } = logsOf(tableOf(reference));
@@ -121,7 +134,7 @@ runTopic('08-progression', {
       n_ok: r.events,
       n_participants: r.clusters,
       pooled: r.estimate,
-      wilson: wilson(r.events!, r.n),
+      wilson: wilsonInterval({ events: r.events!, n: r.n }),
       cluster_se: r.se,
       cluster_lower: r.lower,
       cluster_upper: r.upper,
