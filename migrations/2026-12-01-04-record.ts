@@ -29,11 +29,11 @@ export class TheRecord extends Migration {
     this.addSql('create index visit_site_due on visit (site_id, state, closes_on)');
     this.addSql('create index visit_participant on visit (participant_id, target_on)');
     this.addSql(`create table limb_assessment (${record}, visit_id uuid not null unique references visit, assessor_id uuid not null references account, measured_at timestamptz not null,
-      position text not null, sleeve_worn boolean not null, hours_since_training integer check (hours_since_training between 0 and 999), method text not null, start_offset_mm integer not null, step_mm integer not null check (step_mm > 0),
+      position text, sleeve_worn boolean, hours_since_training integer check (hours_since_training between 0 and 999), method text not null, start_offset_mm integer not null, step_mm integer not null check (step_mm > 0),
       level_count integer not null check (level_count between 2 and 30), tolerance_mm integer not null, state text not null default 'open' check (state in ('open', 'complete')),
       body_weight_g integer check (body_weight_g between 30000 and 250000), impedance_ratio numeric(5,3) check (impedance_ratio between 0.5 and 3), impedance_rest_min integer check (impedance_rest_min between 0 and 120),
       remarks text, left_volume_ml numeric(8,3), right_volume_ml numeric(8,3), rvc numeric(9,6), verdicts jsonb not null default '{}', findings jsonb not null default '[]', formula_version text, completed_at timestamptz, version integer not null default 1,
-      check (state = 'open' or (left_volume_ml is not null and right_volume_ml is not null and formula_version is not null)))`);
+      check (state = 'open' or (left_volume_ml is not null and right_volume_ml is not null and formula_version is not null and position is not null and sleeve_worn is not null)))`);
     this.addSql('create index limb_assessment_participant on limb_assessment (participant_id, measured_at)');
     this.addSql(`create table limb_trial (${record}, assessment_id uuid not null references limb_assessment, side text not null check (side in ('left', 'right')), trial integer not null check (trial between 1 and 3),
       circumferences_mm integer[] not null, saved_at timestamptz not null, version integer not null default 1, unique (assessment_id, side, trial),

@@ -1,4 +1,7 @@
 import type { RouteTable } from '@/lib/web/openapi';
+import * as assessmentsCircumstancesRoute from './assessments/[id]/circumstances/route';
+import * as assessmentsCompleteRoute from './assessments/[id]/complete/route';
+import * as assessmentsTrialRoute from './assessments/[id]/trials/[side]/[trial]/route';
 import * as consentRoute from './consents/[id]/route';
 import * as consentsCountersignRoute from './consents/[id]/countersign/route';
 import * as consentsFileWhichRoute from './consents/[id]/file/[which]/route';
@@ -7,6 +10,7 @@ import * as consentsPaperRoute from './consents/[id]/paper/route';
 import * as consentsPaperSignatureRoute from './consents/[id]/paper-signature/route';
 import * as consentsPartsRoute from './consents/[id]/parts/route';
 import * as consentsSignRoute from './consents/[id]/sign/route';
+import * as correctionsRoute from './corrections/route';
 import * as historyRoute from './history/route';
 import * as queriesRoute from './queries/route';
 import * as queriesAnswerRoute from './queries/[id]/answer/route';
@@ -25,9 +29,17 @@ import * as screeningsEnrolRoute from './screenings/[id]/enrol/route';
 import * as screeningsIdentityRoute from './screenings/[id]/identity/route';
 import * as screeningsLeaveRoute from './screenings/[id]/leave/route';
 import * as verificationsRoute from './verifications/route';
+import * as visitsRoute from './visits/route';
+import * as visitsAssessmentRoute from './visits/[id]/assessment/route';
+import * as visitsBeginRoute from './visits/[id]/begin/route';
+import * as visitsBookRoute from './visits/[id]/book/route';
+import * as visitsMissRoute from './visits/[id]/miss/route';
 
 /** Every address of the API. tests/house.test.ts fails when a route.ts is missing here. */
 export const routes: RouteTable = {
+  '/api/assessments/{id}/circumstances': { PUT: assessmentsCircumstancesRoute.PUT },
+  '/api/assessments/{id}/complete': { POST: assessmentsCompleteRoute.POST },
+  '/api/assessments/{id}/trials/{side}/{trial}': { PUT: assessmentsTrialRoute.PUT },
   '/api/consents/{id}': { GET: consentRoute.GET },
   '/api/consents/{id}/countersign': { POST: consentsCountersignRoute.POST },
   '/api/consents/{id}/file/{which}': { GET: consentsFileWhichRoute.GET },
@@ -36,6 +48,7 @@ export const routes: RouteTable = {
   '/api/consents/{id}/paper-signature': { POST: consentsPaperSignatureRoute.POST },
   '/api/consents/{id}/parts': { POST: consentsPartsRoute.POST },
   '/api/consents/{id}/sign': { POST: consentsSignRoute.POST },
+  '/api/corrections': { POST: correctionsRoute.POST },
   '/api/history': { GET: historyRoute.GET },
   '/api/invitations': { POST: invitationsRoute.POST },
   '/api/queries': { GET: queriesRoute.GET, POST: queriesRoute.POST },
@@ -54,4 +67,9 @@ export const routes: RouteTable = {
   '/api/screenings/{id}/identity': { GET: screeningsIdentityRoute.GET, PUT: screeningsIdentityRoute.PUT },
   '/api/screenings/{id}/leave': { POST: screeningsLeaveRoute.POST },
   '/api/verifications': { POST: verificationsRoute.POST },
+  '/api/visits': { POST: visitsRoute.POST },
+  '/api/visits/{id}/assessment': { GET: visitsAssessmentRoute.GET, POST: visitsAssessmentRoute.POST },
+  '/api/visits/{id}/begin': { POST: visitsBeginRoute.POST },
+  '/api/visits/{id}/book': { POST: visitsBookRoute.POST },
+  '/api/visits/{id}/miss': { POST: visitsMissRoute.POST },
 };

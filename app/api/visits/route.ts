@@ -1,0 +1,5 @@
+import { addVisit } from '@/lib/schedule/add-unscheduled-visit';
+import { addVisitInput } from '@/lib/schedule/input';
+import { route } from '@/lib/web/route';
+
+export const POST = route({ act: 'visit.add', summary: 'Add an extra visit', input: addVisitInput, create: true, run: addVisit });

@@ -1,0 +1,48 @@
+import { z } from 'zod';
+import { fieldTargetInput } from '@/lib/queries/input';
+
+/** What limb assessments take from people: the same schema in the browser and on the server. */
+const girthMm = z.int('Girths are whole millimetres.').min(100, 'A girth under 10 cm cannot be right.').max(700, 'A girth over 70 cm cannot be right.').nullable();
+
+export const beginAssessmentInput = z.strictObject({ id: z.uuid() });
+
+export const saveTrialInput = z.strictObject({
+  id: z.uuid(),
+  side: z.enum(['left', 'right']),
+  trial: z.coerce.number().int().min(1).max(3),
+  circumferencesMm: z.array(girthMm).min(2).max(30),
+});
+export type SaveTrialInput = z.output<typeof saveTrialInput>;
+
+export const positions = ['supported, 90° forward', 'hanging', 'lying, at the side'] as const;
+
+export const saveCircumstancesInput = z.strictObject({
+  id: z.uuid(),
+  position: z.enum(positions).nullable(),
+  sleeveWorn: z.boolean().nullable(),
+  hoursSinceTraining: z.int().min(0).max(999, 'Give the hours as a number up to 999.').nullable(),
+  bodyWeightG: z.int().min(30_000, 'Body weight under 30 kg cannot be right.').max(250_000, 'Body weight over 250 kg cannot be right.').nullable(),
+  impedanceRatio: z.number().min(0.5, 'The ratio lies between 0.5 and 3.').max(3, 'The ratio lies between 0.5 and 3.').nullable(),
+  impedanceRestMin: z.int().min(0).max(120, 'Give the minutes of lying down, 0 to 120.').nullable(),
+  remarks: z.string().trim().max(500, 'Use at most 500 characters.').nullable(),
+});
+export type SaveCircumstancesInput = z.output<typeof saveCircumstancesInput>;
+
+/** A doubtful value that was looked at again and kept, with the reason in the assessor's words. */
+export const keptFindingSchema = z.strictObject({
+  check: z.string().max(60),
+  place: z.string().max(40),
+  reason: z.string().trim().min(3, 'Say why it is kept.').max(300, 'Use at most 300 characters.'),
+});
+
+export const completeAssessmentInput = z.strictObject({ id: z.uuid(), kept: z.array(keptFindingSchema).max(100) });
+export type CompleteAssessmentInput = z.output<typeof completeAssessmentInput>;
+
+export const correctValueInput = z.strictObject({
+  target: fieldTargetInput,
+  value: z.union([z.string().max(500), z.number(), z.boolean(), z.null()]),
+  reason: z.string().trim().min(5, 'Say why the value changes.').max(500, 'Use at most 500 characters.'),
+  /** The query that the correction answers. */
+  queryId: z.uuid().optional(),
+});
+export type CorrectValueInput = z.output<typeof correctValueInput>;

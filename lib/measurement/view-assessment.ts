@@ -1,0 +1,14 @@
+import { LimbAssessmentSchema } from '@/entities/limb-assessment';
+import { findVisit } from '@/lib/schedule/view-visit';
+import type { Work } from '@/lib/work/work';
+import { trialsOf } from './find-assessment';
+import { viewComplete, type CompleteAssessmentView } from './view-complete';
+import { viewOpen, type OpenAssessmentView } from './view-open';
+
+/** The limb assessment of a visit: bare while it is being taken, with results once it is saved, null before it began. */
+export async function viewAssessment(work: Work, { visitId }: { visitId: string }): Promise<OpenAssessmentView | CompleteAssessmentView | null> {
+  await findVisit(work, visitId);
+  const assessment = await work.em.findOne(LimbAssessmentSchema, { visitId });
+  if (!assessment) return null;
+  return assessment.state === 'complete' ? viewComplete(work, assessment) : viewOpen(assessment, await trialsOf(work, assessment.id));
+}

@@ -1,0 +1,39 @@
+import { ParticipantSchema } from '@/entities/participant';
+import { VisitSchema } from '@/entities/visit';
+import { addDays } from '@/instruments/calendar';
+import { Refusal } from '@/lib/work/refusal';
+import type { Work } from '@/lib/work/work';
+import { toVisitView, type VisitView } from './view-visit';
+
+/** Days after its day in which an extra visit is still taken for it. Common practice, no source. */
+const graceDays = 7;
+
+/** An extra visit, after a symptom report for one. Its window is the day and the week after it. */
+export async function addUnscheduledVisit(work: Work, { participantId, on, why }: { participantId: string; on: string; why: string }): Promise<VisitView> {
+  const participant = await work.em.findOne(ParticipantSchema, { id: participantId });
+  if (!participant) throw new Refusal('not-found', 'There is no such participant in your reach.');
+  if (on < participant.enrolledOn) throw new Refusal('invalid', `${on} is before the enrolment on ${participant.enrolledOn}.`, 'on');
+  if (participant.state !== 'enrolled' && participant.leftGrade !== 'stops training')
+    throw new Refusal('locked', 'This participant has left, so no visit can be added.');
+  const visit = work.em.create(VisitSchema, {
+    siteId: participant.siteId,
+    participantId,
+    key: 'extra',
+    name: 'Extra visit',
+    targetOn: on,
+    opensOn: on,
+    closesOn: addDays(on, graceDays),
+    state: 'to come',
+    unscheduledReason: why,
+    protocolVersionId: participant.protocolVersionId,
+  });
+  await work.em.flush();
+  return toVisitView(visit);
+}
+
+/** The same, asked for by participant code. */
+export async function addVisit(work: Work, { code, on, why }: { code: string; on: string; why: string }): Promise<VisitView> {
+  const participant = await work.em.findOne(ParticipantSchema, { code });
+  if (!participant) throw new Refusal('not-found', 'There is no such participant in your reach.');
+  return addUnscheduledVisit(work, { participantId: participant.id, on, why });
+}
