@@ -114,7 +114,7 @@ export const smallProtocol: ProtocolDocument = {
     { key: 'month-6', name: 'Month 6', offsetDays: 182, earlyDays: 21, lateDays: 21, questionnaires: ['arm-symptoms', 'daily-tasks', 'lifting-confidence'] },
   ],
   measurement: { method: 'frustum', startOffsetMm: 0, stepMm: 40, levelCount: 11, toleranceMm: 5, position: 'seated, arm supported at shoulder height', semPct: 1.5 },
-  swelling: { primary: 'D1', alternatives: ['D2'], earlyExclusionDays: 90, impedanceCutoffs: 'study' },
+  swelling: { primary: 'D1', alternatives: ['D2'], earlyExclusionDays: 90, impedanceCutoffs: '2011-3sd' },
   training: {
     startKg: 2, startFromKg: 1, weeklyStepKg: 2, jumpKg: 5, breakDays: 28, resumeFromFraction: 0.5, resumeToFraction: 0.8,
     toleranceKg: 0, incrementKg: 0.5, shortBreakDays: null, minDaysSinceRaise: null, minSessionsAtLoad: null,

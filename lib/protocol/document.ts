@@ -40,7 +40,7 @@ export const protocolSchema = z.strictObject({
     /** Standard error of one arm's volume in percent, until the registry has its own. */
     semPct: z.number().positive(),
   }),
-  swelling: z.strictObject({ primary: z.enum(swellingCodes), alternatives: z.array(z.enum(swellingCodes)), earlyExclusionDays: days, impedanceCutoffs: z.string() }),
+  swelling: z.strictObject({ primary: z.enum(swellingCodes), alternatives: z.array(z.enum(swellingCodes)), earlyExclusionDays: days, impedanceCutoffs: z.enum(['2001-3sd', '2011-2sd', '2011-3sd', '2018-2sd', '2018-3sd']) }),
   training: z.strictObject({
     startKg: z.number(),
     startFromKg: z.number(),
