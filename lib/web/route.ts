@@ -1,7 +1,7 @@
 import 'server-only';
 import type { z } from 'zod';
 import { inviteeOf } from '@/lib/auth/invitee';
-import { ruleOf, type Act } from '@/lib/auth/policy';
+import { may, ruleOf, type Act } from '@/lib/auth/policy';
 import { systemActor, type Actor } from '@/lib/auth/roles';
 import { log } from '@/lib/log';
 import { Refusal } from '@/lib/work/refusal';
@@ -87,10 +87,12 @@ export function route<I extends Input, R>(declaration: Declaration<I, R>): Route
     const reference = newReference();
     try {
       requireOwnOrigin(request);
+      // Who asks comes first: a role that may not learns nothing of what the input should be.
+      const actor = await actorOf(request, act, open ?? false);
+      if (!may(actor.role, act)) throw new Refusal('forbidden', 'Your role does not include this.');
       const key = create ? idempotencyKey(request) : null;
       const version = change ? expectedVersion(request) : null;
       const raw = await readInput(request, await context.params);
-      const actor = await actorOf(request, act, open ?? false);
       const input = declaration.input.parse(raw);
       const reason = (input as { reason?: unknown }).reason;
       const options = { reason: typeof reason === 'string' ? reason : null, request: reference, expectedVersion: version };
