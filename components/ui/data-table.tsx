@@ -184,6 +184,7 @@ function useRows<Row extends RowData>({
     ...(onSortingChange ? { onSortingChange } : {}),
     manualPagination: true,
     manualSorting: true,
+    sortDescFirst: false,
   });
   return { table, paged };
 }
