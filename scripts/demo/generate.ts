@@ -45,7 +45,7 @@ function arrivalsOf(plan: Plan, site: DemoSite): Arrival[] {
   const recent = [9, 6, 1];
   const others = Array.from({ length: site.others }, (_, nth) => {
     const left = site.others - 1 - nth;
-    return { on: addDays(today, -(left < 3 ? (recent[2 - left] ?? 1) : draw.whole(20, 745))), number: null, nth: nth + 1 };
+    return { on: addDays(today, -(left < 3 ? (recent[2 - left] ?? 1) : draw.whole(20, 755))), number: null, nth: nth + 1 };
   });
   return [...enrolled, ...others].toSorted((a, b) => a.on.localeCompare(b.on));
 }

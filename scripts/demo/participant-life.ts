@@ -1,11 +1,12 @@
 import { addDays, daysBetween, type LocalDate } from '@/instruments/calendar';
 import { judgeSessions, type TrainingFlag } from '@/instruments/training/judge-sessions';
-import type { TrainingSession } from '@/instruments/training/session';
+import type { FlagDetail } from '@/lib/training/judge-record';
+import { toTrainingSession } from '@/lib/training/training-record';
 import { inventArms } from './arm';
 import { minutesAfter } from './clock';
 import { inventCourse } from './course';
 import { type Change, type DemoEvent, eventBy, inserted, type Row, updated } from './events';
-import { doubtsAbout, type Doubt, queryEvents, storyDoubts, verificationEvents } from './margin';
+import { doubtsAbout, queryEvents, storyDoubts, verificationEvents } from './margin';
 import type { Person } from './person';
 import { type Plan, system } from './plan';
 import { questionEvents } from './questions';
@@ -47,7 +48,7 @@ export function live(plan: Plan, person: Person, screeningNumber: number): Life 
   const enrolment = [inserted('participant', participantRow(plan, person)), inserted('visit', ...scheduled.map((visit) => visitRow(plan, person, visit))), ...laidOut];
   const current = scheduled.find(({ outcome }) => outcome.kind === 'under way');
   const margin = { plan, person, draw: scene.draw, ids };
-  const doubts = person.cast?.course ? [...storyDoubts(sittings), ...sittings.filter(({ slip }) => slip).flatMap((sitting) => doubtsAbout(margin, sitting))] : [...sittings.flatMap((sitting) => doubtsAbout(margin, sitting)), ...flagDoubts(flags, sessions)];
+  const doubts = person.cast?.course ? storyDoubts(sittings) : sittings.flatMap((sitting) => doubtsAbout(margin, sitting));
   const events = [
     ...enrolledScreening(plan, person, screeningNumber, enrolledAt, enrolment),
     ...joinEvents(plan, person, minutesAfter(enrolledAt, 190)),
@@ -102,21 +103,9 @@ function measureAll(scene: Parameters<typeof measure>[0], visits: readonly Plann
   return sittings;
 }
 
-const changedBy = { 'the same': false, 'a little fuller': true, 'clearly fuller': true, 'not sure': null } as const;
-
 function judge(plan: Plan, sessions: readonly LoggedSession[], sittings: readonly Sitting[]): TrainingFlag[] {
-  const judged = sessions.map((session): TrainingSession => ({
-    id: session.id, on: session.on, armChanged: changedBy[session.armCheck],
-    entries: session.sets.map(({ exercise, equipment, basis, repetitions, loadG }) => ({ exercise, equipment, basis, side: 'both', sets: [{ reps: repetitions, loadKg: loadG / 1000 }] })),
-  }));
+  const judged = sessions.map(({ sets, ...session }) => toTrainingSession({ ...session, sets: sets.map((set) => ({ ...set, side: 'both' })) }));
   return judgeSessions(judged, sittings.map(({ sitting }) => sitting.on), sittings[0]?.sitting.on ?? null, plan.protocol.training);
-}
-
-function flagDoubts(flags: readonly TrainingFlag[], sessions: readonly LoggedSession[]): Doubt[] {
-  return flags.filter(({ rule }) => rule === 'STEP_OVER' || rule === 'STEP_HARD').slice(0, 1).map(({ sessionId, facts }) => ({
-    visitId: null, table: 'training_session', targetId: sessionId, field: 'local_on', label: 'Training, load', check: null, from: addDays(sessions.find(({ id }) => id === sessionId)?.on ?? '2000-01-01', 3),
-    question: `Up ${((facts?.load ?? 0) - (facts?.lastWeekMax ?? 0)).toFixed(1)} kg from the week before. Was the participant called?`, answer: 'Called two days later. The arm was unchanged; will stay at the lower load.',
-  }));
 }
 
 function participantRow(plan: Plan, { id, site, code, number, facts, enrolledOn }: Person): Row {
@@ -177,13 +166,17 @@ function sessionEvents(plan: Plan, person: Person, session: LoggedSession, flags
   }));
   const raised = flags.map((flag): Row => ({
     ...record, id: ids.uuid(), session_id: session.id, flag_key: flag.id, rule: flag.rule, exercise: flag.key?.split('|')[0] ?? null, raised_at: at.toISOString(), state: 'raised',
-    detail: flag.facts ? { loadKg: flag.facts.load, previousKg: flag.facts.previous?.load ?? null, lastWeekKg: flag.facts.lastWeekMax, gapDays: flag.facts.gapDays } : {},
+    detail: { ...detailOf(flag) },
   }));
   const logged = eventBy(person.account, at, 'training.log', [inserted('training_session', row), ...(sets.length > 0 ? [inserted('training_set', ...sets)] : []), ...(raised.length > 0 ? [inserted('training_flag', ...raised)] : [])]);
   const seenAt = plan.clock.at(addDays(session.on, 6), 640, person.site.timeZone);
   if (raised.length === 0 || !plan.clock.isPast(seenAt)) return [logged];
   return [logged, eventBy(person.site.coordinator, seenAt, 'flag.see', [updated('training_flag', ...raised.map(({ id }) => ({ id: id ?? null, state: 'seen' })))])];
 }
+
+const detailOf = ({ severity, on, key, facts }: TrainingFlag): FlagDetail => ({
+  severity, on, key, load: facts?.load ?? null, previousLoad: facts?.previous?.load ?? null, lastWeekLoad: facts?.lastWeekMax ?? null, gapDays: facts?.gapDays ?? null,
+});
 
 function endEvents(plan: Plan, person: Person, leaving: Leaving | null, scheduled: readonly PlannedVisit[]): DemoEvent[] {
   if (leaving) {

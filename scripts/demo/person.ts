@@ -77,12 +77,12 @@ function inventFacts(draw: Draw, enrolledOn: LocalDate): Facts {
     heightMm,
     weightKg: bmi * (heightMm / 1000) ** 2,
     surgeryOn: addDays(enrolledOn, -draw.whole(60, 420)),
-    surgery: draw.weighted([['Breast-conserving surgery', 58], ['Mastectomy', 34], ['Mastectomy with reconstruction', 8]]),
-    axillaryProcedure: clearance ? 'Axillary clearance' : 'Sentinel node biopsy',
+    surgery: draw.weighted([['breast-conserving', 58], ['mastectomy', 34], ['mastectomy-reconstruction', 8]]),
+    axillaryProcedure: clearance ? 'axillary-dissection' : 'sentinel-node-biopsy',
     // Medians of 16 and 2 nodes are typical (clinical studies of the two procedures).
     nodesRemoved: clearance ? Math.round(draw.between(8, 34, 16, 4.5)) : draw.whole(1, 4),
-    radiotherapy: nodal ? 'Chest wall or breast, and nodes' : draw.chance(0.72) ? 'Chest wall or breast' : 'None',
-    systemicTherapy: draw.weighted([['Hormone tablets', 40], ['Chemotherapy with taxane, hormone tablets', 28], ['Chemotherapy with taxane', 16], ['None', 16]]),
+    radiotherapy: nodal ? 'regional-nodes' : draw.chance(0.72) ? 'breast-or-chest-wall' : 'none',
+    systemicTherapy: draw.weighted([['endocrine', 40], ['chemotherapy-taxane', 34], ['chemotherapy-other', 6], ['targeted', 6], ['none', 14]]),
   };
 }
 

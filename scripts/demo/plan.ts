@@ -124,8 +124,8 @@ export function layOut({ seed, now, participants, logWeeks }: { seed: number; no
   const today = clock.today('Europe/London');
   return {
     seed, clock, protocol: protocolDocument, ids, sites, staff, logWeeks,
-    startsOn: addDays(today, -760),
-    endsOn: addDays(today, 700),
+    startsOn: addDays(today, -775),
+    endsOn: addDays(today, 686),
     monitor: staff.find(({ role }) => role === 'monitor') as Staff,
     dataManager: staff.find(({ role }) => role === 'data-manager') as Staff,
   };

@@ -42,7 +42,7 @@ export const protocolDocument: ProtocolDocument = protocolSchema.parse({
     stepMm: 40,
     levelCount: 11,
     toleranceMm: 5,
-    position: 'Sitting, arm supported at shoulder height, palm down',
+    position: 'supported, 90° forward',
     semPct: 0.82,
   },
   swelling: { primary: 'D6', alternatives: ['D5', 'D3', 'D1', 'D2', 'D7'], earlyExclusionDays: 91, impedanceCutoffs: '2011-3sd' },

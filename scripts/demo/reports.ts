@@ -1,6 +1,9 @@
 import { addDays, addWorkingDays, type LocalDate } from '@/instruments/calendar';
-import { judgeSymptomReport, type SafetyVerdict, type SiteDeadline } from '@/instruments/safety/judge-symptom-report';
+import { judgeArmCheck } from '@/instruments/safety/judge-arm-check';
+import { judgeSymptomReport, type SafetyVerdict } from '@/instruments/safety/judge-symptom-report';
 import type { ReportedSign, SymptomReportAnswers } from '@/instruments/safety/symptom-report';
+import { armCheckCode, type ArmCheckWords } from '@/lib/training/arm-check-words';
+import { dueAt } from '@/lib/safety/due-at';
 import { localDate } from '@/lib/work/time';
 import { minutesAfter } from './clock';
 import type { Draw } from './draw';
@@ -16,7 +19,7 @@ export interface Report {
   readonly clientKey: string;
   readonly at: Date;
   readonly on: LocalDate;
-  readonly answers: SymptomReportAnswers;
+  readonly answers: SymptomReportAnswers & { readonly armCheck?: ArmCheckWords };
   readonly verdict: SafetyVerdict;
   readonly note: string | null;
   readonly readAt: Date | null;
@@ -31,6 +34,8 @@ interface Telling {
   readonly signs: readonly ReportedSign[];
   readonly lastedOverADay?: boolean | null;
   readonly soreness?: SymptomReportAnswers['soreness'];
+  /** Said before training instead of in a report of its own. */
+  readonly armCheck?: ArmCheckWords;
   readonly note?: string | null;
   readonly handling?: 'as usual' | 'unread' | 'read only';
   readonly extraVisitOn?: LocalDate;
@@ -48,21 +53,13 @@ function outcomeOf({ level }: SafetyVerdict): Outcome {
   return level === 'S1' || level === 'S3' || level === 'S2' ? 'unscheduled visit' : 'adverse event';
 }
 
-/** The end of the site's time: hours from the report, or five in the afternoon of a day. */
-export function dueAt(plan: Plan, timeZone: string, at: Date, deadline: SiteDeadline | null): Date | null {
-  if (deadline === null) return null;
-  if ('hours' in deadline) return minutesAfter(at, deadline.hours * 60);
-  const on = localDate(at, timeZone);
-  return plan.clock.at('workingDays' in deadline ? addWorkingDays(on, deadline.workingDays) : addDays(on, deadline.days), 1020, timeZone);
-}
-
 export function makeReport(plan: Plan, person: Person, draw: Draw, ids: Draw, telling: Telling): Report {
   const { timeZone } = person.site;
-  const answers = { signs: telling.signs, lastedOverADay: telling.lastedOverADay ?? null, soreness: telling.soreness ?? null };
-  const verdict = judgeSymptomReport(answers);
+  const answers = { signs: telling.signs, lastedOverADay: telling.lastedOverADay ?? null, soreness: telling.soreness ?? null, ...(telling.armCheck && { armCheck: telling.armCheck }) };
+  const verdict = telling.armCheck ? judgeArmCheck(armCheckCode(telling.armCheck)) : judgeSymptomReport(answers);
   if (!verdict) throw new Error('A report tells of something.');
   const on = localDate(telling.at, timeZone);
-  const due = dueAt(plan, timeZone, telling.at, verdict.siteDeadline);
+  const due = dueAt(verdict.siteDeadline, telling.at, timeZone);
   const usual = telling.handling ?? 'as usual';
   const urgent = verdict.urgency === 'emergency now' || verdict.urgency === 'same-day care';
   const readAt = urgent ? minutesAfter(telling.at, draw.whole(9, 70)) : plan.clock.at(addWorkingDays(on, 1), draw.whole(530, 700), timeZone);
@@ -93,6 +90,7 @@ export function inventReports(plan: Plan, person: Person, ids: Draw, span: { fro
   return [
     ...many(0.35, () => ({ signs: [], soreness: { days: draw.whole(1, 4), onlyTrainedMuscles: true } })),
     ...many(0.12, () => ({ signs: ['ache'], lastedOverADay: false, note: 'Passed by the evening.' })),
+    ...many(0.1, () => ({ signs: draw.pick<ReportedSign[]>([['heavy'], ['full', 'tight'], ['tight-wear'], ['ache', 'heavy']]), lastedOverADay: true })),
     ...many(0.03, () => ({ signs: draw.pick<ReportedSign[]>([['hot', 'red'], ['red', 'tender', 'fever'], ['hot', 'tender']]) })),
     ...many(0.02, () => ({ signs: draw.pick<ReportedSign[]>([['numb-weak'], ['lump']]) })),
     ...scripted(plan, person, draw, ids),
@@ -116,7 +114,7 @@ function scripted(plan: Plan, person: Person, draw: Draw, ids: Draw): Report[] {
 export function reportEvents(plan: Plan, person: Person, report: Report): DemoEvent[] {
   const { site } = person;
   const { verdict } = report;
-  const due = dueAt(plan, site.timeZone, report.at, verdict.siteDeadline);
+  const due = dueAt(verdict.siteDeadline, report.at, site.timeZone);
   const row = {
     id: report.id, site_id: site.id, participant_id: person.id, reported_at: report.at.toISOString(), noticed_on: report.on, answers: { ...report.answers }, level: verdict.level,
     note: report.note, due_at: due?.toISOString() ?? null, hold_training: verdict.holdTraining, state: 'new', client_key: report.clientKey,

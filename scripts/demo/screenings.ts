@@ -1,5 +1,6 @@
-import { createHash } from 'node:crypto';
 import { addDays, type LocalDate } from '@/instruments/calendar';
+import { contentHash } from '@/lib/consent/consent-content';
+import { notEnrolledReasons } from '@/lib/enrolment/input';
 import { consentForm } from './consent-form';
 import { minutesAfter } from './clock';
 import { Draw } from './draw';
@@ -7,9 +8,6 @@ import { type Change, type DemoEvent, eventBy, inserted, type Row, updated } fro
 import { inventIdentity } from './names';
 import { type Person } from './person';
 import { type DemoSite, invitee, type Plan } from './plan';
-
-/** What a signature binds to: the form as it was shown and the choices as they were made. */
-const contentHash = (permissions: Record<string, string>): string => createHash('sha256').update(JSON.stringify({ form: consentForm, permissions })).digest('hex');
 
 const referrers = ['Breast clinic', 'Breast clinic', 'Physiotherapist', 'Oncology nurse', 'Leaflet', 'A friend in the study'];
 const sectionKeys = consentForm.sections.map(({ key }) => key);
@@ -59,7 +57,7 @@ function consentEvents(candidate: Candidate, { consentId, participantSignature, 
   const signedAt = minutesAfter(at, draw.whole(11, 30));
   const counteredAt = minutesAfter(signedAt, mode === 'home' ? draw.whole(40, 150) : 3);
   const signature = (id: string, who: 'participant' | 'staff', name: string, when: Date): Row => ({
-    id, consent_id: consentId, screening_id: screeningId, site_id: site.id, who, means: 'typed', name, signed_at: when.toISOString(), content_sha256: contentHash(permissions),
+    id, consent_id: consentId, screening_id: screeningId, site_id: site.id, who, means: 'typed', name, signed_at: when.toISOString(), content_sha256: contentHash({ formNumber: '1.0', form: consentForm, permissions }),
   });
   const start = { id: consentId, screening_id: screeningId, site_id: site.id, form_version_id: plan.ids.consentForm, mode, state: 'reading', created_at: at.toISOString() };
   const events = [eventBy(site.coordinator, at, 'consent.start', [inserted('consent', start)])];
@@ -100,15 +98,15 @@ export function enrolledScreening(plan: Plan, person: Person, number: number, en
       updated('screening', { id: screeningId, state: 'enrolled', participant_id: id }),
       updated('eligibility_answer', ...answers.map((answer) => joined(String(answer['id'])))),
       updated('consent', joined(ids.consentId)),
-      updated('consent_signature', joined(ids.participantSignature), joined(ids.staffSignature)),
       updated('participant_identity', joined(identityId)),
     ]),
   ];
 }
 
 const reasons = [
-  ['Not eligible', 34, 'nodes'], ['Not eligible', 12, 'advised-against'], ['Declined: no time', 26, null], ['Declined: worried about lifting', 12, null], ['Could not be reached', 10, null], ['Lives too far away', 6, null],
-] as const;
+  ['Not eligible', 36, 'nodes'], ['Advised against by the clinician', 8, 'advised-against'], ['Declined: no time', 22, null], ['Declined: worried about lifting', 12, null],
+  ['Declined: no interest', 8, null], ['Could not be reached', 8, null], ['Declined: distance or travel', 6, null],
+] as const satisfies readonly (readonly [(typeof notEnrolledReasons)[number], number, string | null])[];
 
 /** People who were screened and not enrolled, or not yet. The last three of a site are still on their way. */
 export function otherScreening(plan: Plan, site: DemoSite, nth: number, number: number, on: LocalDate): DemoEvent[] {

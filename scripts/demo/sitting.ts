@@ -1,6 +1,8 @@
 import { daysBetween, type LocalDate } from '@/instruments/calendar';
+import { checkLimbSitting } from '@/instruments/checks/limb-sitting';
 import { combineTrials } from '@/instruments/measurement/combine-trials';
 import { computeAssessment, type ComputedAssessment, type MeasuredSitting, type TrialReading } from '@/lib/measurement/compute-assessment';
+import { placeName } from '@/lib/measurement/findings';
 import { type Arms, daysError, type Hand, readTrial, type Side } from './arm';
 import { minutesAfter } from './clock';
 import type { Draw } from './draw';
@@ -72,15 +74,16 @@ export function measure(scene: Scene, visit: PlannedVisit & { outcome: { on: Loc
   const hand = { roundedShare: person.site.roundedShare, noise: person.cast?.course ? 0.35 : 1 };
   const trueMm = { left: arms.trueGirthsMm('left', day), right: arms.trueGirthsMm('right', day) };
   const ratio = Math.round(arms.impedanceRatio(day, draw) * 1000) / 1000;
+  const isStory = Boolean(person.cast?.course) && visit.key === 'month-6';
   const right: MeasuredSitting = {
     on, method: measurement.method, toleranceMm: measurement.toleranceMm,
     map: { startOffsetMm: measurement.startOffsetMm, stepMm: measurement.stepMm, levels: measurement.levelCount },
-    trials: readBothArms(draw, trueMm, hand, measurement.toleranceMm),
+    trials: [...readBothArms(draw, trueMm, hand, measurement.toleranceMm), ...(isStory ? storyThird(trueMm.left) : [])],
     bodyWeightG: Math.round(arms.weightKg(day) * 10) * 100,
-    impedanceRatio: draw.chance(0.04) ? null : ratio,
+    impedanceRatio: draw.chance(0.04) && !person.cast ? null : ratio,
   };
   const trialIds = new Map([...sides.flatMap((side) => [1, 2, 3].map((trial) => [`${side} ${trial}`, ids.uuid()] as const))]);
-  const slip = person.cast?.course ? scriptedSlip(visit, right, trialIds) : inventSlip(draw, right, trialIds);
+  const slip = person.cast?.course ? (isStory ? trialSlip(right, trialIds, { side: 'left', trial: 2, level: storyLevel, byMm: 17 }) : null) : inventSlip(draw, right, trialIds);
   const asEntered = slip ? withSlip(right, slip) : right;
   const settings = { earlyExclusionDays: swelling.earlyExclusionDays, impedanceCutoffs: swelling.impedanceCutoffs };
   const compute = (sitting: MeasuredSitting): ComputedAssessment => computeAssessment({ sitting, arms: person.facts, baseline, settings });
@@ -126,8 +129,9 @@ function inventSlip(draw: Draw, right: MeasuredSitting, trialIds: ReadonlyMap<st
   return fate < 0.12 && level >= 0 ? trialSlip(right, trialIds, { side, trial: 2, level, byMm }) : null;
 }
 
-const scriptedSlip = (visit: PlannedVisit, right: MeasuredSitting, _trialIds: ReadonlyMap<string, string>): Slip | null =>
-  visit.key === 'month-6' ? weightSlip(right) : null;
+/** In the story the elbow bent during the second pass, and a third reading stands at that one level. */
+const storyLevel = 6;
+const storyThird = (trueMm: readonly number[]): TrialReading[] => [{ side: 'left', trial: 3, circumferencesMm: trueMm.map((girth, level) => (level === storyLevel ? Math.round(girth) + 1 : null)) }];
 
 const volumes = (result: ComputedAssessment): Row => ({
   left_volume_ml: result.leftVolumeMl === null ? null : Number(result.leftVolumeMl.toFixed(3)),
@@ -143,7 +147,7 @@ function assessmentRow({ plan, person }: Scene, visitId: string, sitting: Pick<S
   const { measurement } = plan.protocol;
   return {
     id: sitting.assessmentId, site_id: person.site.id, participant_id: person.id, visit_id: visitId, assessor_id: sitting.assessor.accountId, measured_at: sitting.at.toISOString(),
-    position: measurement.position, sleeve_worn: false, method: measurement.method, start_offset_mm: measurement.startOffsetMm, step_mm: measurement.stepMm,
+    method: measurement.method, start_offset_mm: measurement.startOffsetMm, step_mm: measurement.stepMm,
     level_count: measurement.levelCount, tolerance_mm: measurement.toleranceMm, state: 'open',
   };
 }
@@ -152,15 +156,27 @@ const trialRow = ({ person }: Scene, assessmentId: string, id: string, { side, t
   id, site_id: person.site.id, participant_id: person.id, assessment_id: assessmentId, side, trial, circumferences_mm: circumferencesMm, saved_at: savedAt.toISOString(),
 });
 
+/** What the form would have doubted; what was looked at again was kept with a reason. */
+function findingsOf({ map, method, toleranceMm, trials }: MeasuredSitting): readonly Record<string, unknown>[] {
+  const arm = (side: Side) => {
+    const pass = (trial: number): readonly (number | null)[] => trials.find((row) => row.side === side && row.trial === trial)?.circumferencesMm ?? Array.from({ length: map.levels }, () => null);
+    return { first: pass(1), second: pass(2), third: pass(3) };
+  };
+  return checkLimbSitting({ map, method, toleranceMm, left: arm('left'), right: arm('right') })
+    .filter(({ severity }) => severity !== 'hint')
+    .map(({ check, version, severity, message, at }) => ({ check, version, severity, message, place: placeName(at), reason: check === 'trials.differ' ? null : 'Measured again, the same.' }));
+}
+
 /** The sitting as the trail tells it: begun, pass by pass, completed, then the visit. */
 export function sittingEvents(scene: Scene, sitting: Sitting): DemoEvent[] {
   const { visit, at, assessor, assessmentId, asEntered } = sitting;
   const order = asEntered.trials.toSorted((a, b) => a.trial - b.trial || a.side.localeCompare(b.side));
   const finishedAt = minutesAfter(at, 4 * order.length + 5);
-  const begun = { ...assessmentRow(scene, visit.id, sitting), sleeve_worn: sitting.sleeveWorn, hours_since_training: sitting.hoursSinceTraining };
+  const begun = assessmentRow(scene, visit.id, sitting);
   const finished = {
     id: assessmentId, state: 'complete', completed_at: finishedAt.toISOString(), body_weight_g: asEntered.bodyWeightG, impedance_ratio: asEntered.impedanceRatio,
-    impedance_rest_min: sitting.restMin, remarks: sitting.remarks, ...volumes(sitting.enteredResult),
+    impedance_rest_min: sitting.restMin, remarks: sitting.remarks,
+    position: scene.plan.protocol.measurement.position, sleeve_worn: sitting.sleeveWorn, hours_since_training: sitting.hoursSinceTraining, findings: findingsOf(asEntered), ...volumes(sitting.enteredResult),
   };
   return [
     eventBy(assessor, minutesAfter(at, -4), 'visit.begin', [updated('visit', arrived(scene, { id: visit.id, on: asEntered.on }))]),
@@ -181,7 +197,9 @@ export function underWayEvents(scene: Scene, visit: PlannedVisit, on: LocalDate)
   const sitting = measure(scene, { ...visit, outcome: { kind: 'done', on, minutes: 0 } }, null, null);
   const passes = sitting.sitting.trials.filter(({ side, trial }) => trial < 3 && !(side === 'right' && trial === 2)).toSorted((a, b) => a.trial - b.trial);
   const assessor = person.site.assessor;
-  const begun = { ...assessmentRow(scene, visit.id, { ...sitting, at, assessor }), impedance_ratio: sitting.sitting.impedanceRatio, impedance_rest_min: 10, body_weight_g: sitting.sitting.bodyWeightG, hours_since_training: draw.whole(20, 60) };
+  const begun = { ...assessmentRow(scene, visit.id, { ...sitting, at, assessor }), impedance_ratio: sitting.sitting.impedanceRatio, impedance_rest_min: 10, body_weight_g: sitting.sitting.bodyWeightG,
+    position: plan.protocol.measurement.position, sleeve_worn: false, hours_since_training: draw.whole(20, 60),
+  };
   return [
     eventBy(assessor, minutesAfter(at, -6), 'visit.begin', [updated('visit', arrived(scene, { id: visit.id, on }))]),
     eventBy(assessor, at, 'assessment.begin', [inserted('limb_assessment', begun)]),

@@ -34,7 +34,7 @@ const middle = (): Cast => ({
   signIn: signInOf('participant-one'),
   facts: (enrolledOn) => ({
     cohort: 'at-risk', affectedSide: 'left', dominantSide: 'right', ageYears: 54, heightMm: 1622, weightKg: 72.1, surgeryOn: addDays(enrolledOn, -49),
-    surgery: 'Mastectomy', axillaryProcedure: 'Axillary clearance', nodesRemoved: 14, radiotherapy: 'Chest wall or breast, and nodes', systemicTherapy: 'Hormone tablets',
+    surgery: 'mastectomy', axillaryProcedure: 'axillary-dissection', nodesRemoved: 14, radiotherapy: 'regional-nodes', systemicTherapy: 'endocrine',
   }),
   course: courseThrough([[0, 0], [94, 0.014], [177, 0.04], [226, 0.073], [268, 0.05]]),
   breaks: [[9, 3], [27, 5]],
@@ -61,14 +61,14 @@ export function castOf(site: DemoSite): Map<number, Cast> {
 /** Days before today on which the participants of a site were enrolled, by number from 1; the cast keeps its days. */
 export function enrolmentAges(count: number, cast: ReadonlyMap<number, Cast>, jitter: (number: number) => number): number[] {
   const fixed = [...cast].flatMap(([number, { daysIn }]) => (daysIn === undefined ? [] : [[number, daysIn] as const])).toSorted(([a], [b]) => a - b);
-  const posts = [[0, 736] as const, ...fixed, ...(fixed.at(-1)?.[0] === count ? [] : [[count + 1, 2] as const])];
+  const posts = [[0, 752] as const, ...fixed, ...(fixed.at(-1)?.[0] === count ? [] : [[count + 1, 2] as const])];
   return Array.from({ length: count }, (_, index) => {
     const number = index + 1;
     const own = cast.get(number)?.daysIn;
     if (own !== undefined) return own;
     const after = posts.findIndex(([post]) => post > number);
     const [toNumber, to] = posts[after] ?? [count + 1, 2];
-    const [fromNumber, from] = posts[after - 1] ?? [0, 736];
+    const [fromNumber, from] = posts[after - 1] ?? [0, 752];
     const stepDays = (to - from) / (toNumber - fromNumber);
     return Math.round(from + stepDays * (number - fromNumber + jitter(number)));
   });

@@ -1,9 +1,8 @@
 import { addDays, daysBetween, type LocalDate, mondayOf } from '@/instruments/calendar';
-import type { ReportedSign } from '@/instruments/safety/symptom-report';
 import { allowedLoad } from '@/instruments/training/allowed-load';
 import type { ArmState, PastLoad } from '@/instruments/training/define-training-rule';
 import { findExercise, type Equipment, type LoadBasis } from '@/instruments/training/exercises';
-import { massToKg } from '@/instruments/units';
+import { massToKg, roundKg } from '@/instruments/units';
 import { minutesAfter } from './clock';
 import type { Course } from './course';
 import type { Draw } from './draw';
@@ -121,8 +120,7 @@ function train(life: Life, on: LocalDate, week: number): LoggedSession | null {
   const arm: ArmState = armCheck.endsWith('fuller') ? 'changed' : isHeld(life.reports, on) ? 'waiting' : armCheck === 'not sure' ? 'unknown' : 'clear';
   const sets = plan.protocol.exercises.flatMap((exercise, index) => lift(life, { exercise, index, on, week, arm }));
   if (arm === 'changed') {
-    const signs: ReportedSign[] = armCheck === 'clearly fuller' ? ['full', 'heavy', 'visible-swelling'] : draw.pick<ReportedSign[]>([['heavy'], ['full'], ['tight'], ['full', 'tight-wear']]);
-    life.reports.push(makeReport(plan, person, draw, ids, { at: minutesAfter(enteredAt, draw.whole(2, 9)), signs, lastedOverADay: true }));
+    life.reports.push(makeReport(plan, person, draw, ids, { at: minutesAfter(enteredAt, draw.whole(0, 1)), signs: [], armCheck }));
   }
   return {
     id: ids.uuid(), clientKey: ids.uuid(), on, enteredAt, late: plan.clock.at(addDays(on, 1), plan.protocol.lateAfterHours * 60, timeZone) < enteredAt, armCheck, sets,
@@ -155,7 +153,7 @@ function lift(life: Life, { exercise, index, on, week, arm }: { exercise: string
   const isCareless = jump > 0 || draw.chance(habit.careless);
   const wantedKg = jump > 0 ? (allowed.lastWeekKg ?? 0) + jump : wanted(life, { allowed, index, isCareless });
   const load = asTyped(wantedKg, habit.unit, isCareless ? Infinity : Math.max(allowed.upToKg, 0.5));
-  histories.set(exercise, [...past, { on, load: load.loadG / 1000 }]);
+  histories.set(exercise, [...past, { on, load: roundKg(massToKg(load.typed, load.unit)) }]);
   return [{
     exercise, equipment: known.equipment[0] as Equipment, basis: known.basis, ...load,
     repetitions: draw.pick([8, 10, 10, 10, 12]), setCount: week < 4 ? 2 : draw.pick([2, 3, 3]), effort: Math.round(draw.between(2, 9, 4.5, 1.3)), alreadyLifted: isCareless,

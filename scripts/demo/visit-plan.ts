@@ -37,7 +37,7 @@ export function planLeaving(plan: Plan, person: Person, draw: Draw): Leaving | n
   const day = draw.whole(40, 900);
   const grade = draw.weighted<Leaving['grade']>([['stops training', 5], ['no visits', 3], ['no further data', 2]]);
   const reason = draw.pick(leavingReasons);
-  const leaves = draw.chance(0.13);
+  const leaves = draw.chance(0.2);
   const on = addDays(person.enrolledOn, day);
   return leaves && !person.cast && day < 720 && plan.clock.age(on, person.site.timeZone) >= 2 ? { on, grade, reason } : null;
 }
@@ -106,6 +106,6 @@ function nextSlot(plan: Plan, { site }: Person, slots: readonly number[]): Visit
 
 /** An extra visit after a report. */
 export const extraVisit = (ids: Draw, on: LocalDate, minutes: number): PlannedVisit => ({
-  id: ids.uuid(), key: 'extra', name: 'Extra', targetOn: on, opensOn: on, closesOn: on, questionnaires: [], unscheduledReason: 'Symptom report',
+  id: ids.uuid(), key: 'extra', name: 'Extra visit', targetOn: on, opensOn: on, closesOn: addDays(on, 7), questionnaires: [], unscheduledReason: 'Change in the arm reported',
   outcome: { kind: 'done', on, minutes },
 });
