@@ -12,7 +12,7 @@ export function timeOrderByStratum(time: Float64Array, stratum: Codes | undefine
   return Array.from({ length: starts.length - 1 }, (_, s) => byStratum.subarray(starts[s], starts[s + 1])).filter((rows) => rows.length > 0);
 }
 
-/** Number of codes, highest + 1. @throws RangeError on a negative code or a column of another length */
+/** Number of codes, highest + 1. @throws RangeError on a negative code, one far beyond the number of rows, or a column of another length */
 export function countCodes(codes: Codes, n: number, name: string): number {
   requireRange(codes.length === n, `There are ${n} rows but ${codes.length} values of ${name}.`);
   let highest = -1;
@@ -21,6 +21,7 @@ export function countCodes(codes: Codes, n: number, name: string): number {
     if (code < 0) throw new RangeError(`Row ${i} has ${name} ${code}; codes count up from 0.`);
     if (code > highest) highest = code;
   }
+  requireRange(highest <= n + 255, `The highest ${name} is ${highest} for ${n} rows; codes count up from 0 without great gaps.`);
   return highest + 1;
 }
 

@@ -44,7 +44,7 @@ function supportOf(mass: Float64Array): number[] {
 
 /** Brings back the set with the highest score when that is above the bound by more than rounding. */
 function enter(support: number[], mass: Float64Array, score: Float64Array, total: number): number[] {
-  const highest = score.indexOf(Math.max(...score));
+  const highest = score.reduce((best, value, j) => (value > score[best]! ? j : best), 0);
   if (score[highest]! <= total * (1 + 1e-13) || mass[highest]! > 0) return support;
   return [...support, highest].sort((a, b) => a - b);
 }

@@ -6,7 +6,7 @@ import { numberAtRisk } from '@/stats/survival/number-at-risk';
 import { quantileOf } from '@/stats/survival/quantile-of';
 import { rmst } from '@/stats/survival/rmst';
 import { survivalAt } from '@/stats/survival/survival-at';
-import { followUpOf, levelsOf, tableOf } from './follow-up-columns';
+import { columnOf, followUpOf, levelOf, levelsOf, tableOf } from './follow-up-columns';
 import { runTopic, type ReferenceCase } from './reference';
 
 interface Expected {
@@ -20,7 +20,7 @@ const KINDS: readonly LimitKind[] = ['log-log', 'log', 'plain'];
 
 function curvesOf(reference: ReferenceCase): Record<LimitKind, SurvivalCurve> {
   const data = followUpOf(tableOf(reference));
-  return Object.fromEntries(KINDS.map((limits) => [limits, kaplanMeier(data, { limits })])) as Record<LimitKind, SurvivalCurve>;
+  return Object.fromEntries(KINDS.map((limits) => [limits, kaplanMeier(data, { limits, level: levelOf(reference) })])) as Record<LimitKind, SurvivalCurve>;
 }
 
 /** 'log-log' to 'loglog_lower', as the cases name their limits. */
@@ -75,23 +75,17 @@ function chosenTimes(reference: ReferenceCase) {
 
 function restrictedMean(reference: ReferenceCase) {
   const { tau } = reference.expected as Expected;
-  const { estimate, se, lower, upper } = rmst(kaplanMeier(followUpOf(tableOf(reference))), tau);
+  const { estimate, se, lower, upper } = rmst(kaplanMeier(followUpOf(tableOf(reference)), { level: levelOf(reference) }), tau);
   return { tau, rmst: estimate, se, lower, upper };
 }
 
-const groupColumn: readonly [RegExp, string][] = [
-  [/6mp/, 'treat'],
-  [/celltype/, 'celltype'],
-  [/lung/, 'sex'],
-];
-
 function test(reference: ReferenceCase) {
   const table = tableOf(reference);
-  const { levels, codes } = levelsOf(table.text(groupColumn.find(([pattern]) => pattern.test(reference.id))?.[1] ?? 'group'));
-  const result = logRank(
-    { ...followUpOf(table), group: codes, ...(reference.id.includes('stratified') && { stratum: levelsOf(table.text('ph.ecog')).codes }) },
-    { rho: reference.id.startsWith('peto') ? 1 : 0 },
-  );
+  const group = columnOf(reference, 'group', [[/6mp/, 'treat'], [/celltype/, 'celltype'], [/lung/, 'sex'], [/./, 'group']])!;
+  const stratum = columnOf(reference, 'strata', [[/stratified/, 'ph.ecog']]);
+  const { levels, codes } = levelsOf(table.text(group));
+  const rho = typeof reference.params?.rho === 'number' ? reference.params.rho : reference.id.startsWith('peto') ? 1 : 0;
+  const result = logRank({ ...followUpOf(table), group: codes, ...(stratum && { stratum: levelsOf(table.text(stratum)).codes }) }, { rho });
   return {
     groups: levels,
     n: result.groups.map(({ n }) => n),

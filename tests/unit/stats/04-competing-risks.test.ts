@@ -2,7 +2,7 @@ import { cumulativeIncidence, incidenceAt } from '@/stats/survival/cumulative-in
 import { grayTest } from '@/stats/survival/gray';
 import { kaplanMeier } from '@/stats/survival/kaplan-meier';
 import { survivalAt } from '@/stats/survival/survival-at';
-import { entryOf, levelsOf, tableOf, timesOf } from './follow-up-columns';
+import { columnOf, entryOf, levelOf, levelsOf, tableOf, timesOf } from './follow-up-columns';
 import { runTopic, type ReferenceCase, type Table } from './reference';
 
 function competingOf(table: Table) {
@@ -14,7 +14,7 @@ function incidence(reference: ReferenceCase) {
   const { time } = reference.expected as { time: number[] };
   const table = tableOf(reference);
   const data = { ...competingOf(table), ...entryOf(table) };
-  const greenwood = cumulativeIncidence(data);
+  const greenwood = cumulativeIncidence(data, { level: levelOf(reference) });
   const aalen = cumulativeIncidence(data, { variance: 'aalen' });
   const at = time.map((t) => incidenceAt(greenwood, cause, t));
   return {
@@ -31,12 +31,13 @@ function incidence(reference: ReferenceCase) {
 /** Melanoma thickness in three groups, as the case words it: up to 2, over 2 to 5, over 5 mm. */
 function groupOf(reference: ReferenceCase, table: Table): Int32Array {
   if (reference.id.includes('3groups')) return Int32Array.from(table.numbers('thickness'), (mm) => (mm <= 2 ? 0 : mm <= 5 ? 1 : 2));
-  return levelsOf(table.text(reference.id.includes('abo') ? 'abo' : table.names.includes('ulcer') ? 'ulcer' : 'group')).codes;
+  return levelsOf(table.text(columnOf(reference, 'group', [[/abo/, 'abo'], [/melanoma/, 'ulcer'], [/./, 'group']])!)).codes;
 }
 
 function gray(reference: ReferenceCase) {
   const table = tableOf(reference);
-  const data = { ...competingOf(table), group: groupOf(reference, table), ...(reference.id.includes('strata') && { stratum: levelsOf(table.text('sex')).codes }) };
+  const stratum = columnOf(reference, 'strata', [[/strata/, 'sex']]);
+  const data = { ...competingOf(table), group: groupOf(reference, table), ...(stratum && { stratum: levelsOf(table.text(stratum)).codes }) };
   return Object.fromEntries(
     Object.keys(reference.expected as object).map((name) => {
       const { chiSquare, df, p } = grayTest(data, { cause: Number(name.replace('cause', '')) });

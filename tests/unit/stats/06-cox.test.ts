@@ -4,7 +4,7 @@ import type { CoxData } from '@/stats/survival/cox-design';
 import { proportionalHazardsTest, type PhForm, type TimeTransform } from '@/stats/survival/cox-ph-test';
 import type { ChiSquareTest } from '@/stats/survival/log-rank';
 import { lastNotAfter } from '@/stats/survival/times';
-import { followUpOf, levelsOf, tableOf } from './follow-up-columns';
+import { columnOf, followUpOf, levelOf, levelsOf, tableOf } from './follow-up-columns';
 import { runTopic, type ReferenceCase, type Table } from './reference';
 
 interface Expected {
@@ -27,11 +27,11 @@ function indicator(cells: readonly string[], level: string): Float64Array {
   return Float64Array.from(cells, (cell) => (cell === level ? 1 : 0));
 }
 
-function dataOf({ id, ...reference }: ReferenceCase): CoxData {
+function dataOf(reference: ReferenceCase): CoxData {
   const table = tableOf(reference);
   const names = Object.keys((reference.expected as Expected).coef);
-  const stratum = id.includes('lung-strata') ? 'ph.ecog' : id.includes('bladder') ? 'enum' : undefined;
-  const cluster = id.includes('cluster-site') ? 'inst' : id.includes('cluster-id') || id.includes('bladder') ? 'id' : undefined;
+  const stratum = columnOf(reference, 'strata', [[/lung-strata/, 'ph.ecog'], [/bladder/, 'enum']]);
+  const cluster = columnOf(reference, 'cluster', [[/cluster-site/, 'inst'], [/cluster-id|bladder/, 'id']]);
   return {
     ...followUpOf(table),
     x: names.map((name) => (CODED[name] ? CODED[name](table) : table.numbers(name))),
@@ -59,7 +59,7 @@ function fitted(reference: ReferenceCase) {
   const { coef, baseline_cumhaz_x0: baseline, predicted } = reference.expected as Expected;
   const names = Object.keys(coef);
   const data = dataOf(reference);
-  const fit = cox(data, { ties: reference.id.includes('breslow') ? 'breslow' : 'efron', names });
+  const fit = cox(data, { ties: reference.id.includes('breslow') ? 'breslow' : 'efron', names, level: levelOf(reference) });
   const named = (read: (at: CoxFit['coefficients'][number]) => unknown) => Object.fromEntries(fit.coefficients.map((one) => [one.name, read(one)]));
   const [curve] = cumulativeHazard(data, fit, names.map(() => 0));
   const survival = predicted && predictSurvival(data, fit, names.map((name) => predicted.newdata[name]!), predicted.time);

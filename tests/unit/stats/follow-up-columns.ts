@@ -40,3 +40,14 @@ export function levelsOf(cells: readonly string[]): { levels: string[]; codes: I
   const place = new Map(levels.map((level, code) => [level, code]));
   return { levels, codes: Int32Array.from(cells, (cell) => place.get(cell) as number) };
 }
+
+/** Confidence level of a case: `params.conf`, or 0.95. */
+export function levelOf({ params }: Pick<ReferenceCase, 'params'>): number {
+  return typeof params?.conf === 'number' ? params.conf : 0.95;
+}
+
+/** A column that the case names in `params`, or the one known for its id. */
+export function columnOf({ params, id }: Pick<ReferenceCase, 'params' | 'id'>, param: string, known: readonly (readonly [RegExp, string])[]): string | undefined {
+  const named = params?.[param];
+  return typeof named === 'string' ? named : known.find(([pattern]) => pattern.test(id))?.[1];
+}
