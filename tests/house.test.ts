@@ -70,6 +70,7 @@ const floors = [
   ['questionnaires'],
   ['training'],
   ['safety'],
+  ['participants'],
   ['review'],
   ['summary'],
   ['results'],

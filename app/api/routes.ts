@@ -12,6 +12,8 @@ import * as consentsPartsRoute from './consents/[id]/parts/route';
 import * as consentsSignRoute from './consents/[id]/sign/route';
 import * as correctionsRoute from './corrections/route';
 import * as historyRoute from './history/route';
+import * as participantsRoute from './participants/route';
+import * as participantRoute from './participants/[code]/route';
 import * as queriesRoute from './queries/route';
 import * as queriesAnswerRoute from './queries/[id]/answer/route';
 import * as queriesAskAgainRoute from './queries/[id]/ask-again/route';
@@ -33,7 +35,22 @@ import * as visitsRoute from './visits/route';
 import * as visitsAssessmentRoute from './visits/[id]/assessment/route';
 import * as visitsBeginRoute from './visits/[id]/begin/route';
 import * as visitsBookRoute from './visits/[id]/book/route';
+import * as visitsCompleteRoute from './visits/[id]/complete/route';
 import * as visitsMissRoute from './visits/[id]/miss/route';
+import * as armRoute from './arm/route';
+import * as armCheckRoute from './arm/check/route';
+import * as flagsRoute from './flags/route';
+import * as flagsSeenRoute from './flags/[id]/seen/route';
+import * as liftingRoute from './lifting/route';
+import * as questionnairesRoute from './questionnaires/route';
+import * as questionnaireRoute from './questionnaires/[id]/route';
+import * as questionnairesSubmitRoute from './questionnaires/[id]/submit/route';
+import * as symptomsRoute from './symptoms/route';
+import * as symptomRoute from './symptoms/[id]/route';
+import * as symptomsReadRoute from './symptoms/[id]/read/route';
+import * as symptomsReviewRoute from './symptoms/[id]/review/route';
+import * as trainingRoute from './training/route';
+import * as weekRoute from './week/route';
 
 /** Every address of the API. tests/house.test.ts fails when a route.ts is missing here. */
 export const routes: RouteTable = {
@@ -51,6 +68,8 @@ export const routes: RouteTable = {
   '/api/corrections': { POST: correctionsRoute.POST },
   '/api/history': { GET: historyRoute.GET },
   '/api/invitations': { POST: invitationsRoute.POST },
+  '/api/participants': { GET: participantsRoute.GET },
+  '/api/participants/{code}': { GET: participantRoute.GET },
   '/api/queries': { GET: queriesRoute.GET, POST: queriesRoute.POST },
   '/api/queries/close': { POST: queriesCloseRoute.POST },
   '/api/queries/{id}/answer': { POST: queriesAnswerRoute.POST },
@@ -71,5 +90,20 @@ export const routes: RouteTable = {
   '/api/visits/{id}/assessment': { GET: visitsAssessmentRoute.GET, POST: visitsAssessmentRoute.POST },
   '/api/visits/{id}/begin': { POST: visitsBeginRoute.POST },
   '/api/visits/{id}/book': { POST: visitsBookRoute.POST },
+  '/api/visits/{id}/complete': { POST: visitsCompleteRoute.POST },
   '/api/visits/{id}/miss': { POST: visitsMissRoute.POST },
+  '/api/arm': { GET: armRoute.GET },
+  '/api/arm/check': { POST: armCheckRoute.POST },
+  '/api/flags': { GET: flagsRoute.GET },
+  '/api/flags/{id}/seen': { POST: flagsSeenRoute.POST },
+  '/api/lifting': { GET: liftingRoute.GET },
+  '/api/questionnaires': { GET: questionnairesRoute.GET },
+  '/api/questionnaires/{id}': { GET: questionnaireRoute.GET, PUT: questionnaireRoute.PUT },
+  '/api/questionnaires/{id}/submit': { POST: questionnairesSubmitRoute.POST },
+  '/api/symptoms': { GET: symptomsRoute.GET, POST: symptomsRoute.POST },
+  '/api/symptoms/{id}': { GET: symptomRoute.GET },
+  '/api/symptoms/{id}/read': { POST: symptomsReadRoute.POST },
+  '/api/symptoms/{id}/review': { POST: symptomsReviewRoute.POST },
+  '/api/training': { GET: trainingRoute.GET, POST: trainingRoute.POST },
+  '/api/week': { GET: weekRoute.GET },
 };
