@@ -171,14 +171,14 @@ export const statistics = [
     reference: 'Fisher RA. Statistical Methods for Research Workers, 1925',
   }),
   defineStatistic({
-    name: 'pFromInterval',
-    method: 'Standard error and normal p-value read back from a published 95% interval',
-    reference: 'Altman DG, Bland JM. BMJ 2011;343:d2304',
-  }),
-  defineStatistic({
     name: 'personTime',
     method: 'Person-time as whole days summed, over 365.25 days a year',
     reference: 'Rothman KJ, Greenland S, Lash TL. Modern Epidemiology, 3rd ed. 2008, ch. 3',
+  }),
+  defineStatistic({
+    name: 'pFromInterval',
+    method: 'Standard error and normal p-value read back from a published 95% interval',
+    reference: 'Altman DG, Bland JM. BMJ 2011;343:d2304',
   }),
   defineStatistic({
     name: 'proportionalHazardsTest',

@@ -10,64 +10,59 @@ function check(df: number, shift: number): void {
   requireRange(Number.isFinite(shift), `The noncentrality is a finite number, not ${shift}.`);
 }
 
-/** log of the density of log(chi / sqrt df) at w: the scale by which the normal is divided. */
-function logScaleDensity(w: number, df: number, constant: number): number {
-  return constant + (df / 2) * (2 * w - Math.expm1(2 * w));
-}
-
 /**
  * P(T <= t) or P(T > t) for T = (Z + shift) / sqrt(chi-square / df): the
- * normal tail averaged over the scale, by the trapezoid rule in the log of the
- * scale, where the integrand is analytic and falls off at both ends, so that
- * the rule converges geometrically. Either tail is a sum of positive terms
- * and keeps its digits, unlike the alternating series (Lenth 1989, AS 243).
+ * normal tail averaged over the scale, by the trapezoid rule in w, the log of
+ * the scale, where the integrand is analytic and falls off at both ends, so
+ * that the rule converges geometrically. Either tail is a sum of positive
+ * terms and keeps its digits, unlike the alternating series (Lenth 1989, AS 243).
  */
 function tail(t: number, df: number, shift: number, upper: boolean): number {
   if (t === Number.POSITIVE_INFINITY || t === Number.NEGATIVE_INFINITY) return upper === t < 0 ? 1 : 0;
-  const half = df / 2;
-  const constant = 0.5 * Math.log(df / Math.PI) - stirlingError(half);
+  const { peak, width } = shapeOf(t, df, shift, upper);
+  const constant = 0.5 * Math.log(df / Math.PI) - stirlingError(df / 2);
   const log = (w: number): number => {
     const edge = t * Math.exp(w) - shift;
-    return logScaleDensity(w, df, constant) + logNormalSf(upper ? edge : -edge);
+    return constant + (df / 2) * (2 * w - Math.expm1(2 * w)) + logNormalSf(upper ? edge : -edge);
   };
-  const peak = findPeak(log, df);
-  const step = Math.min(0.05, 0.25 / Math.sqrt(df + t * t));
+  const step = width / 8;
   const top = log(peak);
   return Math.exp(top) * step * (1 + oneSide(log, peak, step, top) + oneSide(log, peak, -step, top));
 }
 
 function oneSide(log: (w: number) => number, peak: number, step: number, top: number): number {
   let sum = 0;
-  for (let k = 1; k < 100_000; k++) {
+  for (let k = 1; ; k++) {
     const term = Math.exp(log(peak + k * step) - top);
     sum += term;
-    if (term < 1e-18) return sum;
+    if (!(term > 1e-18)) return sum;
   }
-  return sum;
 }
 
-/** Highest point of the integrand: a coarse grid, then ternary search. */
-function findPeak(log: (w: number) => number, df: number): number {
-  const spread = 40 / Math.sqrt(df);
-  let best = 0;
-  let most = log(0);
-  for (let k = -60; k <= 60; k++) {
-    const w = (k / 60) * Math.min(spread, 20);
-    const value = log(w);
-    if (value > most) {
-      most = value;
-      best = w;
-    }
-  }
-  let low = best - Math.min(spread, 20) / 60;
-  let high = best + Math.min(spread, 20) / 60;
-  for (let round = 0; round < 40; round++) {
-    const a = low + (high - low) / 3;
-    const b = high - (high - low) / 3;
-    if (log(a) < log(b)) low = a;
-    else high = b;
-  }
-  return (low + high) / 2;
+/** Where the integrand is highest, and its width there from the second derivative of its log. */
+function shapeOf(t: number, df: number, shift: number, upper: boolean): { peak: number; width: number } {
+  const sign = upper ? 1 : -1;
+  const slope = (w: number): number => {
+    const along = t * Math.exp(w);
+    return -df * Math.expm1(2 * w) - sign * hazard(sign * (along - shift)) * along;
+  };
+  // The slope is df far to the left and falls without end to the right.
+  let low = 0;
+  let high = 0;
+  for (let reach = 1; slope(low) < 0; reach *= 2) low -= reach;
+  for (let reach = 0.5; slope(high) > 0; reach *= 2) high += reach;
+  const peak = low === high ? low : findRoot(slope, low, high, 1e-6);
+  const along = t * Math.exp(peak);
+  const edge = sign * (along - shift);
+  const own = hazard(edge);
+  const spread = 2 * df * Math.exp(2 * peak);
+  const curvature = spread + own * (own - edge) * along * along + sign * own * along;
+  return { peak, width: 1 / Math.sqrt(Math.max(curvature, spread)) };
+}
+
+/** Normal density over upper tail. */
+function hazard(x: number): number {
+  return Math.exp(-0.5 * x * x - 0.5 * Math.log(2 * Math.PI) - logNormalSf(x));
 }
 
 function quantileTail(p: number, df: number, shift: number, upper: boolean): number {

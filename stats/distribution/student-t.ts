@@ -57,7 +57,7 @@ export const studentT: Continuous<[df: number]> = {
     check(df);
     if (df === Number.POSITIVE_INFINITY) return Math.exp(-0.5 * x * x) / Math.sqrt(2 * Math.PI);
     // The beta weight at 1/2 and df/2, over |x|; at 0 its limit, through a point too near to differ.
-    const at = Math.max(Math.abs(x), 1e-100);
+    const at = Math.max(Math.abs(x), 1e-9);
     const odds = (at / df) * at;
     return betaWeight(df / 2, 0.5, 1 / (1 + odds), odds / (1 + odds)) / at;
   },

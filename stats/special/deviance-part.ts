@@ -6,7 +6,7 @@
 export function deviancePart(x: number, m: number): number {
   if (x === 0) return m;
   const difference = x - m;
-  if (Math.abs(difference) >= 0.3 * (x + m)) return x * Math.log(x / m) - difference;
+  if (!(Math.abs(difference) < 0.3 * (x + m))) return x * Math.log(x / m) - difference;
   const v = difference / (x + m);
   const square = v * v;
   let sum = difference * v;

@@ -3,11 +3,11 @@ import { stirlingError } from './stirling-error';
 const EULER = 0.57721566490153286061;
 const HALF_LOG_TWO_PI = 0.91893853320467274178;
 
-/** zeta(k) - 1 for k = 2..35 by Euler-Maclaurin after ten terms. */
+/** zeta(k) - 1 for k = 2..35 by Euler-Maclaurin after thirty terms. */
 const ZETA_LESS_ONE = Float64Array.from({ length: 36 }, (_, k) => (k < 2 ? 0 : zetaLessOne(k)));
 
 function zetaLessOne(k: number): number {
-  const from = 12;
+  const from = 30;
   const power = from ** -k;
   const step = 1 / (from * from);
   let tail = (from * power) / (k - 1) + power / 2;

@@ -8,6 +8,8 @@ export interface Point {
   readonly params: readonly number[];
   readonly x: number;
   readonly expected: number | string;
+  /** Topic 14: libraries found wrong at the point, with their relative error. */
+  readonly fails_in?: readonly string[];
 }
 
 type Functions = Record<string, ((x: number, ...params: number[]) => number) | undefined>;
