@@ -1,0 +1,23 @@
+import type { Metadata } from 'next';
+import { redirect } from 'next/navigation';
+import { Providers } from '@/components/api/providers';
+import { ConsentReader } from '@/components/consent/consent-reader';
+import { viewScreeningConsent } from '@/lib/consent/view-consent';
+import { loadPage } from '@/lib/web/session';
+
+export const metadata: Metadata = { title: 'Consent' };
+
+/** Outside the staff's shell: while the tablet is with the participant there is nothing else to press. */
+export default async function TabletConsentPage({ params }: { params: Promise<{ id: string }> }) {
+  const { id } = await params;
+  const consent = await loadPage('consent.view', (work) => viewScreeningConsent(work, { screeningId: id }));
+  if (consent?.mode !== 'tablet' || consent.state !== 'reading') redirect(`/screening/${id}`);
+  return (
+    <Providers>
+      <ConsentReader
+        consent={{ id: consent.id, formNumber: consent.formNumber, form: consent.form, sectionsRead: consent.sectionsRead, site: consent.site }}
+        staffHref={`/screening/${id}`}
+      />
+    </Providers>
+  );
+}

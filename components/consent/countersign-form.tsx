@@ -1,0 +1,44 @@
+'use client';
+
+import { useRouter } from 'next/navigation';
+import { useForm } from 'react-hook-form';
+import { countersignInput, staffStatement } from '@/lib/consent/input';
+import { listProblems, placeRefusal } from '../api/form-problems';
+import { rawResolver } from '../api/raw-resolver';
+import { useSend } from '../api/use-send';
+import { Button } from '../ui/button';
+import { Checkbox } from '../ui/checkbox';
+import { ErrorSummary } from '../ui/error-summary';
+import { TextField } from '../ui/text-field';
+import { useToast } from '../ui/toast';
+
+const input = countersignInput.omit({ id: true });
+
+/** The second signature, by the person who took consent. */
+export function CountersignForm({ consentId, version }: { consentId: string; version: number }) {
+  const router = useRouter();
+  const { say } = useToast();
+  const { register, handleSubmit, setError, formState } = useForm<{ agreed: boolean; name: string }>({ resolver: rawResolver(input), defaultValues: { agreed: false, name: '' } });
+  const signing = useSend('POST', `/api/consents/${consentId}/countersign`, { version });
+  const sign = handleSubmit((values) =>
+    signing.mutate(values, {
+      onSuccess: () => {
+        say({ kind: 'fine', word: 'Consent is complete.', text: 'The copy goes to the participant by e-mail.' });
+        router.refresh();
+      },
+      onError: ({ problem }) => placeRefusal(problem, setError, ['agreed', 'name']),
+    }),
+  );
+  return (
+    <form noValidate className="mt-4 grid max-w-xl gap-4" onSubmit={(event) => void sign(event)}>
+      <ErrorSummary problems={listProblems(formState.errors, signing.error?.problem ?? null)} />
+      <Checkbox id="agreed" label={staffStatement} error={formState.errors.agreed?.message} {...register('agreed')} />
+      <TextField id="name" label="Type your full name as your signature" autoComplete="name" error={formState.errors.name?.message} {...register('name')} />
+      <div>
+        <Button kind="primary" type="submit" atWork={signing.isPending && 'Signing'}>
+          Sign second
+        </Button>
+      </div>
+    </form>
+  );
+}
