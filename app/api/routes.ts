@@ -22,6 +22,7 @@ import * as queriesCloseOneRoute from './queries/[id]/close/route';
 import * as queriesRemindRoute from './queries/[id]/remind/route';
 import * as queriesCloseRoute from './queries/close/route';
 import * as invitationsRoute from './invitations/route';
+import * as resultsRoute from './results/route';
 import * as screeningsRoute from './screenings/route';
 import * as screeningRoute from './screenings/[id]/route';
 import * as screeningsAnswersRoute from './screenings/[id]/answers/route';
@@ -77,6 +78,7 @@ export const routes: RouteTable = {
   '/api/queries/{id}/cancel': { POST: queriesCancelRoute.POST },
   '/api/queries/{id}/close': { POST: queriesCloseOneRoute.POST },
   '/api/queries/{id}/remind': { POST: queriesRemindRoute.POST },
+  '/api/results': { GET: resultsRoute.GET },
   '/api/screenings': { GET: screeningsRoute.GET, POST: screeningsRoute.POST },
   '/api/screenings/{id}': { GET: screeningRoute.GET },
   '/api/screenings/{id}/answers': { PUT: screeningsAnswersRoute.PUT },
