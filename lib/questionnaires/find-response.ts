@@ -2,6 +2,7 @@ import { QuestionnaireResponseSchema, type QuestionnaireResponse } from '@/entit
 import { findQuestionnaire } from '@/instruments/questionnaires';
 import type { Questionnaire } from '@/instruments/questionnaires/define-questionnaire';
 import { findOwnRecord, type OwnRecord } from '@/lib/people/find-own-record';
+import { plainDate } from '@/lib/people/plain-date';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
 
@@ -24,9 +25,9 @@ export async function findOwnResponse(work: Work, id: string): Promise<OwnRespon
 /** Answers are taken inside the window only, and until they were submitted. @throws Refusal 'locked' or 'expired'. */
 export function assertOpen({ own, response }: OwnResponse): void {
   if (response.state === 'submitted') throw new Refusal('locked', 'This questionnaire was submitted and is closed. Ask your site to correct it.');
-  if (own.today < response.opensOn) throw new Refusal('conflict', `This questionnaire opens on ${response.opensOn}.`);
+  if (own.today < response.opensOn) throw new Refusal('conflict', `This questionnaire opens on ${plainDate(response.opensOn)}.`);
   if (own.today > response.closesOn || response.state === 'missed')
-    throw new Refusal('expired', `This questionnaire closed on ${response.closesOn}, so answers are no longer taken. You did nothing wrong; the next one comes with your next visit.`);
+    throw new Refusal('expired', `This questionnaire closed on ${plainDate(response.closesOn)}, so answers are no longer taken. You did nothing wrong; the next one comes with your next visit.`);
 }
 
 /** Whether two sets of answers are the same, in any order. */

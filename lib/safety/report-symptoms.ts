@@ -1,5 +1,6 @@
 import { judgeSymptomReport } from '@/instruments/safety/judge-symptom-report';
 import { findOwnRecord } from '@/lib/people/find-own-record';
+import { plainDate } from '@/lib/people/plain-date';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
 import type { ReportSymptomsInput } from './input';
@@ -12,7 +13,7 @@ export async function reportSymptoms(work: Work, { clientKey, noticedOn, note, .
   if (sent) return toSentReport(sent, own);
   if (own.participant.leftGrade === 'no further data')
     throw new Refusal('locked', `You asked that nothing more is recorded. If you feel in danger call your local emergency number; ${own.site.name} is on ${own.site.phone}.`);
-  if (noticedOn > own.today) throw new Refusal('invalid', `${noticedOn} has not come yet. Give the day on which you noticed it.`, 'noticedOn');
+  if (noticedOn > own.today) throw new Refusal('invalid', `${plainDate(noticedOn)} has not come yet. Give the day on which you noticed it.`, 'noticedOn');
   const verdict = judgeSymptomReport(answers);
   if (!verdict) throw new Refusal('invalid', 'Choose at least one thing that you notice, or say that you are sore.', 'signs');
   return toSentReport(await keepReport(work, own, { verdict, answers, noticedOn, note: note || null, clientKey }), own);

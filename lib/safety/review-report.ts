@@ -1,4 +1,5 @@
 import { reviewReport as review } from '@/entities/symptom-report';
+import { plainDate } from '@/lib/people/plain-date';
 import { addUnscheduledVisit } from '@/lib/schedule/add-unscheduled-visit';
 import { timeZoneOf } from '@/lib/schedule/view-visit';
 import { Refusal } from '@/lib/work/refusal';
@@ -19,7 +20,7 @@ export async function reviewReport(work: Work, { id, outcome, note, visitOn }: R
   review(report, { outcome, note, by: work.actor.accountId, at: work.now });
   if (outcome === 'unscheduled visit') {
     if (!visitOn) throw new Refusal('invalid', 'Give the day of the extra visit.', 'visitOn');
-    if (visitOn < localDate(work.now, await timeZoneOf(work, report.siteId))) throw new Refusal('invalid', `${visitOn} has passed. Give a day from today on.`, 'visitOn');
+    if (visitOn < localDate(work.now, await timeZoneOf(work, report.siteId))) throw new Refusal('invalid', `${plainDate(visitOn)} has passed. Give a day from today on.`, 'visitOn');
     await addUnscheduledVisit(work, { participantId: report.participantId, on: visitOn, why: `Symptom report: ${note}`.slice(0, 300) });
   }
   await settleHold(work, report.participantId);

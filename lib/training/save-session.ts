@@ -6,6 +6,7 @@ import type { TrainingRuleCode } from '@/instruments/training/define-training-ru
 import { findExercise } from '@/instruments/training/exercises';
 import { massToKg } from '@/instruments/units';
 import type { OwnRecord } from '@/lib/people/find-own-record';
+import { plainDate } from '@/lib/people/plain-date';
 import { Refusal } from '@/lib/work/refusal';
 import { momentAt, secondsAfter } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
@@ -35,8 +36,8 @@ async function findSaved(work: Work, own: OwnRecord, input: LogSessionInput): Pr
 }
 
 function refuseDay({ participant, today }: OwnRecord, on: string): void {
-  if (on > today) throw new Refusal('invalid', `${on} has not come yet. A session is logged once it was done.`, 'on');
-  if (on < participant.enrolledOn) throw new Refusal('invalid', `${on} is before you joined the study on ${participant.enrolledOn}.`, 'on');
+  if (on > today) throw new Refusal('invalid', `${plainDate(on)} has not come yet. A session is logged once it was done.`, 'on');
+  if (on < participant.enrolledOn) throw new Refusal('invalid', `${plainDate(on)} is before you joined the study on ${plainDate(participant.enrolledOn)}.`, 'on');
 }
 
 function refuseSet({ exercise, equipment, typed, unit }: LoggedSetInput, index: number): void {

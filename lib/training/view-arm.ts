@@ -17,7 +17,7 @@ export interface ArmView {
   readonly thresholdPercent: number;
 }
 
-/** RVC of the primary definition's line. Practice of the study's definitions D1 and D2: 10 %. */
+/** The safety table's line for a clinician's review (S3): RVC of 10 % or more. */
 const highWaterPercent = 10;
 
 export async function viewArm(work: Work): Promise<ArmView> {
