@@ -1,4 +1,5 @@
 import { requireRange } from '../result';
+import { orderOf } from '../survival/sort';
 import type { ResampledStatistic } from './resample';
 
 /** Mean of the drawn values. */
@@ -18,7 +19,7 @@ export function resampledMean(values: ArrayLike<number>): ResampledStatistic {
 /** Median of the drawn values (the mean of the middle two for an even number); one sort for all resamples. */
 export function resampledMedian(values: ArrayLike<number>): ResampledStatistic {
   const column = finite(values);
-  const order = Int32Array.from(column.keys()).sort((i, j) => column[i]! - column[j]!);
+  const order = orderOf(column);
   return (counts) => {
     let drawn = 0;
     for (let row = 0; row < counts.length; row++) drawn += counts[row]!;
@@ -46,14 +47,18 @@ export function resampledRmst(time: ArrayLike<number>, event: ArrayLike<number>,
   requireRange(tau > 0 && tau < Infinity, `A restricted mean needs a finite time above 0, not ${tau}.`);
   requireRange(time.length === event.length, `There are ${time.length} times but ${event.length} event codes.`);
   const column = finite(time);
-  const order = Int32Array.from(column.keys()).sort((i, j) => column[i]! - column[j]!);
-  const times = Float64Array.from(order, (row) => column[row]!);
-  const events = Uint8Array.from(order, (row) => event[row]!);
+  const order = orderOf(column);
+  const times = new Float64Array(order.length);
+  const events = new Uint8Array(order.length);
+  for (let k = 0; k < order.length; k++) {
+    times[k] = column[order[k]!]!;
+    events[k] = event[order[k]!]!;
+  }
   requireRange(times.length === 0 || times[0]! >= 0, 'Times are not negative.');
   return (counts) => areaTo(tau, times, events, order, counts);
 }
 
-function areaTo(tau: number, times: Float64Array, events: Uint8Array, order: Int32Array, counts: Int32Array): number {
+function areaTo(tau: number, times: Float64Array, events: Uint8Array, order: Uint32Array, counts: Int32Array): number {
   let atRisk = 0;
   for (let row = 0; row < counts.length; row++) atRisk += counts[row]!;
   if (atRisk === 0) return NaN;
@@ -82,7 +87,7 @@ function areaTo(tau: number, times: Float64Array, events: Uint8Array, order: Int
 }
 
 function finite(values: ArrayLike<number>): Float64Array {
-  const column = Float64Array.from(values);
+  const column = values instanceof Float64Array ? values : Float64Array.from(values);
   requireRange(column.every(Number.isFinite), 'A bootstrap works on finite values; leave missing ones out first.');
   return column;
 }

@@ -14,6 +14,8 @@ export interface Family {
   score(y: number, eta: number, m: number): number;
   /** Log likelihood of a row, constants included. */
   logLikelihood(y: number, eta: number, m: number): number;
+  /** Minus the log likelihood without what does not depend on eta: what a search compares. */
+  loss(y: number, eta: number, m: number): number;
   /** Twice the log likelihood lost against the row's own mean. */
   deviance(y: number, eta: number, m: number): number;
   /** Variance of y. */
@@ -51,6 +53,7 @@ export const poissonFamily: Family = {
   weight: (eta) => Math.exp(eta),
   score: (y, eta) => y - Math.exp(eta),
   logLikelihood: (y, eta) => y * eta - Math.exp(eta) - logFactorial(y),
+  loss: (y, eta) => Math.exp(eta) - y * eta,
   deviance: (y, eta) => 2 * ((y > 0 ? y * (Math.log(y) - eta) : 0) - (y - Math.exp(eta))),
   variance: (eta) => Math.exp(eta),
   escape: (y) => (y === 0 ? -1 : 0),
@@ -70,6 +73,7 @@ export const binomialFamily: Family = {
   // y - m p, written so that neither tail is 1 minus something near 1.
   score: (y, eta, m) => y * logistic(-eta) - (m - y) * logistic(eta),
   logLikelihood: (y, eta, m) => -y * softplus(-eta) - (m - y) * softplus(eta) + logFactorial(m) - logFactorial(y) - logFactorial(m - y),
+  loss: (y, eta, m) => y * softplus(-eta) + (m - y) * softplus(eta),
   deviance: (y, eta, m) =>
     2 * ((y > 0 ? y * (Math.log(y / m) + softplus(-eta)) : 0) + (y < m ? (m - y) * (Math.log((m - y) / m) + softplus(eta)) : 0)),
   variance: (eta, m) => m * logistic(eta) * logistic(-eta),
@@ -120,6 +124,7 @@ export function negativeBinomialFamily(theta: number): Family {
     weight: (eta) => 1 / (Math.exp(-eta) + 1 / theta),
     score: (y, eta) => (y - Math.exp(eta)) / (1 + Math.exp(eta) / theta),
     logLikelihood: (y, eta) => logRising(theta, y) - logFactorial(y) + core(y, eta),
+    loss: (y, eta) => (y + theta) * Math.log1p(Math.exp(eta) / theta) - y * eta,
     deviance: (y, eta) => 2 * ((y > 0 ? core(y, Math.log(y)) : 0) - core(y, eta)),
     variance: (eta) => Math.exp(eta) + Math.exp(2 * eta) / theta,
     escape: (y) => (y === 0 ? -1 : 0),

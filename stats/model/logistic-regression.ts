@@ -16,7 +16,7 @@ export function logisticRegression(input: GlmInput): Glm | Refusal {
   requireRange(input.exposure === undefined, 'A logistic regression has no exposure; use trials for grouped outcomes.');
   for (let row = 0; input.trials === undefined && row < input.y.length; row++) {
     const y = input.y[row]!;
-    requireRange(y === 0 || y === 1 || Number.isNaN(y), `An outcome is 0 or 1, not ${y} (row ${row}).`);
+    if (!(y === 0 || y === 1 || Number.isNaN(y))) throw new RangeError(`An outcome is 0 or 1, not ${y} (row ${row}).`);
   }
   return fitGlm(input, binomialFamily, input.trials === undefined ? 'Logistic regression' : 'Logistic regression of grouped outcomes');
 }

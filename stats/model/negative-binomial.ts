@@ -57,7 +57,7 @@ export function negativeBinomial(input: GlmInput): NegativeBinomial | Refusal {
     const next = bestTheta(data, fit, theta);
     if (next > LARGEST) return edge();
     fit = irls(data, negativeBinomialFamily(next), fit.gamma);
-    settled = Math.abs(next - theta) <= 1e-12 * theta;
+    settled = Math.abs(next - theta) <= 1e-11 * theta;
     theta = next;
   }
   const { information } = thetaDerivatives(data, fit, theta);
@@ -110,7 +110,7 @@ function bestTheta(data: GlmData, fit: IrlsFit, start: number): number {
     const move = second < 0 ? -first / second : Math.sign(first);
     const bounded = Math.max(-1.6, Math.min(1.6, move));
     theta *= Math.exp(bounded);
-    if (Math.abs(bounded) < 1e-13 || theta > LARGEST) break;
+    if (Math.abs(bounded) < 1e-9 || theta > LARGEST) break;
   }
   return theta;
 }

@@ -12,14 +12,38 @@ import type { GlmData, IrlsFit } from './irls';
  */
 export function sandwich({ design, y, m }: GlmData, fit: IrlsFit, family: Family, cluster: Int32Array | null): Float64Array {
   const { n, p, basis } = design;
-  const groups = cluster === null ? n : 1 + cluster.reduce((most, g) => Math.max(most, g), -1);
+  if (cluster === null) return backTransformCovariance(design, rowByRow({ design, y, m }, fit, family));
+  const groups = 1 + cluster.reduce((most, g) => Math.max(most, g), -1);
   const scores = new Float64Array(groups * p);
   for (let row = 0; row < n; row++) {
     const s = family.score(y[row]!, fit.eta[row]!, m[row]!);
-    const at = (cluster === null ? row : cluster[row]!) * p;
+    const at = cluster[row]! * p;
     for (let j = 0; j < p; j++) scores[at + j]! += s * basis[j]![row]!;
   }
   return backTransformCovariance(design, filled(fit.covariance, scores, p));
+}
+
+/** HC0: the middle of the sandwich is Q' diag(s^2) Q, so no row's score has to be kept. */
+function rowByRow({ design, y, m }: Pick<GlmData, 'design' | 'y' | 'm'>, fit: IrlsFit, family: Family): Float64Array {
+  const { n, p, basis } = design;
+  const squares = new Float64Array(n);
+  for (let row = 0; row < n; row++) squares[row] = family.score(y[row]!, fit.eta[row]!, m[row]!) ** 2;
+  const middle = new Float64Array(p * p);
+  for (let j = 0; j < p; j++) {
+    for (let k = 0; k <= j; k++) {
+      const [a, b] = [basis[j]!, basis[k]!];
+      let sum = 0;
+      for (let row = 0; row < n; row++) sum += a[row]! * squares[row]! * b[row]!;
+      middle[j * p + k] = middle[k * p + j] = sum;
+    }
+  }
+  return product(product(fit.covariance, middle, p), fit.covariance, p);
+}
+
+function product(a: Float64Array, b: Float64Array, p: number): Float64Array {
+  const out = new Float64Array(p * p);
+  for (let i = 0; i < p; i++) for (let j = 0; j < p; j++) for (let k = 0; k < p; k++) out[i * p + j]! += a[i * p + k]! * b[k * p + j]!;
+  return out;
 }
 
 /** bread x (sum of score score') x bread, row-major. */

@@ -30,7 +30,7 @@ export function clusteredProportion(yes: ArrayLike<number>, clusters: ArrayLike<
   let events = 0;
   for (const row of usable.rows) {
     const value = yes[row]!;
-    requireRange(value === 0 || value === 1, `A row counts (1) or not (0); row ${row} holds ${value}.`);
+    if (!(value === 0 || value === 1)) throw new RangeError(`A row counts (1) or not (0); row ${row} holds ${value}.`);
     const total = totals.get(clusters[row]!) ?? { yes: 0, rows: 0 };
     total.yes += value;
     total.rows += 1;

@@ -37,7 +37,7 @@ export function loadOnset(
   // Two passes: the last week below can only be told once the first week reached is known.
   for (const row of usable.rows) {
     const week = weeks[row]!;
-    requireRange(week >= 0, `A week is at or above 0, not ${week} (row ${row}).`);
+    if (!(week >= 0)) throw new RangeError(`A week is at or above 0, not ${week} (row ${row}).`);
     const entry = seen.get(participants[row]!) ?? { reached: Infinity, last: -Infinity, below: 0 };
     if (loads[row]! >= target * (1 - SLACK)) entry.reached = Math.min(entry.reached, week);
     entry.last = Math.max(entry.last, week);

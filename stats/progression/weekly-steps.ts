@@ -27,8 +27,8 @@ export function weeklySteps(participants: ArrayLike<number>, weeks: ArrayLike<nu
   const from: number[] = [];
   for (let k = 0; k < order.length; k++) {
     const row = order[k]!;
-    requireRange(loads[row]! > 0, `A load is above zero, not ${loads[row]} (row ${row}).`);
-    requireRange(Number.isInteger(weeks[row]), `A week is a whole number, not ${weeks[row]} (row ${row}).`);
+    if (!(loads[row]! > 0)) throw new RangeError(`A load is above zero, not ${loads[row]} (row ${row}).`);
+    if (!Number.isInteger(weeks[row])) throw new RangeError(`A week is a whole number, not ${weeks[row]} (row ${row}).`);
     const next = order[k + 1];
     if (next === undefined || participants[next] !== participants[row]) continue;
     const gap = weeks[next]! - weeks[row]!;
