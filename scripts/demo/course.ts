@@ -21,7 +21,7 @@ function rise({ peak, onsetDay, rampDays, passes, settlesAt }: { peak: number; o
  */
 function risk({ axillaryProcedure, radiotherapy, weightKg, heightMm }: Facts): number {
   const bmi = weightKg / (heightMm / 1000) ** 2;
-  const odds = 0.085 * (axillaryProcedure === 'axillary-dissection' ? 3.4 : 1) * (bmi >= 30 ? 1.6 : 1) * (radiotherapy === 'regional-nodes' ? 1.7 : 1);
+  const odds = 0.05 * (axillaryProcedure === 'axillary-dissection' ? 3.4 : 1) * (bmi >= 30 ? 1.6 : 1) * (radiotherapy === 'regional-nodes' ? 1.7 : 1);
   return odds / (1 + odds);
 }
 

@@ -59,7 +59,7 @@ export function questionEvents(input: { plan: Plan; person: Person; visits: read
       if (!questionnaire) throw new Error(`The protocol asks for ${key}, which no questionnaire answers to.`);
       const due = { id: ids.uuid(), visit, questionnaire };
       const stopped = leaving?.grade === 'no further data' && leaving.on < visit.closesOn;
-      const done = respond({ plan, person, draw, due, leaning, course, stopped });
+      const done = respond({ plan, person, draw, due, leaning, course, stopped, joinedAt: minutesAfter(enrolledAt, 190) });
       answered.push({ id: due.id, instrument: key, submittedAt: done.submittedAt });
       return [eventBy(person.site.coordinator, enrolledAt, 'participant.enrol', [inserted('questionnaire_response', laidOut(person, due))]), ...done.events];
     }),
@@ -74,15 +74,16 @@ const laidOut = (person: Person, { id, visit, questionnaire }: Due) => ({
   due_on: visit.targetOn, opens_on: visit.opensOn, closes_on: visit.closesOn, state: 'due',
 });
 
-function respond({ plan, person, draw, due, leaning, course, stopped }: {
-  plan: Plan; person: Person; draw: Draw; due: Due; leaning: Leaning; course: Course; stopped: boolean;
+function respond({ plan, person, draw, due, leaning, course, stopped, joinedAt }: {
+  joinedAt: Date; plan: Plan; person: Person; draw: Draw; due: Due; leaning: Leaning; course: Course; stopped: boolean;
 }): { events: DemoEvent[]; submittedAt: Date | null } {
   const { visit, questionnaire, id } = due;
   const { timeZone } = person.site;
   const on = answerDay(draw, visit);
   const change = course((Date.parse(on) - Date.parse(person.enrolledOn)) / 86_400_000);
   const { answers, leftOut } = answer(draw, questionnaire, leaning, change);
-  const startedAt = plan.clock.at(on, draw.whole(430, 1310), timeZone);
+  const wished = plan.clock.at(on, draw.whole(430, 1310), timeZone);
+  const startedAt = wished < joinedAt ? minutesAfter(joinedAt, 25) : wished;
   const submittedAt = minutesAfter(startedAt, questionnaire.minutes * draw.uniform(0.6, 1.8));
   const fate = draw.uniform(0, 1);
   const unfinished = draw.chance(0.03);

@@ -33,7 +33,7 @@ const middle = (): Cast => ({
   daysIn: 268,
   signIn: signInOf('participant-one'),
   facts: (enrolledOn) => ({
-    cohort: 'at-risk', affectedSide: 'left', dominantSide: 'right', ageYears: 54, heightMm: 1622, weightKg: 72.1, surgeryOn: addDays(enrolledOn, -49),
+    cohort: 'at-risk', affectedSide: 'left', dominantSide: 'right', ageYears: 54, heightMm: 1612, weightKg: 66.4, surgeryOn: addDays(enrolledOn, -49),
     surgery: 'mastectomy', axillaryProcedure: 'axillary-dissection', nodesRemoved: 14, radiotherapy: 'regional-nodes', systemicTherapy: 'endocrine',
   }),
   course: courseThrough([[0, 0], [94, 0.014], [177, 0.04], [226, 0.073], [268, 0.05]]),

@@ -77,7 +77,8 @@ interface Life {
 /** Trains from the baseline up to `until` (not after), adding to `reports` what the arm check brings up. */
 export function liveTraining(input: Pick<Life, 'plan' | 'person' | 'ids' | 'course' | 'assessedOn' | 'reports'> & { from: LocalDate; until: LocalDate }): LoggedSession[] {
   const draw = input.person.draw('training');
-  const life: Life = { ...input, draw, habit: inventHabit(draw), histories: new Map() };
+  const habit = inventHabit(draw);
+  const life: Life = { ...input, draw, habit: input.person.cast ? { ...habit, careless: 0, stopsAfterWeeks: 500, unit: 'kg' } : habit, histories: new Map() };
   const firstMonday = mondayOf(addDays(input.from, 4));
   const weeks = Math.min(Math.floor(daysBetween({ from: firstMonday, to: input.until }) / 7) + 1, input.plan.logWeeks, life.habit.stopsAfterWeeks);
   const sessions: LoggedSession[] = [];
