@@ -50,6 +50,7 @@ import * as symptomsRoute from './symptoms/route';
 import * as symptomRoute from './symptoms/[id]/route';
 import * as symptomsReadRoute from './symptoms/[id]/read/route';
 import * as symptomsReviewRoute from './symptoms/[id]/review/route';
+import * as todayRoute from './today/route';
 import * as trainingRoute from './training/route';
 import * as weekRoute from './week/route';
 
@@ -106,6 +107,7 @@ export const routes: RouteTable = {
   '/api/symptoms/{id}': { GET: symptomRoute.GET },
   '/api/symptoms/{id}/read': { POST: symptomsReadRoute.POST },
   '/api/symptoms/{id}/review': { POST: symptomsReviewRoute.POST },
+  '/api/today': { GET: todayRoute.GET },
   '/api/training': { GET: trainingRoute.GET, POST: trainingRoute.POST },
   '/api/week': { GET: weekRoute.GET },
 };

@@ -14,11 +14,12 @@ export const saveTrialInput = z.strictObject({
 });
 export type SaveTrialInput = z.output<typeof saveTrialInput>;
 
-export const positions = ['supported, 90° forward', 'hanging', 'lying, at the side'] as const;
+/** Ways of holding the arms beside the protocol's own; one who cannot hold them so is measured another way, and the form says which. */
+export const otherPositions = ['supported, 90° forward', 'hanging', 'lying, at the side'] as const;
 
 export const saveCircumstancesInput = z.strictObject({
   id: z.uuid(),
-  position: z.enum(positions).nullable(),
+  position: z.string().trim().min(3, 'Say how the arms were held.').max(80, 'Use at most 80 characters.').nullable(),
   sleeveWorn: z.boolean().nullable(),
   hoursSinceTraining: z.int().min(0).max(999, 'Give the hours as a number up to 999.').nullable(),
   bodyWeightG: z.int().min(30_000, 'Body weight under 30 kg cannot be right.').max(250_000, 'Body weight over 250 kg cannot be right.').nullable(),

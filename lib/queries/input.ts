@@ -10,7 +10,7 @@ export const fieldTargetInput = z.strictObject({
 });
 
 /** A query asks; it never names the value it expects (it would lead the answer). */
-const leads = /\b(change|correct|alter|set)\b[^.?!]{0,20}\bto\b\s*\d/i;
+const leads = /\b(chang|correct|alter|set)\w*\b[^.?!]{0,20}\bto\b\s*\d/i;
 
 export const raiseQueryInput = z.strictObject({
   target: fieldTargetInput,

@@ -1,5 +1,6 @@
 import type { FieldTarget } from '@/lib/queries/targets';
 import { findTarget } from '@/lib/queries/targets';
+import { Refusal } from '@/lib/work/refusal';
 import { VerificationSchema } from '@/entities/verification';
 import type { Work } from '@/lib/work/work';
 
@@ -12,11 +13,21 @@ export interface MarkView {
   readonly at: string;
 }
 
-/** A monitor has seen the values at source. A mark stands on the value and falls, in the data base, when the value changes. */
-export async function markVerified(work: Work, { targets }: { targets: readonly FieldTarget[] }): Promise<{ marked: number }> {
+/** A value as the monitor had it on the screen. */
+export interface SeenValue extends FieldTarget {
+  readonly value: unknown;
+}
+
+/**
+ * A monitor has seen the values at source. A mark stands on the value and falls, in the data base, when the value changes.
+ * @throws Refusal 'stale' when a value is no longer the one that was on the screen.
+ */
+export async function markVerified(work: Work, { targets }: { targets: readonly SeenValue[] }): Promise<{ marked: number }> {
   let marked = 0;
   for (const target of targets) {
     const found = await findTarget(work, target);
+    if (JSON.stringify(found.value) !== JSON.stringify(target.value))
+      throw new Refusal('stale', `${found.label} changed since this page was loaded. Load it again, then look at the source.`);
     const standing = await work.em.findOne(VerificationSchema, { targetId: target.id, field: target.field, fellAt: null });
     if (standing) continue;
     work.em.create(VerificationSchema, {

@@ -4,6 +4,7 @@ import { z } from 'zod';
 const why = (sentence: string) => z.string().trim().min(3, sentence).max(300, 'Use at most 300 characters.');
 
 export const beginVisitInput = z.strictObject({ id: z.uuid() });
+export const completeVisitInput = z.strictObject({ id: z.uuid() });
 export const bookVisitInput = z.strictObject({
   id: z.uuid(),
   on: z.iso.date('Give the day of the appointment.'),

@@ -78,7 +78,7 @@ describe('a limb assessment', () => {
     const who = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
     const saved = await complete(await measure(who, 'baseline', { left: vol03, right: vol03 }));
     const target = { table: 'limb_assessment', id: saved.id, field: 'body_weight_g' } as const;
-    await withWork(monitor, 'verification.mark', (work) => markVerified(work, { targets: [target] }));
+    await withWork(monitor, 'verification.mark', (work) => markVerified(work, { targets: [{ ...target, value: 71_400 }] }));
     const marks = () => withWork(monitor, 'visit.view', (work) => marksOfVisit(work, saved.visitId));
     expect(await marks()).toHaveLength(1);
     const correction = { target, value: 74_100, reason: 'Digits changed places when copied.' };
