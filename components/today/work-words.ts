@@ -113,7 +113,7 @@ function reportWords(item: ReportWork, may: WorkMay): WorkWords {
 }
 
 function consentWords(item: ConsentWork, may: WorkMay, now: string): WorkWords {
-  const { code, screeningId, signedAt, mode, timeZone, today } = item;
+  const { screeningId, signedAt, mode, timeZone, today } = item;
   return {
     when: 'Today',
     whenDetail: `signed ${formatAge(new Date(signedAt), new Date(now))}`,
