@@ -5,21 +5,12 @@
  * function's own.
  */
 
-export interface Statistic {
-  /** The exported function's name. */
-  readonly name: string;
-  /** The method as a reader would cite it. */
-  readonly method: string;
-  /** Where the method is published. */
-  readonly reference: string;
-}
+import { defineStatistic, type Statistic } from './define-statistic';
+import { modelStatistics } from './registry-models';
 
-/** Keeps the name literal, so that `methodOf` knows the names there are. */
-export function defineStatistic<const S extends Statistic>(statistic: S): S {
-  return statistic;
-}
+export { defineStatistic, type Statistic };
 
-export const statistics = [
+const comparisons = [
   defineStatistic({
     name: 'breslowDayTest',
     method: 'Breslow-Day test of equal odds ratios, with Tarone’s correction',
@@ -242,7 +233,11 @@ export const statistics = [
   }),
 ] as const;
 
-export type StatisticName = (typeof statistics)[number]['name'];
+type Registered = (typeof comparisons)[number] | (typeof modelStatistics)[number];
+
+export const statistics: readonly Registered[] = [...comparisons, ...modelStatistics].sort((a, b) => (a.name.toLowerCase() < b.name.toLowerCase() ? -1 : 1));
+
+export type StatisticName = Registered['name'];
 
 const methods: ReadonlyMap<string, string> = new Map(statistics.map(({ name, method }) => [name, method]));
 

@@ -1,6 +1,7 @@
 import { bootstrapLimits } from '@/stats/bootstrap/bootstrap-limits';
 import { observed } from '@/stats/bootstrap/resample';
 import { drawingOf, runRange, statisticOf, type BootstrapTask } from '@/stats/bootstrap/task';
+import type { Refusal } from '@/stats/model/fit';
 import { mixedModel } from '@/stats/model/mixed-model';
 import { negativeBinomial } from '@/stats/model/negative-binomial';
 import { poissonRegression } from '@/stats/model/poisson-regression';
@@ -66,7 +67,7 @@ function countTask(name: string, against: string, run: (input: Parameters<typeof
   };
 }
 
-function fitted<T extends { fitted: true }>(answer: T | { readonly fitted: false; readonly reason: string }): T {
+function fitted<T extends { fitted: true }>(answer: T | Refusal): T {
   if (!answer.fitted) throw new Error(answer.reason);
   return answer;
 }

@@ -1,3 +1,4 @@
+import { methodOf } from '../registry';
 import { requireRange, type Provenance } from '../result';
 
 export interface VisitCompleteness {
@@ -50,7 +51,7 @@ export function missingByVisit(subjects: ArrayLike<number>, visits: ArrayLike<nu
   });
   const monotone = people.filter((person) => !person.subarray(0, person.lastIndexOf(1) + 1).includes(0)).length;
   return {
-    method: 'Completeness by visit; drop-out only (monotone) or intermittent by subject',
+    method: methodOf('missingByVisit'),
     n: expected,
     leftOut: [],
     visits: byVisit,

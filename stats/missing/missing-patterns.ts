@@ -1,3 +1,4 @@
+import { methodOf } from '../registry';
 import { requireRange, type Provenance } from '../result';
 
 /** Which columns are missing together. */
@@ -33,5 +34,5 @@ export function missingPatterns(columns: Readonly<Record<string, ArrayLike<numbe
   const patterns = [...counts]
     .map(([pattern, count]) => ({ pattern, count }))
     .sort((a, b) => b.count - a.count || (a.pattern < b.pattern ? -1 : 1));
-  return { method: 'Counts of missing values by column and pattern', n, leftOut: [], missing, completeRows: counts.get('0'.repeat(named.length)) ?? 0, patterns };
+  return { method: methodOf('missingPatterns'), n, leftOut: [], missing, completeRows: counts.get('0'.repeat(named.length)) ?? 0, patterns };
 }

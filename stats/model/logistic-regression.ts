@@ -1,3 +1,4 @@
+import { methodOf } from '../registry';
 import { requireRange } from '../result';
 import type { Refusal } from './fit';
 import { fitGlm, type Glm, type GlmInput } from './glm';
@@ -18,5 +19,5 @@ export function logisticRegression(input: GlmInput): Glm | Refusal {
     const y = input.y[row]!;
     if (!(y === 0 || y === 1 || Number.isNaN(y))) throw new RangeError(`An outcome is 0 or 1, not ${y} (row ${row}).`);
   }
-  return fitGlm(input, binomialFamily, input.trials === undefined ? 'Logistic regression' : 'Logistic regression of grouped outcomes');
+  return fitGlm(input, binomialFamily, methodOf('logisticRegression'));
 }

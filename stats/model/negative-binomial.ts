@@ -1,3 +1,4 @@
+import { methodOf } from '../registry';
 import type { Refusal } from './fit';
 import { prepare, refusal, report, type Glm, type GlmInput } from './glm';
 import { digammaRise, negativeBinomialFamily, poissonFamily, trigammaFall } from './glm-family';
@@ -19,7 +20,7 @@ export interface NegativeBinomial extends Glm {
   readonly notes: readonly string[];
 }
 
-const METHOD = 'Negative binomial regression (NB2), log link, shape by maximum likelihood';
+const METHOD = methodOf('negativeBinomial');
 const MAX_ROUNDS = 200;
 /** Beyond this shape the variance is Poisson's to the last digit of any count that occurs. */
 const LARGEST = 1e10;

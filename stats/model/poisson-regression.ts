@@ -1,3 +1,4 @@
+import { methodOf } from '../registry';
 import type { Refusal } from './fit';
 import { fitGlm, type Glm, type GlmInput } from './glm';
 import { poissonFamily } from './glm-family';
@@ -11,5 +12,5 @@ import { poissonFamily } from './glm-family';
  * @throws RangeError for counts that are not whole, an exposure that is not above 0 or collinear columns.
  */
 export function poissonRegression(input: GlmInput): Glm | Refusal {
-  return fitGlm(input, poissonFamily, 'Poisson regression, log link');
+  return fitGlm(input, poissonFamily, methodOf('poissonRegression'));
 }

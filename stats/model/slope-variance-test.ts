@@ -1,4 +1,5 @@
 import { chiSquare } from '../distributions';
+import { methodOf } from '../registry';
 import type { MixedModel } from './mixed-model';
 import { requireRange } from '../result';
 
@@ -27,5 +28,5 @@ export function slopeVarianceTest(intercept: MixedModel, slope: MixedModel): Slo
   requireRange(intercept.covarianceRandom.length === 1 && slope.covarianceRandom.length === 2, 'The first fit has a random intercept only, the second a slope as well.');
   const statistic = Math.max(0, intercept.deviance - slope.deviance);
   const pNaive = chiSquare.sf(statistic, 2);
-  return { method: 'Likelihood ratio, 50:50 mixture of chi-square on 1 and 2 df', statistic, pNaive, pMixture: (chiSquare.sf(statistic, 1) + pNaive) / 2 };
+  return { method: methodOf('slopeVarianceTest'), statistic, pNaive, pMixture: (chiSquare.sf(statistic, 1) + pNaive) / 2 };
 }

@@ -1,6 +1,7 @@
 import { studentT } from '../distributions';
 import { usableRows } from '../missing/usable-rows';
-import { requireLevel, requireRange, type Estimate } from '../result';
+import { methodOf } from '../registry';
+import { requireLevel, type Estimate } from '../result';
 
 /** A pooled proportion whose standard error knows that rows of one participant go together. */
 export interface ClusteredProportion extends Estimate {
@@ -40,7 +41,7 @@ export function clusteredProportion(yes: ArrayLike<number>, clusters: ArrayLike<
   const n = usable.rows.length;
   const groups = [...totals.values()];
   const g = groups.length;
-  const base = { level, method: 'Pooled proportion, standard error clustered by participant (ratio estimator, t limits)', n, events, clusters: g, leftOut: usable.leftOut };
+  const base = { level, method: methodOf('clusteredProportion'), n, events, clusters: g, leftOut: usable.leftOut };
   if (n === 0) return { estimate: null, lower: null, upper: null, reason: 'No rows.', se: null, meanOfClusters: null, ...base };
   const estimate = events / n;
   const meanOfClusters = groups.reduce((sum, group) => sum + group.yes / group.rows, 0) / g;

@@ -1,4 +1,5 @@
 import { usableRows } from '../missing/usable-rows';
+import { methodOf } from '../registry';
 import { requireRange, type Provenance } from '../result';
 
 /** When each participant's logs first reached a load; one row a participant, ascending by participant. */
@@ -55,7 +56,7 @@ export function loadOnset(
     event,
     left: Float64Array.from(rows, ([, entry]) => entry.below),
     right: Float64Array.from(rows, ([, entry]) => entry.reached),
-    method: 'First log at or above the target load',
+    method: methodOf('loadOnset'),
     n: rows.length,
     events: event.reduce((sum, one) => sum + one, 0),
     leftOut: usable.leftOut,

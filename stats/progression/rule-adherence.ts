@@ -1,6 +1,7 @@
 import { clusteredProportion, type ClusteredProportion } from './clustered-proportion';
 import { quantile } from './quantile';
 import { weeklySteps } from './weekly-steps';
+import { methodOf } from '../registry';
 import { requireRange } from '../result';
 
 /** How many weekly steps kept to a rule of progression, pooled over participants. */
@@ -35,6 +36,7 @@ export function ruleAdherence(
   const count = (sign: number): number => steps.change.reduce((sum, change) => sum + (Math.sign(change) === sign ? 1 : 0), 0);
   return {
     ...proportion,
+    method: methodOf('ruleAdherence'),
     leftOut: steps.leftOut,
     maxRatio,
     increases: count(1),

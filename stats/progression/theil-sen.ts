@@ -1,5 +1,6 @@
 import { normal } from '../distributions';
 import { pickRows, usableRows } from '../missing/usable-rows';
+import { methodOf } from '../registry';
 import { kendall } from './kendall';
 import { quantile } from './quantile';
 import { slopesAtRanks } from './pairwise-slopes';
@@ -28,7 +29,7 @@ export interface TheilSen extends Estimate {
   readonly note?: string;
 }
 
-const METHOD = 'Theil-Sen median slope, Sen rank limits (tie-corrected, interpolated)';
+const METHOD = methodOf('theilSen');
 
 /**
  * Theil-Sen slope: the median over all pairs of rows of (yj - yi)/(xj - xi),

@@ -1,3 +1,4 @@
+import { methodOf } from '../registry';
 import { loadOnset, type LoadOnset } from './load-onset';
 import { requireLevel, type Interval, type Provenance } from '../result';
 import { kaplanMeier, type SurvivalCurve } from '../survival/kaplan-meier';
@@ -54,7 +55,7 @@ export function loadIntervals(onset: LoadOnset): LoadIntervals {
     participants: pick(onset.participants),
     left: pick(onset.left),
     right: pick(onset.right),
-    method: 'Interval between the last log below the load and the first at or above it',
+    method: methodOf('loadIntervals'),
     n: kept.length,
     events: kept.reduce((sum, row) => sum + onset.event[row]!, 0),
     leftOut: already > 0 ? [...onset.leftOut, { reason: 'at the load from week 0', count: already }] : onset.leftOut,

@@ -1,3 +1,4 @@
+import { methodOf } from '../registry';
 import { moments } from './moments';
 import { requireRange } from '../result';
 
@@ -32,7 +33,7 @@ export function weeklyProgression(loads: ArrayLike<number>): WeeklyProgression {
     if (step > 0) weeksWithRaise++;
     largestStep = Math.max(largestStep, step);
   }
-  const base = { method: 'Least-squares slope over the week index', n: weeks, weeksWithRaise, largestStep };
+  const base = { method: methodOf('weeklyProgression'), n: weeks, weeksWithRaise, largestStep };
   if (weeks < 2) return { ...base, slopePerWeek: null, totalChange: null, percentChange: null };
   const totalChange = loads[weeks - 1]! - loads[0]!;
   return { ...base, slopePerWeek: slopeOverIndex(loads), totalChange, percentChange: (100 * totalChange) / loads[0]! };

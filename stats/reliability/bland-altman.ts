@@ -1,6 +1,7 @@
 import { noncentralT, normal, studentT } from '../distributions';
 import { pickRows, usableRows } from '../missing/usable-rows';
 import { moments } from '../progression/moments';
+import { methodOf } from '../registry';
 import { requireLevel, requireRange, type Estimate, type Interval } from '../result';
 
 /** Agreement of two methods; the estimate is the bias (first minus second), in the unit of the readings. */
@@ -49,7 +50,7 @@ export function blandAltman(first: ArrayLike<number>, second: ArrayLike<number>,
   const b = pickRows(second, usable.rows);
   const difference = a.map((value, row) => value - b[row]!);
   const { n, mean: bias, sd } = moments(difference);
-  const provenance = { level, method: 'Bland-Altman limits of agreement', n, leftOut: usable.leftOut };
+  const provenance = { level, method: methodOf('blandAltman'), n, leftOut: usable.leftOut };
   if (bias === null || sd === null) return withoutLimits(bias, level, provenance);
   const t = studentT.isf((1 - level) / 2, n - 1);
   const biasSe = sd / Math.sqrt(n);

@@ -1,4 +1,5 @@
 import { fisherF } from '../distributions';
+import { methodOf } from '../registry';
 import { twoWayAnova, type TwoWayAnova } from './two-way-anova';
 import { requireLevel, type Interval, type Provenance } from '../result';
 
@@ -41,7 +42,7 @@ export function icc(columns: readonly ArrayLike<number>[], level = 0.95): Intrac
   requireLevel(level);
   const anova = twoWayAnova(columns);
   const { n, k, leftOut } = anova;
-  const provenance = { method: 'Intraclass correlations (Shrout-Fleiss forms, McGraw-Wong limits)', n, leftOut, anova };
+  const provenance = { method: methodOf('icc'), n, leftOut, anova };
   const why = noCorrelation(anova);
   const tests = {
     rowsTest: fTest(anova.meanSquareRows, anova.meanSquareError, n - 1, (n - 1) * (k - 1)),

@@ -1,4 +1,5 @@
 import { chiSquare } from '../distributions';
+import { methodOf } from '../registry';
 import { sdcFromSem } from './sdc-from-sem';
 import { twoWayAnova } from './two-way-anova';
 import { requireLevel, type Estimate } from '../result';
@@ -25,7 +26,7 @@ export interface MeasurementError extends Estimate {
 export function measurementError(columns: readonly ArrayLike<number>[], level = 0.95): MeasurementError {
   requireLevel(level);
   const { n, k, leftOut, meanSquareRows, meanSquareColumns, meanSquareError } = twoWayAnova(columns);
-  const provenance = { level, method: 'Standard error of measurement from two-way ANOVA, chi-square limits', n, leftOut };
+  const provenance = { level, method: methodOf('measurementError'), n, leftOut };
   if (n < 2) {
     const none = { semAgreement: null, sdcConsistency: null, sdcAgreement: null, varianceBetweenColumns: null, varianceBetweenRows: null };
     return { estimate: null, lower: null, upper: null, reason: 'Measurement error needs two or more subjects.', ...none, ...provenance };

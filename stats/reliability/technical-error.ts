@@ -1,6 +1,7 @@
 import { chiSquare } from '../distributions';
 import { pickRows, usableRows } from '../missing/usable-rows';
 import { moments } from '../progression/moments';
+import { methodOf } from '../registry';
 import { requireLevel, type Estimate } from '../result';
 
 /** Technical error of measurement in the unit of the readings. */
@@ -27,7 +28,7 @@ export function technicalError(first: ArrayLike<number>, second: ArrayLike<numbe
   const a = pickRows(first, usable.rows);
   const b = pickRows(second, usable.rows);
   const n = a.length;
-  const provenance = { level, method: 'Technical error of measurement (two trials), chi-square limits', n, leftOut: usable.leftOut };
+  const provenance = { level, method: methodOf('technicalError'), n, leftOut: usable.leftOut };
   if (n === 0) {
     return { estimate: null, lower: null, upper: null, reason: 'No pairs of readings.', relativePercent: null, biasFree: null, reliability: null, ...provenance };
   }
