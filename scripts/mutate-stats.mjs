@@ -1,6 +1,7 @@
 /**
  * Puts jstat behind stats/distributions and runs the statistics tests, to show
- * that they notice. Prints failing tests a file; ends with an error when
+ * that they notice. Left out are the ends and inverses of distributions, which
+ * ask for quantiles of counts that jstat has not. Prints failing tests a file; ends with an error when
  * nothing failed. Usage: node scripts/mutate-stats.mjs
  */
 import { fileURLToPath } from 'node:url';
@@ -21,7 +22,7 @@ const swap = {
 const vitest = await startVitest(
   'test',
   [],
-  { root, config: false, watch: false, include: ['tests/unit/stats/**/*.test.ts'], exclude: ['**/mutation.test.ts'], reporters: [{}], testTimeout: 120_000 },
+  { root, config: false, watch: false, include: ['tests/unit/stats/**/*.test.ts'], exclude: ['**/mutation.test.ts', '**/distribution-edges.test.ts'], reporters: [{}], testTimeout: 120_000 },
   { plugins: [swap], resolve: { alias: { '@': root.replace(/\/$/, '') } } },
 );
 

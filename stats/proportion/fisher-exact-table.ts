@@ -10,7 +10,8 @@ export interface FisherExactTable extends Provenance {
 }
 
 const TIE_SLACK = Math.log1p(1e-7);
-const MOST_PATHS = 20_000_000;
+/** Bound on work, some seconds; past it the answer is null. */
+const MOST_PATHS = 5_000_000;
 
 /**
  * Fisher's exact test of an r by c table: the probability of all tables with
@@ -43,42 +44,63 @@ interface Reach {
   readonly shortest: number;
 }
 
+/** A node with the weights of the paths that reach it, and how many share each. */
+interface Front {
+  readonly node: number[];
+  readonly pasts: Map<number, { past: number; count: number }>;
+}
+
 class Network {
-  private readonly reach = new Map<string, Reach>();
+  private readonly reach: Map<string | number, Reach>[];
   private paths = 0;
 
   /** @param stages column totals, filled from the last to the first */
   constructor(
     private readonly logFactorial: Float64Array,
     private readonly stages: readonly number[],
-  ) {}
+  ) {
+    this.reach = stages.map(() => new Map());
+  }
 
   /** Probability of all tables whose log weight is at most `bound`; null past the bound on work. */
   tail(totals: readonly number[], bound: number): number | null {
     const logAll = this.logWays(totals, this.stages.length);
     let sum = 0;
-    let front = new Map<string, { node: number[]; pasts: Map<number, { past: number; count: number }> }>();
+    let front = new Map<string | number, Front>();
     const first = sorted(totals);
-    front.set(first.join(), { node: first, pasts: new Map([[0, { past: 0, count: 1 }]]) });
+    front.set(this.keyOf(first), { node: first, pasts: new Map([[0, { past: 0, count: 1 }]]) });
     for (let left = this.stages.length; left > 0; left--) {
       const next: typeof front = new Map();
       for (const { node, pasts } of front.values()) {
         this.splits(node, this.stages[left - 1] as number, (rest, weight) => {
           const onward = sorted(rest);
-          const key = onward.join();
+          const key = this.keyOf(onward);
           const { longest, shortest } = this.reachOf(onward, left - 1);
+          this.paths += pasts.size;
           for (const { past, count } of pasts.values()) {
-            this.paths++;
             const here = past + weight;
             if (here + longest <= bound) sum += count * Math.exp(here + this.logWays(onward, left - 1) - logAll);
             else if (here + shortest <= bound) record(next, key, onward, here, count);
           }
         });
-        if (this.paths > MOST_PATHS) return null;
+        if (this.isSpent()) return null;
       }
       front = next;
     }
     return sum;
+  }
+
+  /** A node as one number where it fits a double exactly, as text elsewhere. */
+  private keyOf(node: readonly number[]): string | number {
+    const base = this.logFactorial.length;
+    if (base ** node.length > Number.MAX_SAFE_INTEGER) return node.join();
+    let key = 0;
+    for (const total of node) key = key * base + total;
+    return key;
+  }
+
+  private isSpent(): boolean {
+    return this.paths > MOST_PATHS;
   }
 
   /** log of the sum over completions of the product of 1 / cell!: multinomial in closed form. */
@@ -95,19 +117,19 @@ class Network {
 
   private reachOf(node: readonly number[], left: number): Reach {
     if (left === 0) return { longest: 0, shortest: 0 };
-    const key = `${left}:${node.join()}`;
-    const known = this.reach.get(key);
+    const key = this.keyOf(node);
+    const memo = this.reach[left - 1] as Map<string | number, Reach>;
+    const known = memo.get(key);
     if (known !== undefined) return known;
     let longest = Number.NEGATIVE_INFINITY;
     let shortest = Number.POSITIVE_INFINITY;
     this.splits(node, this.stages[left - 1] as number, (rest, weight) => {
-      this.paths++;
-      const on = this.paths > MOST_PATHS ? { longest: 0, shortest: 0 } : this.reachOf(sorted(rest), left - 1);
+      const on = this.reachOf(sorted(rest), left - 1);
       longest = Math.max(longest, weight + on.longest);
       shortest = Math.min(shortest, weight + on.shortest);
     });
     const found = { longest, shortest };
-    this.reach.set(key, found);
+    memo.set(key, found);
     return found;
   }
 
@@ -116,9 +138,11 @@ class Network {
     const rest = [...node];
     const room = node.map((_, i) => node.slice(i + 1).reduce((sum, each) => sum + each, 0));
     const place = (row: number, left: number, weight: number): void => {
+      if (this.isSpent()) return;
       const most = node[row] as number;
       if (row === node.length - 1) {
         rest[row] = most - left;
+        this.paths++;
         visit(rest, weight - (this.logFactorial[left] as number));
         return;
       }
@@ -131,13 +155,24 @@ class Network {
   }
 }
 
+/** Insertion sort of a copy: nodes have a handful of rows. */
 function sorted(node: readonly number[]): number[] {
-  return [...node].sort((x, y) => x - y);
+  const copy = node.slice();
+  for (let i = 1; i < copy.length; i++) {
+    const value = copy[i] as number;
+    let at = i;
+    while (at > 0 && (copy[at - 1] as number) > value) {
+      copy[at] = copy[at - 1] as number;
+      at--;
+    }
+    copy[at] = value;
+  }
+  return copy;
 }
 
 function record(
-  front: Map<string, { node: number[]; pasts: Map<number, { past: number; count: number }> }>,
-  key: string,
+  front: Map<string | number, Front>,
+  key: string | number,
   node: number[],
   past: number,
   count: number,

@@ -6,17 +6,17 @@ import { splitMix64 } from './split-mix64';
  * module's own generator. Period 2^128 - 1, four words of state.
  */
 export class Xoshiro128 implements RandomSource {
-  private constructor(
-    private a: number,
-    private b: number,
-    private c: number,
-    private d: number,
-  ) {}
+  /** Words in a typed array: as plain fields every other one would be boxed. */
+  private readonly words: Int32Array;
+
+  private constructor(words: readonly number[]) {
+    this.words = Int32Array.from(words, (word) => word | 0);
+  }
 
   /** From four 32-bit words, not all zero (RangeError). */
   static fromState(words: readonly [number, number, number, number]): Xoshiro128 {
     if (words.every((word) => word >>> 0 === 0)) throw new RangeError('A generator cannot start from a state of zeros.');
-    return new Xoshiro128(words[0] | 0, words[1] | 0, words[2] | 0, words[3] | 0);
+    return new Xoshiro128(words);
   }
 
   /** From a whole-number seed: the low halves of its first four SplitMix64 outputs. */
@@ -45,19 +45,26 @@ export class Xoshiro128 implements RandomSource {
 
   /** The four words as they stand, for a record of where a run began. */
   get state(): [number, number, number, number] {
-    return [this.a >>> 0, this.b >>> 0, this.c >>> 0, this.d >>> 0];
+    return Array.from(this.words, (word) => word >>> 0) as [number, number, number, number];
   }
 
   next32(): number {
-    const five = Math.imul(this.b, 5);
+    const words = this.words;
+    let a = words[0] as number;
+    let b = words[1] as number;
+    let c = words[2] as number;
+    let d = words[3] as number;
+    const five = Math.imul(b, 5);
     const result = Math.imul((five << 7) | (five >>> 25), 9) >>> 0;
-    const shifted = this.b << 9;
-    this.c ^= this.a;
-    this.d ^= this.b;
-    this.b ^= this.c;
-    this.a ^= this.d;
-    this.c ^= shifted;
-    this.d = (this.d << 11) | (this.d >>> 21);
+    const shifted = b << 9;
+    c ^= a;
+    d ^= b;
+    b ^= c;
+    a ^= d;
+    words[0] = a;
+    words[1] = b;
+    words[2] = c ^ shifted;
+    words[3] = (d << 11) | (d >>> 21);
     return result;
   }
 }
