@@ -11,6 +11,11 @@ import * as consentsPaperSignatureRoute from './consents/[id]/paper-signature/ro
 import * as consentsPartsRoute from './consents/[id]/parts/route';
 import * as consentsSignRoute from './consents/[id]/sign/route';
 import * as correctionsRoute from './corrections/route';
+import * as extractsRoute from './extracts/route';
+import * as extractRoute from './extracts/[id]/route';
+import * as extractsFileRoute from './extracts/[id]/files/[name]/route';
+import * as extractsRetryRoute from './extracts/[id]/retry/route';
+import * as extractsPreviewRoute from './extracts/preview/route';
 import * as historyRoute from './history/route';
 import * as participantsRoute from './participants/route';
 import * as participantRoute from './participants/[code]/route';
@@ -68,6 +73,11 @@ export const routes: RouteTable = {
   '/api/consents/{id}/parts': { POST: consentsPartsRoute.POST },
   '/api/consents/{id}/sign': { POST: consentsSignRoute.POST },
   '/api/corrections': { POST: correctionsRoute.POST },
+  '/api/extracts': { GET: extractsRoute.GET, POST: extractsRoute.POST },
+  '/api/extracts/preview': { GET: extractsPreviewRoute.GET },
+  '/api/extracts/{id}': { GET: extractRoute.GET },
+  '/api/extracts/{id}/files/{name}': { GET: extractsFileRoute.GET },
+  '/api/extracts/{id}/retry': { POST: extractsRetryRoute.POST },
   '/api/history': { GET: historyRoute.GET },
   '/api/invitations': { POST: invitationsRoute.POST },
   '/api/participants': { GET: participantsRoute.GET },

@@ -2,8 +2,9 @@ import type { AnyJob } from './define-job';
 import { auditSeal } from './handlers/audit-seal';
 import { consentCopy } from './handlers/consent-copy';
 import { consentLink } from './handlers/consent-link';
+import { extractPrepare } from './handlers/extract-prepare';
 import { mailSend } from './handlers/mail-send';
 import { participantInvite } from './handlers/participant-invite';
 
 /** Every job, alphabetical by name. A queue for each is made when the data base is migrated. */
-export const jobs: readonly AnyJob[] = [auditSeal, consentCopy, consentLink, mailSend, participantInvite];
+export const jobs: readonly AnyJob[] = [auditSeal, consentCopy, consentLink, extractPrepare, mailSend, participantInvite];
