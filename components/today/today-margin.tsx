@@ -25,7 +25,7 @@ export function TodayMargin({ view }: { view: TodayView }) {
           <span className="font-serif text-[40px] leading-none text-ink">{formatCount(count)}</span> of {formatCount(target)}
         </p>
         <RecruitmentChart {...{ from, to, today, target, enrolled, pacePerDay }} label={`${count} of ${target} recruited.`} />
-        <p className="t-small mt-2 text-ink-2">{paceWords(recruitment)} The thin line is the plan: even, to the last day on which a last visit still falls inside the study.</p>
+        <p className="t-small mt-2 text-ink-2">{paceWords(recruitment)} The thin line spreads the target evenly over the study.</p>
       </MarginPart>
       <MarginPart title={`Consent to form ${consent.number}`}>
         <Gauge state={consent.current === consent.of ? 'done' : 'part'} level={consent.of > 0 ? consent.current / consent.of : 0} size={84} word={`${formatCount(consent.current)} of ${formatCount(consent.of)} in the study`} />

@@ -2,9 +2,15 @@ import Link from 'next/link';
 import type { TodayView } from '@/lib/today/view-today';
 import { ButtonLink } from '../ui/button';
 import { UrgentRow } from '../ui/caution';
-import { formatAge, formatMoment, formatTime } from '../ui/format';
+import { dayIn, formatAge, formatMoment, formatTime } from '../ui/format';
 
 const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1);
+
+/** 'at 11:52' today, with the date on another day. */
+function clockWords(dueAt: string, now: Date, timeZone: string): string {
+  const due = new Date(dueAt);
+  return dayIn(due, timeZone) === dayIn(now, timeZone) ? formatTime(due, timeZone) : formatMoment(due, timeZone);
+}
 
 /** Reports with red flags, above the list until somebody has read them. */
 export function UrgentReports({ view, mayReview }: { view: TodayView; mayReview: boolean }) {
@@ -27,7 +33,7 @@ export function UrgentReports({ view, mayReview }: { view: TodayView; mayReview:
       }
     >
       The phone has already shown what to do at once. {holdTraining ? 'Training is held. ' : ''}
-      {dueAt === null ? 'Call, then record what was done.' : isOverdue ? `The review was due at ${formatMoment(new Date(dueAt), timeZone)}: call now.` : `Call, then record what was done, by ${formatMoment(new Date(dueAt), timeZone)}.`}
+      {dueAt === null ? 'Call, then record what was done.' : isOverdue ? `The review was due by ${clockWords(dueAt, now, timeZone)}: call now.` : `Call, then record what was done, by ${clockWords(dueAt, now, timeZone)}.`}
     </UrgentRow>
   ));
 }

@@ -138,7 +138,7 @@ function questionWords(item: QuestionWork): WorkWords {
     kind: 'Questions',
     codeHref: participantHref(code),
     title: names.length === 1 ? (names[0] ?? '') : countOf(names.length, 'questionnaire'),
-    detail: `${names.length === 1 ? 'Not submitted' : names.join(', ')}; ${closesOn < today ? `closed ${shortDay(closesOn)}` : `open until ${shortDay(closesOn)}`}.`,
+    detail: `${names.length === 1 ? 'Not submitted' : names.join(', ')}; taken until ${shortDay(closesOn)}.`,
     window: { opens: opensOn, target: dueOn, closes: closesOn },
     state: { state: 'waiting', word: 'With the participant' },
     verb: 'Call',

@@ -21,6 +21,9 @@ export interface ParticipantRow {
   readonly nextOpens: string | null;
   readonly nextCloses: string | null;
   readonly openQueries: number;
+  /** Visits that have ended as planned, of those laid out. */
+  readonly visitsDone: number;
+  readonly visitsOf: number;
 }
 
 export interface ParticipantPage {
@@ -45,6 +48,8 @@ const last = `left join lateral (select v.name, v.done_on, a.rvc::float8 as rvc,
     where a.participant_id = p.id and a.state = 'complete' order by v.done_on desc limit 1) last on true`;
 const next = `left join lateral (select v.name, v.opens_on, v.closes_on from visit v where v.participant_id = p.id and v.state in ('to come', 'in progress') order by v.closes_on limit 1) next on p.state = 'enrolled'`;
 const queries = `left join lateral (select count(*)::int as open from data_query q where q.participant_id = p.id and q.state in ('open', 'answered')) queries on true`;
+
+const visits = `left join lateral (select count(*) filter (where v.state = 'complete')::int as done, count(*)::int as laid from visit v where v.participant_id = p.id) visits on true`;
 
 /** The laterals a sort or a filter looks at; the others are joined for the rows of the page only. */
 function neededFor({ sort, swelling }: ListParticipantsInput): { text: string; needsLast: boolean } {
@@ -76,8 +81,8 @@ export async function listParticipants(work: Work, input: ListParticipantsInput)
     `with page as (select p.id, row_number() over (order by ${order}) as place ${from} order by ${order} limit ? offset ?)
      select p.id, p.code, s.name as "siteName", p.cohort, p.enrolled_on::text as "enrolledOn", p.state, p.training_held as "trainingHeld",
        last.name as "lastVisitName", last.done_on::text as "lastVisitOn", last.rvc as change, last.verdict,
-       next.name as "nextVisitName", next.opens_on::text as "nextOpens", next.closes_on::text as "nextCloses", queries.open as "openQueries"
-     from page join participant p on p.id = page.id join site s on s.id = p.site_id ${last} ${next} ${queries} order by page.place`,
+       next.name as "nextVisitName", next.opens_on::text as "nextOpens", next.closes_on::text as "nextCloses", queries.open as "openQueries", visits.done as "visitsDone", visits.laid as "visitsOf"
+     from page join participant p on p.id = page.id join site s on s.id = p.site_id ${last} ${next} ${queries} ${visits} order by page.place`,
     [...found, pageSize, page * pageSize, primary],
   );
   return { rows: rows.map((row) => ({ ...row, cohort: document.cohorts.find(({ key }) => key === row.cohort)?.name ?? row.cohort })), rowCount: total?.count ?? 0 };

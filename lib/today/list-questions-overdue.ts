@@ -14,15 +14,15 @@ interface Row {
 
 const nameOf = (key: string): string => questionnaires.find((questionnaire) => questionnaire.key === key)?.title ?? key;
 
-/** Questionnaires past their day and not submitted, one line a participant. One statement. */
+/** Questionnaires past their day that can still be sent, one line a participant. One statement. */
 export async function listQuestionsOverdue(work: Work, sites: ReadonlyMap<string, TodaySite>): Promise<QuestionWork[]> {
   const rows = await work.sql<Row>(
     `select q.site_id as "siteId", p.code, array_agg(q.instrument order by q.instrument) as instruments,
        min(q.opens_on)::text as "opensOn", min(q.due_on)::text as "dueOn", max(q.closes_on)::text as "closesOn"
      from questionnaire_response q join participant p on p.id = q.participant_id join site s on s.id = q.site_id
-     where q.state in ('due', 'in progress') and q.due_on < (?::timestamptz at time zone s.time_zone)::date and (p.state = 'enrolled' or p.left_grade = 'stops training')
+     where q.state in ('due', 'in progress') and q.due_on < (?::timestamptz at time zone s.time_zone)::date and q.closes_on >= (?::timestamptz at time zone s.time_zone)::date and (p.state = 'enrolled' or p.left_grade = 'stops training')
      group by q.site_id, p.code order by min(q.due_on), p.code`,
-    [work.now],
+    [work.now, work.now],
   );
   return rows.flatMap(({ siteId, instruments, ...row }) => {
     const site = sites.get(siteId);

@@ -1,3 +1,4 @@
+import { addDays } from '@/instruments/calendar';
 import { localDate, moment } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import { groupOf } from './group-of';
@@ -18,7 +19,7 @@ function dueDay({ state, bookedOn, targetOn, closesOn, today }: { state: string;
 }
 
 /**
- * Visits that have not ended and whose window or appointment lies within `days` from now; one statement.
+ * Visits that have not ended and ask for something up to `days` from now; one statement.
  * Who left the study has no visits due, unless only the training was stopped.
  */
 export async function listVisitsDue(work: Work, sites: ReadonlyMap<string, TodaySite>, days: number): Promise<VisitWork[]> {
@@ -39,6 +40,7 @@ export async function listVisitsDue(work: Work, sites: ReadonlyMap<string, Today
     const bookedAt = row.bookedAt === null ? null : moment(row.bookedAt);
     const bookedOn = bookedAt && localDate(bookedAt, timeZone);
     const dueOn = dueDay({ ...row, bookedOn, today });
+    if (dueOn > addDays(today, days)) return [];
     return [{ ...row, kind: 'visit' as const, today, timeZone, siteName, bookedAt: bookedAt?.toISOString() ?? null, bookedOn, dueOn, group: groupOf({ dueOn, today }) }];
   });
 }

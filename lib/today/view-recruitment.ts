@@ -1,5 +1,5 @@
 import { addDays } from '@/instruments/calendar';
-import { currentConsentForm, currentProtocol } from '@/lib/protocol/find-protocol';
+import { currentConsentForm } from '@/lib/protocol/find-protocol';
 import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import type { TodaySite } from './work-item';
@@ -7,7 +7,6 @@ import type { TodaySite } from './work-item';
 /** Recruitment at the sites in reach. */
 export interface RecruitmentView {
   readonly from: string;
-  /** The last day on which somebody can be enrolled and still have the last visit inside the study. */
   readonly to: string;
   readonly today: string;
   readonly target: number;
@@ -33,9 +32,8 @@ interface Row {
   taking_part: number;
 }
 
-/** Recruitment and consent in one statement, over the protocol and the form in force. */
+/** Recruitment and consent: one statement, after the one that finds the form in force. */
 export async function viewRecruitment(work: Work, sites: readonly TodaySite[]): Promise<{ recruitment: RecruitmentView; consent: ConsentStanding }> {
-  const { document } = await currentProtocol(work);
   const form = await currentConsentForm(work);
   const today = sites[0]?.today ?? localDate(work.now, 'UTC');
   const [row] = await work.sql<Row>(
@@ -48,8 +46,6 @@ export async function viewRecruitment(work: Work, sites: readonly TodaySite[]): 
     [today, today, form.id, work.actor.studyId],
   );
   if (!row) throw new Error('The study of a signed-in person exists.');
-  const lastDay = Math.max(...document.visits.map(({ offsetDays, lateDays }) => offsetDays + lateDays));
-  const to = addDays(row.ends_on, -lastDay);
   let count = 0;
   const steps = (row.months ?? []).map((month) => {
     count += month.count;
@@ -60,7 +56,7 @@ export async function viewRecruitment(work: Work, sites: readonly TodaySite[]): 
   return {
     recruitment: {
       from: row.starts_on,
-      to: to > today ? to : row.ends_on,
+      to: row.ends_on,
       today,
       target: sites.reduce((sum, { recruitmentTarget }) => sum + recruitmentTarget, 0),
       count,
