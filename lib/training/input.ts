@@ -1,5 +1,7 @@
 import { z } from 'zod';
 import { equipmentKinds, loadBases, sides } from '@/instruments/training/exercises';
+import type { ExerciseEntry } from '@/instruments/training/session';
+import { massToKg, roundKg } from '@/instruments/units';
 
 const effort = z.int().min(0).max(10).nullable();
 
@@ -33,3 +35,10 @@ export const logSessionInput = z.strictObject({
 export type LogSessionInput = z.infer<typeof logSessionInput>;
 
 export const flagIdInput = z.strictObject({ id: z.uuid() });
+
+/** A logged line in the rules' own shape. The load comes from what was typed, converted exactly, not from whole grams. */
+export function toExerciseEntry({ exercise, equipment, basis, side, typed, unit, repetitions, setCount }: Omit<LoggedSetInput, 'effort' | 'alreadyLifted'>): ExerciseEntry {
+  const loadKg = equipment === 'band' || equipment === 'body weight' ? null : roundKg(massToKg(typed, unit));
+  const set = equipment === 'band' ? { reps: repetitions, loadKg, bandLevel: typed } : { reps: repetitions, loadKg };
+  return { exercise, equipment, basis, side, sets: Array.from({ length: setCount }, () => set) };
+}

@@ -2,11 +2,12 @@ import type { TrainingSession } from '@/instruments/training/session';
 import type { Equipment, LoadBasis, Side } from '@/instruments/training/exercises';
 import type { TrainingSettings } from '@/instruments/training/settings';
 import { armChangedBy } from '@/instruments/training/arm-check';
-import { massToKg, type MassUnit, roundKg } from '@/instruments/units';
+import type { MassUnit } from '@/instruments/units';
 import { findProtocol, type Protocol } from '@/lib/protocol/find-protocol';
 import { localDate, moment } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import { armCheckCode, type ArmCheckWords } from './arm-check-words';
+import { toExerciseEntry } from './input';
 
 /** One exercise of a kept session, as typed. */
 export interface KeptSet {
@@ -42,20 +43,12 @@ export interface TrainingRecord {
   readonly protocol: Protocol;
 }
 
-/** A kept session in the rules' own shape. Loads come from what was typed, converted exactly, not from whole grams. */
+/** A kept session in the rules' own shape. */
 export const toTrainingSession = ({ id, on, armCheck, sets }: Pick<KeptSession, 'id' | 'on' | 'armCheck' | 'sets'>): TrainingSession => ({
   id,
   on,
   armChanged: armChangedBy(armCheckCode(armCheck)),
-  entries: sets.map(({ exercise, equipment, basis, side, typed, unit, repetitions, setCount }) => ({
-    exercise,
-    equipment,
-    basis,
-    side,
-    sets: Array.from({ length: setCount }, () =>
-      equipment === 'band' ? { reps: repetitions, loadKg: null, bandLevel: typed } : { reps: repetitions, loadKg: equipment === 'body weight' ? null : roundKg(massToKg(typed, unit)) },
-    ),
-  })),
+  entries: sets.map(toExerciseEntry),
 });
 
 /** The whole training record of one participant. Three statements, however long the log. */

@@ -4,7 +4,8 @@ import { findExercise } from '@/instruments/training/exercises';
 import type { TrainingSettings } from '@/instruments/training/settings';
 import { findOwnRecord } from '@/lib/people/find-own-record';
 import type { Work } from '@/lib/work/work';
-import { loadTrainingRecord, type KeptSession } from './training-record';
+import type { TrainingSession } from '@/instruments/training/session';
+import { loadTrainingRecord, toTrainingSession, type KeptSession, type KeptSet } from './training-record';
 
 /** An exercise of the programme as the phone asks for it. */
 export interface LogExercise {
@@ -13,6 +14,14 @@ export interface LogExercise {
   readonly equipment: readonly Equipment[];
   readonly basis: LoadBasis;
 }
+
+/** An exercise as it was logged last. */
+export interface LastTime extends KeptSet {
+  readonly on: string;
+}
+
+const lastTimes = (sessions: readonly KeptSession[]): Record<string, LastTime> =>
+  Object.fromEntries(sessions.flatMap(({ on, sets }) => sets.map((set) => [set.exercise, { ...set, on }])));
 
 /** All that the phone needs to log a session and to say at once what the rules say. */
 export interface LogView {
@@ -23,7 +32,10 @@ export interface LogView {
   readonly trainingHeld: boolean;
   readonly exercises: readonly LogExercise[];
   readonly settings: TrainingSettings;
-  readonly sessions: readonly KeptSession[];
+  /** Every session so far, as the rules read it. */
+  readonly recorded: readonly TrainingSession[];
+  /** What was lifted last time, by exercise: a proposal, confirmed one by one. */
+  readonly last: Readonly<Record<string, LastTime>>;
   readonly assessmentsOn: readonly string[];
   readonly baselineOn: string | null;
   /** 1 for the first of the week. */
@@ -50,7 +62,8 @@ export async function viewLog(work: Work): Promise<LogView> {
     trainingHeld: participant.trainingHeld,
     exercises: programme(protocol.document.exercises),
     settings,
-    sessions,
+    recorded: sessions.map(toTrainingSession),
+    last: lastTimes(sessions),
     assessmentsOn,
     baselineOn,
     sessionNumber: sessions.filter(({ on }) => mondayOf(on) === mondayOf(today)).length + 1,
