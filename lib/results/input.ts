@@ -1,10 +1,14 @@
 import { z } from 'zod';
 import { swellingCodes } from '@/instruments/swelling';
 
+export const confirmations = ['first visit', 'confirmed at the next visit'] as const;
+
 /** What the sentence at the top of Results may say. */
 export const viewResultsInput = z.strictObject({
   first: z.enum(swellingCodes).optional(),
   second: z.enum(swellingCodes).optional(),
-  confirmation: z.enum(['first visit', 'confirmed at the next visit']).default('first visit'),
+  confirmation: z.enum(confirmations).default('first visit'),
+  cohort: z.string().regex(/^[a-z0-9-]{1,60}$/, 'There is no such cohort.').optional(),
+  siteId: z.uuid().optional(),
 });
 export type ViewResultsInput = z.output<typeof viewResultsInput>;

@@ -2,6 +2,7 @@ import { daysBetween } from '@/instruments/calendar';
 import { firstOccurrence, sustained, type JudgedVisit } from '@/instruments/swelling/occurrence';
 import type { SwellingCode } from '@/instruments/swelling';
 import type { Work } from '@/lib/work/work';
+import { inPopulation, type Population } from './population';
 
 /** Which judgement ends follow-up: the first visit that meets the definition, or the first of two consecutive scheduled ones. */
 export type Confirmation = 'first visit' | 'confirmed at the next visit';
@@ -22,15 +23,17 @@ interface Row {
 }
 
 /** Every participant in reach with the verdicts of one definition, ordered by day. One statement. */
-export async function readSwellingCourses(work: Work, code: SwellingCode): Promise<{ courses: SwellingCourse[]; withoutBaseline: number }> {
+export async function readSwellingCourses(work: Work, code: SwellingCode, population: Population = {}): Promise<{ courses: SwellingCourse[]; withoutBaseline: number }> {
+  const { where, values } = inPopulation('p', population);
   const rows = await work.sql<Row>(
     `select p.id as participant_id, b.done_on::text as baseline_on, v.done_on::text as done_on, coalesce(v.key = 'baseline', false) as is_baseline,
        coalesce(v.unscheduled_reason is null, false) as is_scheduled, a.verdicts -> ? ->> 'verdict' as verdict
      from participant p
      left join lateral (select v.done_on from visit v join limb_assessment a on a.visit_id = v.id where v.participant_id = p.id and v.key = 'baseline' and a.state = 'complete' limit 1) b on true
      left join limb_assessment a on a.participant_id = p.id and a.state = 'complete' left join visit v on v.id = a.visit_id
+     where ${where}
      order by p.id, v.done_on`,
-    [code],
+    [code, ...values],
   );
   const courses = new Map<string, { participantId: string; visits: JudgedVisit[] }>();
   const without = new Set<string>();
