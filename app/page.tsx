@@ -15,5 +15,6 @@ const starts: readonly (readonly [Act, string])[] = [
 export default async function HomePage() {
   const session = await currentSession();
   if (!session) redirect('/welcome');
+  if (session.actor.atTablet && session.actor.screeningId) redirect(`/screening/${session.actor.screeningId}/consent`);
   redirect(starts.find(([act]) => may(session.actor.role, act))?.[1] ?? '/protocol');
 }

@@ -9,6 +9,8 @@ export const AppSessionSchema = defineEntity({
     accountId: p.uuid(),
     tokenHash: p.string(),
     roleGrantId: p.uuid().nullable(),
+    handedOverScreeningId: p.uuid().nullable(),
+    handedOverSiteId: p.uuid().nullable(),
     createdAt: p.datetime(),
     seenAt: p.datetime(),
     expiresAt: p.datetime(),

@@ -31,6 +31,8 @@ export class People extends Migration {
     this.addSql('create index role_grant_account on role_grant (account_id)');
     this.addSql(`create table app_session (
       id uuid primary key default gen_random_uuid(), account_id uuid not null references account, token_hash text not null unique, role_grant_id uuid references role_grant,
+      -- While a tablet is in a participant's hands the session reaches this screening and nothing else.
+      handed_over_screening_id uuid, handed_over_site_id uuid, check ((handed_over_screening_id is null) = (handed_over_site_id is null)),
       created_at timestamptz not null, seen_at timestamptz not null, expires_at timestamptz not null, ended_at timestamptz)`);
     this.addSql('create index app_session_account on app_session (account_id) where ended_at is null');
     this.addSql(`create table rate_hit (bucket text not null, at timestamptz not null)`);

@@ -27,6 +27,7 @@ export default async function StaffLayout({ children }: { children: ReactNode })
   const session = await requireSession();
   const { actor, siteNames, studyName, grants } = session;
   if (actor.role === 'participant') redirect('/week');
+  if (actor.atTablet) redirect('/');
   const shell = await loadPage('shell.view', viewShell);
   const nav = words.filter(({ act }) => may(actor.role, act)).map(({ href, label, count }) => ({ href, label, count: count?.(shell) ?? 0 }));
   const footer = [

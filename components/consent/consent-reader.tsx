@@ -179,7 +179,7 @@ function Signed({ frame, heading, staffHref, siteName }: { frame: Frame; heading
       {staffHref ? (
         <p className="mt-8 border-t border-rule pt-4">
           <ButtonLink href={staffHref} size="phone" wide>
-            For {siteName}: sign second
+            For {siteName}: take the tablet back
           </ButtonLink>
         </p>
       ) : (

@@ -18,7 +18,7 @@ const input = countersignInput.omit({ id: true });
 export function CountersignForm({ consentId, version }: { consentId: string; version: number }) {
   const router = useRouter();
   const { say } = useToast();
-  const { register, handleSubmit, setError, formState } = useForm<{ agreed: boolean; name: string }>({ resolver: rawResolver(input), defaultValues: { agreed: false, name: '' } });
+  const { register, handleSubmit, setError, formState } = useForm<{ agreed: boolean; name: string; password: string }>({ resolver: rawResolver(input), defaultValues: { agreed: false, name: '', password: '' } });
   const signing = useSend('POST', `/api/consents/${consentId}/countersign`, { version });
   const sign = handleSubmit((values) =>
     signing.mutate(values, {
@@ -26,7 +26,7 @@ export function CountersignForm({ consentId, version }: { consentId: string; ver
         say({ kind: 'fine', word: 'Consent is complete.', text: 'The copy goes to the participant by e-mail.' });
         router.refresh();
       },
-      onError: ({ problem }) => placeRefusal(problem, setError, ['agreed', 'name']),
+      onError: ({ problem }) => placeRefusal(problem, setError, ['agreed', 'name', 'password']),
     }),
   );
   return (
@@ -34,6 +34,15 @@ export function CountersignForm({ consentId, version }: { consentId: string; ver
       <ErrorSummary problems={listProblems(formState.errors, signing.error?.problem ?? null)} />
       <Checkbox id="agreed" label={staffStatement} error={formState.errors.agreed?.message} {...register('agreed')} />
       <TextField id="name" label="Type your full name as your signature" autoComplete="name" error={formState.errors.name?.message} {...register('name')} />
+      <TextField
+        id="password"
+        type="password"
+        label="Your password"
+        hint="Signing takes it once more, so that nobody signs in your place."
+        autoComplete="current-password"
+        error={formState.errors.password?.message}
+        {...register('password')}
+      />
       <div>
         <Button kind="primary" type="submit" atWork={signing.isPending && 'Signing'}>
           Sign second

@@ -29,6 +29,7 @@ export const policy = {
   'account.sign-out': signIn(write('system')),
   'session.check': signIn(write('system')),
   'session.choose-role': signIn(write('system')),
+  'session.hand-over': signIn(write('system')),
   'invitation.view': signIn(read('system')),
   // What the masthead says on every page.
   'shell.view': read(...grantedRoles),

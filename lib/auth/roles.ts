@@ -41,6 +41,8 @@ export interface Actor {
   readonly participantId: string | null;
   /** Set for the holder of a consent link: only this screening exists. */
   readonly screeningId: string | null;
+  /** The clinic's tablet in the participant's hands: an invited person who needs no link. */
+  readonly atTablet?: true;
 }
 
 /** The account every unattended act is signed with; made by the first migration of data. */

@@ -1,5 +1,5 @@
 import type { Actor, GrantedRole } from './roles';
-import { systemActor } from './roles';
+import { inviteeAccountId, nobody, systemActor } from './roles';
 import { tokenHash } from './token';
 import { Refusal } from '@/lib/work/refusal';
 import { moment, secondsAfter } from '@/lib/work/time';
@@ -27,12 +27,14 @@ export interface LiveSession {
   readonly siteNames: readonly string[];
 }
 
-interface SessionRow {
+export interface SessionRow {
   id: string;
   account_id: string;
   kind: 'staff' | 'participant' | 'system';
   role_grant_id: string | null;
   seen_at: string;
+  handed_over_screening_id: string | null;
+  handed_over_site_id: string | null;
 }
 
 interface GrantRow {
@@ -47,6 +49,12 @@ interface GrantRow {
   of_participant_id: string | null;
 }
 
+/** The person who holds the tablet now: one screening in reach, and no role of the one who signed in. */
+function handedOver({ handed_over_screening_id: screeningId, handed_over_site_id: siteId }: SessionRow): Actor | null {
+  if (screeningId === null || siteId === null) return null;
+  return { accountId: inviteeAccountId, role: 'invitee', label: 'at the tablet', studyId: null, reach: [siteId], participantId: nobody, screeningId, atTablet: true };
+}
+
 const grantsOf = (work: Work, accountId: string): Promise<GrantRow[]> =>
   work.sql<GrantRow>(
     `select g.id, g.role, g.label, g.study_id, st.name as study_name, g.whole_study, g.of_participant_id,
@@ -58,9 +66,9 @@ const grantsOf = (work: Work, accountId: string): Promise<GrantRow[]> =>
     [accountId, work.now, work.now],
   );
 
-async function liveRow(work: Work, token: string): Promise<SessionRow | null> {
+export async function liveRow(work: Work, token: string): Promise<SessionRow | null> {
   const [row] = await work.sql<SessionRow>(
-    `select s.id, s.account_id, a.kind, s.role_grant_id, s.seen_at from app_session s join account a on a.id = s.account_id
+    `select s.id, s.account_id, a.kind, s.role_grant_id, s.seen_at, s.handed_over_screening_id, s.handed_over_site_id from app_session s join account a on a.id = s.account_id
      where s.token_hash = ? and s.ended_at is null and s.expires_at > ? and a.state = 'active'`,
     [tokenHash(token), work.now],
   );
@@ -80,7 +88,7 @@ export async function liveSession(token: string): Promise<LiveSession | null> {
     const grant = grants.find(({ id }) => id === row.role_grant_id) ?? grants[0];
     if (!grant) return null;
     return {
-      actor: {
+      actor: handedOver(row) ?? {
         accountId: row.account_id,
         role: grant.role,
         label: grant.label,

@@ -53,6 +53,8 @@ export const countersignInput = z.strictObject({
   id: z.uuid(),
   agreed: z.literal(true, { error: 'Tick the statement before you sign.' }),
   name: z.string().trim().min(2, 'Type your full name as your signature.').max(120, 'Use at most 120 characters.'),
+  /** Signing takes the password once more: the tablet may still be in the participant's hands. */
+  password: z.string().min(1, 'Write your password to sign.').max(256),
 });
 
 /** Largest signed form that is taken. */

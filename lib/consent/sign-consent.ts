@@ -14,7 +14,7 @@ import { stepOf, type ConsentStep } from './view-consent';
  */
 export async function signConsent(work: Work, { id, statements, permissions, signature }: SignConsentInput): Promise<ConsentStep> {
   const { consent, form } = await findConsent(work, id);
-  const expectedMode = work.actor.role === 'invitee' ? 'home' : 'tablet';
+  const expectedMode = work.actor.role === 'invitee' && !work.actor.atTablet ? 'home' : 'tablet';
   if (consent.mode !== expectedMode) throw new Refusal('conflict', 'This consent is now read and signed in another way. Ask your site.');
   checkStatements(form, statements);
   checkPermissions(form, permissions);

@@ -11,6 +11,7 @@ export interface ConsentView {
   readonly id: string;
   readonly version: number;
   readonly screeningId: string;
+  readonly siteId: string;
   readonly mode: Consent['mode'];
   readonly state: Consent['state'];
   readonly formNumber: string;
@@ -46,6 +47,7 @@ async function viewOf(work: Work, consent: Consent): Promise<ConsentView> {
     id: consent.id,
     version: consent.version,
     screeningId: consent.screeningId,
+    siteId: consent.siteId,
     mode: consent.mode,
     state: consent.state,
     formNumber: form.number,

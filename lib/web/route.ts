@@ -1,5 +1,6 @@
 import 'server-only';
 import type { z } from 'zod';
+import { confirmPassword } from '@/lib/auth/confirm-password';
 import { inviteeOf } from '@/lib/auth/invitee';
 import { may, ruleOf, type Act } from '@/lib/auth/policy';
 import { systemActor, type Actor } from '@/lib/auth/roles';
@@ -25,6 +26,8 @@ export interface Declaration<I extends Input = Input, R = unknown> {
   readonly create?: true;
   /** A change: needs If-Match with the version that was seen. */
   readonly change?: true;
+  /** A signature: needs the signer's password once more, in `password`. */
+  readonly confirms?: true;
   /** Nobody need be signed in: the system acts (joining, for one). The service itself must prove who asks. */
   readonly open?: true;
   run(work: Work, input: z.output<I>): Promise<R>;
@@ -82,7 +85,7 @@ function answer(result: unknown, status: number, headers: Record<string, string>
  * `export const POST = route({ act: 'query.raise', summary: '…', input: raiseQueryInput, create: true, run: raiseQuery })`
  */
 export function route<I extends Input, R>(declaration: Declaration<I, R>): RouteHandler {
-  const { act, create, change, open } = declaration;
+  const { act, create, change, confirms, open } = declaration;
   const handle = async (request: Request, context: { params: Promise<Record<string, string | string[]>> }): Promise<Response> => {
     const reference = newReference();
     try {
@@ -94,6 +97,7 @@ export function route<I extends Input, R>(declaration: Declaration<I, R>): Route
       const version = change ? expectedVersion(request) : null;
       const raw = await readInput(request, await context.params);
       const input = declaration.input.parse(raw);
+      if (confirms) await confirmPassword(actor, String((input as { password?: unknown }).password ?? ''));
       const reason = (input as { reason?: unknown }).reason;
       const options = { reason: typeof reason === 'string' ? reason : null, request: reference, expectedVersion: version };
       const { result, replayed } = await withWork(

@@ -37,6 +37,13 @@ export async function requireActor(act: Act): Promise<Actor> {
   return may(actor.role, act) ? actor : forbidden();
 }
 
+/** For the few handlers that act on the session itself. @throws Refusal 'unauthenticated'. */
+export async function requireStaffActor(): Promise<Actor> {
+  const session = await currentSession();
+  if (!session) throw new Refusal('unauthenticated', 'Sign in first.');
+  return session.actor;
+}
+
 /** For pages: loads one view under an act; what is out of reach is 'not found', what the role may not is 'forbidden'. */
 export async function loadPage<T>(act: Act, run: (work: Work) => Promise<T>): Promise<T> {
   const actor = await requireActor(act);

@@ -26,7 +26,7 @@ export const samples: Readonly<Record<string, (s: Subject) => Sample>> = {
   'GET /api/arm': list,
   'POST /api/arm/check': () => ({ isList: true, body: { clientKey: randomUUID(), armCheck: 'the same' } }),
   'GET /api/consents/{id}': byId((s) => s.consentId),
-  'POST /api/consents/{id}/countersign': byId((s) => s.consentId, { agreed: true, name: 'Robin Ashdown' }),
+  'POST /api/consents/{id}/countersign': byId((s) => s.consentId, { agreed: true, name: 'Robin Ashdown', password: 'is not asked in the walk' }),
   'GET /api/consents/{id}/file/{which}': (s) => ({ params: { id: s.consentId, which: 'copy' } }),
   'POST /api/consents/{id}/link': byId((s) => s.consentId, {}),
   'POST /api/consents/{id}/paper': byId((s) => s.consentId, {}),

@@ -18,6 +18,9 @@ vi.mock('@/lib/web/session', () => ({
   sessionToken: () => Promise.resolve(null),
 }));
 
+// Signing twice is tested by itself (tests/db/confirm-password.test.ts); here only reach decides.
+vi.mock('@/lib/auth/confirm-password', () => ({ confirmPassword: () => Promise.resolve() }));
+
 const addresses = Object.entries(routes).flatMap(([address, methods]) => Object.entries(methods).map(([method, handler]) => ({ name: `${method} ${address}`, address, method, handler })));
 const guarded = addresses.filter(({ handler }) => !handler.declaration.open);
 

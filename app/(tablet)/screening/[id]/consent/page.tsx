@@ -2,8 +2,9 @@ import type { Metadata } from 'next';
 import { redirect } from 'next/navigation';
 import { Providers } from '@/components/api/providers';
 import { ConsentReader } from '@/components/consent/consent-reader';
+import { HandOver } from '@/components/consent/hand-over';
 import { viewScreeningConsent } from '@/lib/consent/view-consent';
-import { loadPage } from '@/lib/web/session';
+import { loadPage, requireActor } from '@/lib/web/session';
 
 export const metadata: Metadata = { title: 'Consent' };
 
@@ -11,12 +12,14 @@ export const metadata: Metadata = { title: 'Consent' };
 export default async function TabletConsentPage({ params }: { params: Promise<{ id: string }> }) {
   const { id } = await params;
   const consent = await loadPage('consent.view', (work) => viewScreeningConsent(work, { screeningId: id }));
-  if (consent?.mode !== 'tablet' || consent.state !== 'reading') redirect(`/screening/${id}`);
+  const { atTablet } = await requireActor('consent.view');
+  if (consent?.mode !== 'tablet' || consent.state !== 'reading') redirect(atTablet ? '/hand-back' : `/screening/${id}`);
+  if (!atTablet) return <HandOver screeningId={id} siteName={consent.site.name} />;
   return (
     <Providers>
       <ConsentReader
         consent={{ id: consent.id, formNumber: consent.formNumber, form: consent.form, sectionsRead: consent.sectionsRead, site: consent.site }}
-        staffHref={`/screening/${id}`}
+        staffHref="/hand-back"
       />
     </Providers>
   );
