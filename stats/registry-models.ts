@@ -55,7 +55,7 @@ export const modelStatistics = [
   }),
   defineStatistic({
     name: 'logisticRegression',
-    method: 'Logistic regression, separation detected',
+    method: 'Logistic regression, maximum likelihood',
     reference: 'Cox DR. J R Stat Soc B 1958;20:215-242; Albert A, Anderson JA. Biometrika 1984;71:1-10',
   }),
   defineStatistic({

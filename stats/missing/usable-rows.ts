@@ -38,7 +38,7 @@ export function usableRows(columns: Readonly<Record<string, ArrayLike<number>>>)
 }
 
 /** The named rows of a column, as a new Float64Array. */
-export function pickRows(column: ArrayLike<number>, rows: Int32Array): Float64Array {
+export function pickRows(column: ArrayLike<number>, rows: Int32Array | Uint32Array): Float64Array {
   const picked = new Float64Array(rows.length);
   for (let i = 0; i < rows.length; i++) picked[i] = column[rows[i] as number] as number;
   return picked;

@@ -1,3 +1,6 @@
+import { pickRows } from '../missing/usable-rows';
+import { orderByTwo } from './order-by-two';
+
 /** Kendall's S with what its tests need. */
 export interface Kendall {
   /** Concordant minus discordant pairs. */
@@ -17,9 +20,9 @@ export interface Kendall {
  */
 export function kendall(x: Float64Array, y: Float64Array): Kendall {
   const n = x.length;
-  const order = Int32Array.from(x.keys()).sort((i, j) => x[i]! - x[j]! || y[i]! - y[j]!);
-  const byX = Float64Array.from(order, (i) => x[i]!);
-  const byXThenY = Float64Array.from(order, (i) => y[i]!);
+  const order = orderByTwo(x, y);
+  const byX = pickRows(x, order);
+  const byXThenY = pickRows(y, order);
   const sortedY = y.slice().sort();
   const xTies = tieSums((i, j) => byX[i] === byX[j], n);
   const yTies = tieSums((i, j) => sortedY[i] === sortedY[j], n);

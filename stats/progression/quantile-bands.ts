@@ -1,5 +1,6 @@
 import { pickRows, usableRows } from '../missing/usable-rows';
 import { moments } from './moments';
+import { orderByTwo } from './order-by-two';
 import { quantileSorted, type QuantileType } from './quantile';
 import { requireRange, type Provenance } from '../result';
 
@@ -39,7 +40,7 @@ export function quantileBands(
   const usable = usableRows({ value: values, week: weeks });
   const value = pickRows(values, usable.rows);
   const week = pickRows(weeks, usable.rows);
-  const order = Int32Array.from(value.keys()).sort((i, j) => week[i]! - week[j]! || value[i]! - value[j]!);
+  const order = orderByTwo(week, value);
   const bands: WeekBand[] = [];
   for (let start = 0; start < order.length; ) {
     const at = week[order[start]!]!;

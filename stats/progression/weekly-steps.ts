@@ -1,5 +1,6 @@
-import { usableRows } from '../missing/usable-rows';
-import { requireRange, type Provenance } from '../result';
+import { pickRows, usableRows } from '../missing/usable-rows';
+import type { Provenance } from '../result';
+import { orderByTwo } from './order-by-two';
 
 /** One row for each pair of logs of a participant exactly one week apart. */
 export interface WeeklySteps extends Provenance {
@@ -23,7 +24,8 @@ export interface WeeklySteps extends Provenance {
  */
 export function weeklySteps(participants: ArrayLike<number>, weeks: ArrayLike<number>, loads: ArrayLike<number>): WeeklySteps {
   const usable = usableRows({ participant: participants, week: weeks, load: loads });
-  const order = usable.rows.slice().sort((i, j) => participants[i]! - participants[j]! || weeks[i]! - weeks[j]!);
+  const order = orderByTwo(pickRows(participants, usable.rows), pickRows(weeks, usable.rows));
+  for (let k = 0; k < order.length; k++) order[k] = usable.rows[order[k]!]!;
   const from: number[] = [];
   for (let k = 0; k < order.length; k++) {
     const row = order[k]!;
@@ -32,7 +34,7 @@ export function weeklySteps(participants: ArrayLike<number>, weeks: ArrayLike<nu
     const next = order[k + 1];
     if (next === undefined || participants[next] !== participants[row]) continue;
     const gap = weeks[next]! - weeks[row]!;
-    requireRange(gap > 0, `Participant ${participants[row]} has two logs in week ${weeks[row]}.`);
+    if (gap === 0) throw new RangeError(`Participant ${participants[row]} has two logs in week ${weeks[row]}.`);
     if (gap === 1) from.push(k);
   }
   const column = (value: (row: number, next: number) => number): Float64Array =>

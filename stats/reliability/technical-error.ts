@@ -35,7 +35,10 @@ export function technicalError(first: ArrayLike<number>, second: ArrayLike<numbe
   const difference = a.map((value, row) => value - b[row]!);
   const squares = difference.reduce((sum, d) => sum + d * d, 0);
   const tem = Math.sqrt(squares / (2 * n));
-  const all = moments(Float64Array.of(...a, ...b));
+  const both = new Float64Array(2 * n);
+  both.set(a);
+  both.set(b, n);
+  const all = moments(both);
   const variance = all.sumOfSquares / (2 * n - 1);
   const tail = (1 - level) / 2;
   const spread = moments(difference).sd;
