@@ -19,6 +19,7 @@ import * as extractsPreviewRoute from './extracts/preview/route';
 import * as historyRoute from './history/route';
 import * as participantsRoute from './participants/route';
 import * as participantRoute from './participants/[code]/route';
+import * as participantIdentityRoute from './participants/[code]/identity/route';
 import * as queriesRoute from './queries/route';
 import * as queriesAnswerRoute from './queries/[id]/answer/route';
 import * as queriesAskAgainRoute from './queries/[id]/ask-again/route';
@@ -82,6 +83,7 @@ export const routes: RouteTable = {
   '/api/invitations': { POST: invitationsRoute.POST },
   '/api/participants': { GET: participantsRoute.GET },
   '/api/participants/{code}': { GET: participantRoute.GET },
+  '/api/participants/{code}/identity': { POST: participantIdentityRoute.POST },
   '/api/queries': { GET: queriesRoute.GET, POST: queriesRoute.POST },
   '/api/queries/close': { POST: queriesCloseRoute.POST },
   '/api/queries/{id}/answer': { POST: queriesAnswerRoute.POST },

@@ -84,9 +84,9 @@ export const exampleTide: TideData = {
     },
   ],
   symptoms: [
-    { on: '2026-10-01', words: ['tightness 2'], severity: 2 },
-    { on: '2026-11-09', words: ['heaviness 3,', 'long drive'], severity: 3 },
-    { on: '2027-01-18', words: ['heaviness 6,', 'arm fuller'], severity: 6 },
+    { on: '2026-10-01', words: ['tightness 2'], signCount: 2 },
+    { on: '2026-11-09', words: ['heaviness 3,', 'long drive'], signCount: 3 },
+    { on: '2027-01-18', words: ['heaviness 6,', 'arm fuller'], signCount: 6 },
   ],
   exercises: ['Chest press', 'Row', 'Curl'],
   weeks: weekly(),

@@ -138,7 +138,7 @@ function TideTables({ data }: { data: TideData }) {
         columns={[
           { id: 'on', header: 'Day', cell: (symptom) => symptom.on },
           { id: 'words', header: 'Report', cell: (symptom) => symptom.words.join(' ') },
-          { id: 'severity', header: 'Severity, 0 to 10', numeric: true, cell: (symptom) => symptom.severity },
+          { id: 'signs', header: 'Signs reported', numeric: true, cell: (symptom) => symptom.signCount },
         ]}
       />
     </div>

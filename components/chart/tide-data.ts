@@ -44,8 +44,8 @@ export interface TideSymptom {
   on: string;
   /** At most two short lines: 'heaviness 6,' 'arm fuller'. */
   words: readonly string[];
-  /** 0 to 10. */
-  severity: number;
+  /** How many signs were reported: the height of the stroke, 10 at most. */
+  signCount: number;
 }
 
 export interface TideWeek {

@@ -30,10 +30,10 @@ function withRoom(symptoms: readonly TideSymptom[], scale: TideScale): { symptom
 }
 
 function Symptom({ symptom, x, spoken }: { symptom: TideSymptom; x: number; spoken: boolean }) {
-  const { words, severity } = symptom;
+  const { words, signCount } = symptom;
   return (
     <g>
-      <path d={`M${x} ${field.symptomY}v${-4 - 3.4 * severity}`} stroke="var(--ink)" strokeWidth="2" />
+      <path d={`M${x} ${field.symptomY}v${-4 - 3.4 * Math.min(10, signCount)}`} stroke="var(--ink)" strokeWidth="2" />
       {spoken
         ? words.slice(0, 2).map((one, index) => (
             <text key={one} x={x + 7} y={330 - 16 * (Math.min(2, words.length) - 1 - index)} className="chart-label halo">

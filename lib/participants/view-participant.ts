@@ -1,8 +1,11 @@
-import { mondayOf } from '@/instruments/calendar';
+import { daysBetween, mondayOf } from '@/instruments/calendar';
+import { trainingRule } from '@/instruments/training';
+import type { TrainingRuleCode } from '@/instruments/training/define-training-rule';
 import { findExercise } from '@/instruments/training/exercises';
 import { rvcMeasurementError } from '@/instruments/measurement/rvc-measurement-error';
 import { swellingDefinition } from '@/instruments/swelling';
 import { findProtocol } from '@/lib/protocol/find-protocol';
+import { reportWords } from '@/lib/safety/report-words';
 import { Refusal } from '@/lib/work/refusal';
 import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
@@ -20,6 +23,8 @@ export interface ParticipantVisit {
   readonly doneOn: string | null;
   readonly state: 'to come' | 'in progress' | 'complete' | 'missed';
   readonly missedReason: string | null;
+  /** Where the visit lies against its window; null while it has no date, and for an extra visit. */
+  readonly deltaDays: number | null;
   readonly version: number;
   readonly rvc: number | null;
   /** The change by each of the two trials alone. */
@@ -59,13 +64,17 @@ export interface ParticipantView {
     readonly baselineWeightG: number | null;
   };
   readonly visits: readonly ParticipantVisit[];
-  readonly symptoms: readonly { readonly on: string; readonly level: string; readonly answers: unknown }[];
+  /** What was reported, in words, and how many signs it named. */
+  readonly symptoms: readonly { readonly on: string; readonly level: string; readonly said: string; readonly signCount: number }[];
   readonly weeks: readonly { readonly starts: string; readonly loads: Readonly<Record<string, number>>; readonly heaviestKg: Readonly<Record<string, number>> }[];
   readonly exercises: readonly { readonly code: string; readonly name: string }[];
-  readonly flags: readonly { readonly on: string; readonly rule: string; readonly exercise: string | null }[];
+  /** Flags of a safety or deviation rule. */
+  readonly flags: readonly { readonly on: string; readonly title: string; readonly exercise: string | null }[];
   readonly consent: { readonly number: string; readonly mode: string; readonly signedAt: string | null } | null;
   readonly threshold: { readonly percent: number; readonly name: string };
   readonly errorPoints: number;
+  /** Days without training from which a break counts. */
+  readonly breakDays: number;
 }
 
 interface Head {
@@ -98,7 +107,7 @@ async function findHead(work: Work, code: string): Promise<Head> {
   return head;
 }
 
-interface VisitRow extends Omit<ParticipantVisit, 'trials'> {
+interface VisitRow extends Omit<ParticipantVisit, 'trials' | 'deltaDays'> {
   sides: { side: 'left' | 'right'; trial: number; girthsMm: (number | null)[] }[] | null;
   map: { startOffsetMm: number; stepMm: number; levels: number } | null;
   method: string | null;
@@ -141,7 +150,7 @@ export async function viewParticipant(work: Work, { code }: { code: string }): P
   const head = await findHead(work, code);
   const { document } = await findProtocol(work, head.protocol_version_id);
   const visits = await visitsOf(work, head.id);
-  const symptoms = await work.sql<ParticipantView['symptoms'][number]>(
+  const symptoms = await work.sql<{ on: string; level: string; answers: { signs?: unknown[] } }>(
     'select noticed_on::text as "on", level, answers from symptom_report where participant_id = ? order by noticed_on',
     [head.id],
   );
@@ -150,8 +159,8 @@ export async function viewParticipant(work: Work, { code }: { code: string }): P
      from training_session s join training_set t on t.session_id = s.id where s.participant_id = ? group by s.local_on, t.exercise order by s.local_on`,
     [head.id],
   );
-  const flags = await work.sql<ParticipantView['flags'][number]>(
-    `select s.local_on::text as "on", f.rule, f.exercise from training_flag f join training_session s on s.id = f.session_id where f.participant_id = ? and f.state <> 'withdrawn' order by s.local_on`,
+  const flags = await work.sql<{ on: string; rule: TrainingRuleCode; exercise: string | null }>(
+    `select s.local_on::text as "on", f.rule, f.exercise from training_flag f join training_session s on s.id = f.session_id where f.participant_id = ? and f.state <> 'withdrawn' and f.detail ->> 'severity' in ('safety', 'deviation') order by s.local_on`,
     [head.id],
   );
   const primary = swellingDefinition(document.swelling.primary);
@@ -170,12 +179,14 @@ export async function viewParticipant(work: Work, { code }: { code: string }): P
     facts: { ...head.facts, cohort: document.cohorts.find(({ key }) => key === head.facts.cohort)?.name ?? head.facts.cohort },
     visits: visits.map(({ sides, map, method, ...visit }) => ({
       ...visit,
+      deltaDays: visit.doneOn === null || visit.key === 'extra' ? null : daysBetween({ from: visit.targetOn, to: visit.doneOn }),
       trials: sides && map && baseline?.leftVolumeMl && baseline.rightVolumeMl ? changeByTrial({ sides, map, method, affectedSide: head.facts.affectedSide, baseline: { leftMl: baseline.leftVolumeMl, rightMl: baseline.rightVolumeMl } }) : null,
     })),
-    symptoms,
+    symptoms: symptoms.map(({ on, level, answers }) => ({ on, level, said: reportWords(answers), signCount: Math.max(1, answers.signs?.length ?? 0) })),
     weeks: weeksOf(loads),
     exercises: document.exercises.map((exercise) => ({ code: exercise, name: findExercise(exercise)?.name ?? exercise })),
-    flags,
+    flags: flags.map(({ on, rule, exercise }) => ({ on, title: trainingRule(rule).title, exercise: exercise === null ? null : (findExercise(exercise)?.name ?? exercise) })),
+    breakDays: document.training.breakDays,
     consent: head.consent,
     threshold: { percent: document.swelling.primary === 'D5' ? 5 : 10, name: primary.name },
     errorPoints: rvcMeasurementError(document.measurement.semPct),
