@@ -24,8 +24,8 @@ export interface ParticipantListProps {
 
 type Filters = Pick<ListParticipantsInput, 'q' | 'swelling'> & { siteId: string; cohort: string; state: string };
 
-const any = '';
-const none: Filters = { q: '', swelling: 'any', siteId: any, cohort: any, state: any };
+const every = '';
+const none: Filters = { q: '', swelling: 'any', siteId: every, cohort: every, state: every };
 
 const address = (filters: Filters, { pageIndex, pageSize }: PaginationState, [sort]: SortingState): string =>
   new URLSearchParams({
@@ -34,7 +34,7 @@ const address = (filters: Filters, { pageIndex, pageSize }: PaginationState, [so
     sort: sort?.id ?? 'code',
     direction: sort?.desc ? 'desc' : 'asc',
     swelling: filters.swelling,
-    ...Object.fromEntries((['q', 'siteId', 'cohort', 'state'] as const).flatMap((key) => (filters[key] === any ? [] : [[key, filters[key]]]))),
+    ...Object.fromEntries((['q', 'siteId', 'cohort', 'state'] as const).flatMap((key) => (filters[key] === every ? [] : [[key, filters[key]]]))),
   }).toString();
 
 const rowId = (row: ParticipantRow): string => row.id;
@@ -99,7 +99,7 @@ function FilterSentence({ filters, change, choices, found }: { filters: Filters;
             label="site"
             value={filters.siteId}
             onChange={({ target }) => change({ siteId: target.value })}
-            choices={[{ value: any, label: 'every site' }, ...sites.map(({ id, name }) => ({ value: id, label: name }))]}
+            choices={[{ value: every, label: 'every site' }, ...sites.map(({ id, name }) => ({ value: id, label: name }))]}
           />
         </>
       ) : null}{' '}
@@ -108,7 +108,7 @@ function FilterSentence({ filters, change, choices, found }: { filters: Filters;
         label="cohort"
         value={filters.cohort}
         onChange={({ target }) => change({ cohort: target.value })}
-        choices={[{ value: any, label: 'every cohort' }, ...cohorts.map(({ key, name }) => ({ value: key, label: name }))]}
+        choices={[{ value: every, label: 'every cohort' }, ...cohorts.map(({ key, name }) => ({ value: key, label: name }))]}
       />
       , who are{' '}
       <ChoiceInSentence
@@ -116,7 +116,7 @@ function FilterSentence({ filters, change, choices, found }: { filters: Filters;
         value={filters.state}
         onChange={({ target }) => change({ state: target.value })}
         choices={[
-          { value: any, label: 'in any state' },
+          { value: every, label: 'in any state' },
           { value: 'enrolled', label: 'in the study' },
           { value: 'withdrawn', label: 'withdrawn' },
           { value: 'completed', label: 'completed' },
