@@ -103,6 +103,17 @@ describe('a limb assessment', () => {
     await expect(complete(view)).rejects.toMatchObject({ code: 'invalid', field: 'left 3 1' });
   });
 
+  test('pressed twice is saved once', async () => {
+    const who = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
+    const view = await measure(who, 'baseline', { left: vol03, right: vol03 });
+    const kept = [{ check: 'arms.identical', place: 'whole', reason: 'Both arms read again, the same.' }];
+    const answers = await Promise.allSettled([complete(view, kept), complete(view, kept)]);
+    expect(answers.map(({ status }) => status).toSorted()).toEqual(['fulfilled', 'rejected']);
+    const { rows } = await withWork(monitor, 'query.list', (work) => listQueries(work, listQueriesInput.parse({ pageSize: 100 })));
+    // The doubt was kept with a reason: it stands in the margin and asks nothing.
+    expect(rows.filter(({ participantCode }) => participantCode === who.code)).toEqual([]);
+  });
+
   test('of another site does not exist, and a monitor does not measure', async () => {
     const who = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
     const view = await measure(who, 'baseline', { left: vol03, right: vol03 });
