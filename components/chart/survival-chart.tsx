@@ -1,4 +1,4 @@
-import { formatLimits, formatPercent } from '../ui/format';
+import { formatCount, formatLimits, formatPercent } from '../ui/format';
 import { PlainTable } from '../ui/plain-table';
 import { ChartFigure } from './chart-figure';
 import { SurvivalPanel } from './survival-panel';
@@ -21,8 +21,8 @@ export interface Curve {
   steps: readonly CurveStep[];
   /** Last time anybody was followed: the line ends there. */
   lastTime: number;
-  /** Still followed without the event at each of `riskTimes`. */
-  atRisk: readonly number[];
+  /** Still followed without the event at each of `riskTimes`; null where a small count is not shown. */
+  atRisk: readonly (number | null)[];
 }
 
 export interface SurvivalChartProps {
@@ -72,6 +72,9 @@ export function stepAt(curve: Curve, time: number): CurveStep | null {
   return curve.steps.filter((step) => step.time <= time).at(-1) ?? null;
 }
 
+/** '113'; '<5' where a small count is not shown. */
+export const riskWords = (count: number | null | undefined): string => (count === null ? '<5' : formatCount(count ?? 0));
+
 function CurveTable({
   curves,
   riskTimes,
@@ -92,7 +95,7 @@ function CurveTable({
             id: `${curve.label}-risk`,
             header: `${curve.label}, still followed`,
             numeric: true,
-            cell: (time: number) => curves[index]?.atRisk[riskTimes.indexOf(time)] ?? '',
+            cell: (time: number) => riskWords(curves[index]?.atRisk[riskTimes.indexOf(time)]),
           },
         ]),
       ]}

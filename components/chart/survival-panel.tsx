@@ -1,8 +1,8 @@
 import { scaleLinear } from 'd3-scale';
 import { area, curveStepAfter, line } from 'd3-shape';
-import { formatCount, formatNumber, formatPercent } from '../ui/format';
+import { formatNumber, formatPercent } from '../ui/format';
 import { ScaleBar, Staff } from '../ui/staff';
-import { stepAt, type Curve, type CurveStep } from './survival-chart';
+import { riskWords as riskCountWords, stepAt, type Curve, type CurveStep } from './survival-chart';
 
 const box = { left: 44, right: 430, top: 16, foot: 266 } as const;
 
@@ -54,7 +54,7 @@ export function SurvivalPanel({ curve, beside, riskTimes, timeUnit, readAt, risk
       </text>
       {riskTimes.map((time, index) => (
         <text key={time} x={x(time)} y="342" textAnchor="middle" className="chart-figure">
-          {formatCount(curve.atRisk[index] ?? 0)}
+          {riskCountWords(curve.atRisk[index])}
         </text>
       ))}
     </svg>

@@ -15,7 +15,7 @@ function everyStage({ screened, screening, notEnrolled, enrolled, withBaseline, 
   const before = (index: number) => (index === 0 ? withBaseline : (followed[index - 1]?.measured ?? 0));
   const leaving = (index: number) => {
     const next = followed[index];
-    return next ? [{ reason: 'not yet due', count: before(index) - next.due }, { reason: 'due and not measured', count: next.due - next.measured }] : [];
+    return next ? [{ reason: 'not yet due', count: before(index) - next.due }, { reason: 'not measured', count: next.due - next.measured }] : [];
   };
   return [
     { name: 'Screened', people: screened, reasons: [...notEnrolled, { reason: 'still in screening', count: screening }] },
@@ -33,10 +33,10 @@ export function viewFlow(flow: ParticipantFlow, below: number): FlowStageView[] 
   const shown: Stage[] = [];
   for (const stage of everyStage(flow)) {
     const last = shown.at(-1);
-    const lost = last ? last.people - stage.people : below;
+    const lost = last ? last.people - stage.people : 0;
     const isSmall = stage.people < below || (lost > 0 && lost < below);
-    if (!isSmall || !last) shown.push(stage);
-    else last.reasons = [...last.reasons, ...stage.reasons];
+    if (!isSmall) shown.push(stage);
+    else if (last) last.reasons = [...last.reasons, ...stage.reasons];
   }
   return shown.map(({ name, people, reasons }, index) => {
     const leaving = reasons.filter(({ count }) => count > 0);

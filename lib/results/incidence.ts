@@ -26,12 +26,14 @@ export interface IncidenceView {
   readonly code: SwellingCode;
   readonly name: string;
   readonly sentence: string;
-  readonly steps: readonly { readonly day: number; readonly share: number; readonly lower: number | null; readonly upper: number | null }[];
+  readonly steps: readonly { readonly day: number; readonly month: number; readonly share: number; readonly lower: number | null; readonly upper: number | null }[];
   readonly lastDay: number;
+  /** The same in mean months, as drawn. */
+  readonly lastMonth: number;
   /** Still followed at each of `riskMonths`. */
   readonly atRisk: readonly ShownCount[];
   readonly at: readonly IncidenceAt[];
-  readonly n: number;
+  readonly n: ShownCount;
   readonly events: ShownCount;
   readonly method: string;
   readonly reference: string;
@@ -40,8 +42,8 @@ export interface IncidenceView {
 }
 
 /** A mean month (365.25 days over 12), for reading a curve in days at months. */
-export const monthDays = 30.4375;
-export const riskMonths = [0, 6, 12, 18, 24] as const;
+const monthDays = 30.4375;
+export const riskMonths = [0, 3, 6, 9, 12, 15, 18, 21, 24] as const;
 const readMonths = [6, 12, 24] as const;
 
 /** One minus a survival limit; null where it does not exist. */
@@ -51,7 +53,7 @@ const complement = (limit: number | null | undefined): number | null => (limit =
 function stepsOf(curve: SurvivalCurve, lastDay: number): IncidenceView['steps'] {
   return Array.from(curve.time, (day, index) => ({ day, index }))
     .filter(({ day, index }) => day <= lastDay && (curve.eventsAt[index] ?? 0) > 0)
-    .map(({ day, index }) => ({ day, share: 1 - (curve.survival[index] ?? 1), lower: complement(curve.upper[index]), upper: complement(curve.lower[index]) }));
+    .map(({ day, index }) => ({ day, month: day / monthDays, share: 1 - (curve.survival[index] ?? 1), lower: complement(curve.upper[index]), upper: complement(curve.lower[index]) }));
 }
 
 /** The last day of the curve; under a limit, the last on which that many were still followed (DEI-18). */
@@ -83,9 +85,10 @@ export function incidenceOf(code: SwellingCode, followUp: SwellingFollowUp, belo
     sentence,
     steps: stepsOf(curve, lastDay),
     lastDay,
+    lastMonth: lastDay / monthDays,
     atRisk: numberAtRisk(followUp, riskMonths.map((months) => months * monthDays)).map((count) => showCount(count, below)),
     at: readMonths.map((months) => readAt(curve, followUp, months, { lastDay, below })),
-    n: curve.n,
+    n: showCount(curve.n, below),
     events: showCount(curve.events, below),
     method: methodOf('kaplanMeier'),
     reference: statistics.find(({ name: statistic }) => statistic === 'kaplanMeier')?.reference ?? '',

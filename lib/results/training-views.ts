@@ -34,8 +34,8 @@ export interface ShareOfWeeks {
 export interface AdherenceView {
   readonly kept: ShareOfWeeks;
   readonly broken: readonly (ShareOfWeeks & { readonly rule: string; readonly title: string })[];
-  readonly weeks: number;
-  readonly people: number;
+  readonly weeks: ShownCount;
+  readonly people: ShownCount;
   readonly method: string;
 }
 
@@ -76,8 +76,8 @@ export async function viewAdherence(work: Work, population: Population, below: n
     // The weeks not kept are the rest: a small rest is hidden by hiding the share.
     kept: showCount(notKept, below) === null ? { share: null, lower: null, upper: null, count: null } : all,
     broken: [...broken].map(([rule, weeks]) => ({ rule, title: trainingRule(rule).title, ...shareOf(weeks, participant, below) })),
-    weeks: n,
-    people: clusters,
+    weeks: showCount(n, below),
+    people: showCount(clusters, below),
     method,
   };
 }

@@ -1,0 +1,52 @@
+'use client';
+
+import { usePathname, useRouter, useSearchParams } from 'next/navigation';
+import { useTransition } from 'react';
+import type { ResultsView } from '@/lib/results/view-results';
+import { confirmations } from '@/lib/results/input';
+import { ChoiceInSentence } from '../ui/in-sentence';
+
+const confirmationWords: Record<(typeof confirmations)[number], string> = { 'first visit': 'at any visit', 'confirmed at the next visit': 'at two scheduled visits in a row' };
+
+/** Who the figures are about and how swelling is counted, edited where it is said. */
+export function ResultsSentence({ view }: { view: Pick<ResultsView, 'cohorts' | 'sites' | 'definitions' | 'chosen' | 'confirmation'> }) {
+  const router = useRouter();
+  const path = usePathname();
+  const asked = useSearchParams();
+  const [isWaiting, begin] = useTransition();
+  const { cohorts, sites, definitions, chosen, confirmation } = view;
+  const choose = (name: string, value: string) => {
+    const next = new URLSearchParams(asked);
+    if (value) next.set(name, value);
+    else next.delete(name);
+    begin(() => router.replace(`${path}?${next.toString()}`, { scroll: false }));
+  };
+  const definitionChoices = definitions.map(({ code, name }) => ({ value: code, label: name }));
+  const whole = sites.length === 1 ? (sites[0]?.name ?? 'the site') : `all ${sites.length} sites`;
+  return (
+    <span aria-busy={isWaiting} className="leading-[2]">
+      Everyone with a baseline in{' '}
+      <ChoiceInSentence label="cohort" value={chosen.cohort ?? ''} onChange={(event) => choose('cohort', event.target.value)} choices={[{ value: '', label: 'every cohort' }, ...cohorts.map(({ key, name }) => ({ value: key, label: `‘${name}’` }))]} /> at{' '}
+      {sites.length > 1 ? (
+        <ChoiceInSentence label="site" value={chosen.siteId ?? ''} onChange={(event) => choose('siteId', event.target.value)} choices={[{ value: '', label: whole }, ...sites.map(({ id, name }) => ({ value: id, label: name }))]} />
+      ) : (
+        whole
+      )}
+      , swelling counted by <ChoiceInSentence label="definition A" value={chosen.first} onChange={(event) => choose('first', event.target.value)} choices={definitionChoices} /> beside{' '}
+      <ChoiceInSentence label="definition B" value={chosen.second} onChange={(event) => choose('second', event.target.value)} choices={definitionChoices} />, met{' '}
+      <ChoiceInSentence label="confirmation" value={confirmation} onChange={(event) => choose('confirmation', event.target.value)} choices={confirmations.map((value) => ({ value, label: confirmationWords[value] }))} />.{' '}
+      <span role="status" className="t-small text-ink-2">
+        {isWaiting ? 'Working out the results.' : ''}
+      </span>
+    </span>
+  );
+}
+
+/** The browser's own printing; the print style of every page does the rest. */
+export function PrintButton() {
+  return (
+    <button type="button" className="btn" onClick={() => window.print()}>
+      <span>Print or save</span>
+    </button>
+  );
+}

@@ -1,0 +1,14 @@
+import { formatCount, formatLimits, formatPercent } from '../ui/format';
+
+/** '38'; '<5' where a small count is not shown. */
+export const countWords = (count: number | null): string => (count === null ? '<5' : formatCount(count));
+
+/** '9.1 %', or why there is none. */
+export const shareWords = (share: number | null, reason: string | null): string => (share === null ? (reason ?? 'none yet') : formatPercent(share));
+
+/** '5.0 to 16.4'; nothing where limits do not exist. */
+export const limitWords = (lower: number | null, upper: number | null): string => (lower === null || upper === null ? '' : formatLimits(lower, upper));
+
+/** '55 not eligible, 12 no time'. */
+export const reasonWords = (reasons: readonly { reason: string; count: number | null }[]): string =>
+  reasons.map(({ reason, count }) => `${countWords(count)} ${reason.charAt(0).toLowerCase()}${reason.slice(1)}`).join(', ');
