@@ -155,7 +155,7 @@ export function verificationEvents({ plan, person, draw, ids }: Scene, visits: r
       ...(asEntered.impedanceRatio === null ? [] : [mark('limb_assessment', assessmentId, 'impedance_ratio', asEntered.impedanceRatio)]),
       mark('limb_assessment', assessmentId, 'sleeve_worn', sitting.sleeveWorn),
       ...(sitting.hoursSinceTraining === null ? [] : [mark('limb_assessment', assessmentId, 'hours_since_training', sitting.hoursSinceTraining)]),
-      ...(readsTape ? asEntered.trials.flatMap(({ side, trial, circumferencesMm }) => circumferencesMm.flatMap((girthMm, level) => {
+      ...(readsTape && plan.marksTape ? asEntered.trials.flatMap(({ side, trial, circumferencesMm }) => circumferencesMm.flatMap((girthMm, level) => {
         const slipped = slip?.kind === 'trial' && slip.side === side && slip.trial === trial && slip.level === level;
         return girthMm === null || slipped ? [] : [mark('limb_trial', sitting.trialIds.get(`${side} ${trial}`) ?? '', `circumferences_mm.${level}`, girthMm)];
       })) : []),

@@ -49,6 +49,8 @@ export interface Plan {
   readonly dataManager: Staff;
   /** Training is written down for this many weeks at most. */
   readonly logWeeks: number;
+  /** Whether the monitor marks every girth of the sittings checked in full. */
+  readonly marksTape: boolean;
 }
 
 export const system: Doer = { accountId: systemAccountId, role: 'system', label: 'Tidemark' };
@@ -100,7 +102,7 @@ const places = [
 ] as const;
 
 /** Lays out the study for a number of participants, as of one moment. */
-export function layOut({ seed, now, participants, logWeeks }: { seed: number; now: Date; participants: number; logWeeks: number }): Plan {
+export function layOut({ seed, now, participants, logWeeks, marksTape = true }: { seed: number; now: Date; participants: number; logWeeks: number; marksTape?: boolean }): Plan {
   const clock = new DemoClock(now);
   const draw = Draw.of(seed, 0, 'ids');
   const ids = { study: draw.uuid(), protocol: draw.uuid(), consentForm: draw.uuid() };
@@ -123,7 +125,7 @@ export function layOut({ seed, now, participants, logWeeks }: { seed: number; no
   }));
   const today = clock.today('Europe/London');
   return {
-    seed, clock, protocol: protocolDocument, ids, sites, staff, logWeeks,
+    seed, clock, protocol: protocolDocument, ids, sites, staff, logWeeks, marksTape,
     startsOn: addDays(today, -775),
     endsOn: addDays(today, 686),
     monitor: staff.find(({ role }) => role === 'monitor') as Staff,

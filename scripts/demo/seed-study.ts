@@ -1,3 +1,4 @@
+import { setImmediate as nextTurn } from 'node:timers/promises';
 import type { Client } from 'pg';
 import { inOrder, type DemoEvent } from './events';
 import { people, studyEvents } from './generate';
@@ -15,7 +16,7 @@ export interface SeedOptions {
 export const demoDefaults = { participants: 150, seed: 20 } as const;
 
 /** Weeks of training a light load keeps for each participant. */
-const lightLogWeeks = 4;
+const lightLogWeeks = 3;
 /** People in one bulk load. */
 const crowd = 400;
 
@@ -31,7 +32,7 @@ export async function stateOf(client: Client): Promise<'empty' | 'seeded' | 'bro
 
 /** Fills an empty data base with the invented study. The last thing written says that the whole is there. */
 export async function seedStudy(client: Client, options: SeedOptions): Promise<Plan> {
-  const plan = layOut({ ...options, logWeeks: options.light ? lightLogWeeks : 200 });
+  const plan = layOut({ ...options, ...(options.light ? { logWeeks: lightLogWeeks, marksTape: false } : { logWeeks: 200, marksTape: true }) });
   if (options.light) await loadLight(client, plan);
   else await loadWithTrail(client, inOrder([...studyEvents(plan), ...[...people(plan)].flatMap(({ events }) => events)]));
   await client.query(`select set_config('app.actor', '00000000-0000-4000-8000-000000000001', false), set_config('app.act', 'demo.seed', false), set_config('app.role', 'system', false)`);
@@ -44,14 +45,21 @@ async function loadLight(client: Client, plan: Plan): Promise<void> {
   await withoutTrail(client, async () => {
     await loadFinalRows(client, studyEvents(plan));
     let waiting: DemoEvent[] = [];
+    let loading = Promise.resolve();
     let heads = 0;
     for (const { events } of people(plan)) {
       waiting.push(...events);
       heads += 1;
+      // Gives way to the load under way: the data base works on one crowd while the next is invented.
+      await nextTurn();
       if (heads % crowd !== 0) continue;
-      await loadFinalRows(client, waiting);
+      await loading;
+      loading = loadFinalRows(client, waiting);
+      // Its failure is met at the next await; until then it must not count as unhandled.
+      loading.catch(() => undefined);
       waiting = [];
     }
+    await loading;
     await loadFinalRows(client, waiting);
   });
 }
