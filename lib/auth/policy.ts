@@ -31,6 +31,8 @@ export const policy = {
   'session.choose-role': signIn(write('system')),
   'session.hand-over': signIn(write('system')),
   'invitation.view': signIn(read('system')),
+  // The public page: names of sites and how many take part, nothing else.
+  'welcome.view': read('system'),
   // What the masthead says on every page.
   'shell.view': read(...grantedRoles),
   // The site's day.
