@@ -26,17 +26,28 @@ export const doubtId = ({ check, place }: Pick<Doubt, 'check' | 'place'>): strin
 /** What is doubtful, in words, each with its two ways out: measure it again, or keep it and say why. */
 export function BeforeYouSave({ doubts, map, onMeasureAgain, onKeep }: BeforeYouSaveProps) {
   if (doubts.length === 0) return null;
+  const pressing = doubts.filter((doubt) => isPressing(doubt));
+  const hints = doubts.filter((doubt) => !isPressing(doubt));
+  const rest = hints.length - hintsShown;
   return (
     <section className="before-save" aria-labelledby="before-save">
       <h3 id="before-save">Before you save</h3>
       <ul>
-        {doubts.map((doubt) => (
+        {[...pressing, ...hints.slice(0, hintsShown)].map((doubt) => (
           <DoubtLine key={`${doubt.check} ${doubt.place}`} {...{ doubt, map, onMeasureAgain, onKeep }} />
         ))}
       </ul>
+      {rest > 0 ? <p className="t-small text-ink-2">And {rest} more that are unusual. If the tape reads so, there is nothing to do.</p> : null}
     </section>
   );
 }
+
+/** Unusual values are listed up to here: an arm that is unusual throughout should not hide what is doubtful. */
+const hintsShown = 6;
+
+/** Waits for something: a reason, a third reading, or a figure that can be read. */
+export const isPressing = ({ check, severity }: Pick<Doubt, 'check' | 'severity'>): boolean =>
+  severity !== 'hint' || check === 'trials.differ' || check === 'entry.read';
 
 const elsewhere: Record<string, string> = { weight: 'Body weight', ratio: 'Impedance ratio', whole: 'Both arms', left: 'Left arm', right: 'Right arm' };
 

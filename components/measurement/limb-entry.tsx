@@ -7,7 +7,7 @@ import type { OpenAssessmentView } from '@/lib/measurement/view-open';
 import { ProblemError, send } from '../api/send';
 import { useToast } from '../ui/toast';
 import { ArmDrawing } from './arm-drawing';
-import { BeforeYouSave, doubtId, type ListedDoubt } from './before-you-save';
+import { BeforeYouSave, doubtId, isPressing, type ListedDoubt } from './before-you-save';
 import { BesideTape, doubtsBeside, readCircumstances, typedCircumstances, type TypedCircumstances } from './beside-tape';
 import { cellId, EntryGrid } from './entry-grid';
 import { ArmChoice, DrawingHead, EntryFoot, GridWords, SaveWords } from './entry-parts';
@@ -120,7 +120,7 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
 
   const keep = (doubt: Doubt, reason: string | null) =>
     setKept(({ [keyOf(doubt)]: _before, ...others }) => (reason === null ? others : { ...others, [keyOf(doubt)]: { message: doubt.message, reason } }));
-  const rings = new Map(doubts.filter(({ reason }) => reason === null).map(({ place, message }) => [place, message]));
+  const rings = new Map(doubts.filter((doubt) => doubt.reason === null && isPressing(doubt)).map(({ place, message }) => [place, message]));
   if (refusal && cellOf(refusal.place)) rings.set(refusal.place, refusal.sentence);
   const dents = doubts.flatMap(({ place, reason, severity, check }) => {
     const cell = cellOf(place);
