@@ -52,7 +52,7 @@ function Shares({ adherence }: { adherence: Adherence }) {
         </p>
       )}
       <p className="mt-5 text-ink-2">Weeks in which a rule was broken</p>
-      {broken.map(({ rule, title, ...share }) => bar(title, share, true))}
+      {broken.map((one) => bar(one.title, one, true))}
     </>
   );
 }
