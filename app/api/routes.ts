@@ -2,6 +2,8 @@ import type { RouteTable } from '@/lib/web/openapi';
 import * as assessmentsCircumstancesRoute from './assessments/[id]/circumstances/route';
 import * as assessmentsCompleteRoute from './assessments/[id]/complete/route';
 import * as assessmentsTrialRoute from './assessments/[id]/trials/[side]/[trial]/route';
+import * as auditRoute from './audit/route';
+import * as auditFileRoute from './audit/file/route';
 import * as consentRoute from './consents/[id]/route';
 import * as consentsCountersignRoute from './consents/[id]/countersign/route';
 import * as consentsFileWhichRoute from './consents/[id]/file/[which]/route';
@@ -20,6 +22,7 @@ import * as historyRoute from './history/route';
 import * as participantsRoute from './participants/route';
 import * as participantRoute from './participants/[code]/route';
 import * as participantIdentityRoute from './participants/[code]/identity/route';
+import * as peopleRoute from './people/route';
 import * as queriesRoute from './queries/route';
 import * as queriesAnswerRoute from './queries/[id]/answer/route';
 import * as queriesAskAgainRoute from './queries/[id]/ask-again/route';
@@ -65,6 +68,8 @@ export const routes: RouteTable = {
   '/api/assessments/{id}/circumstances': { PUT: assessmentsCircumstancesRoute.PUT },
   '/api/assessments/{id}/complete': { POST: assessmentsCompleteRoute.POST },
   '/api/assessments/{id}/trials/{side}/{trial}': { PUT: assessmentsTrialRoute.PUT },
+  '/api/audit': { GET: auditRoute.GET },
+  '/api/audit/file': { GET: auditFileRoute.GET },
   '/api/consents/{id}': { GET: consentRoute.GET },
   '/api/consents/{id}/countersign': { POST: consentsCountersignRoute.POST },
   '/api/consents/{id}/file/{which}': { GET: consentsFileWhichRoute.GET },
@@ -84,6 +89,7 @@ export const routes: RouteTable = {
   '/api/participants': { GET: participantsRoute.GET },
   '/api/participants/{code}': { GET: participantRoute.GET },
   '/api/participants/{code}/identity': { POST: participantIdentityRoute.POST },
+  '/api/people': { GET: peopleRoute.GET },
   '/api/queries': { GET: queriesRoute.GET, POST: queriesRoute.POST },
   '/api/queries/close': { POST: queriesCloseRoute.POST },
   '/api/queries/{id}/answer': { POST: queriesAnswerRoute.POST },
