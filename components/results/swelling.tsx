@@ -39,6 +39,8 @@ function LeftOut({ label, view }: { label: string; view: Incidence }) {
 export function Swelling({ view }: { view: ResultsView }) {
   const [a, b] = view.incidence;
   const isConfirmed = view.confirmation !== 'first visit';
+  // The drawing reads its own steps: where the share may not be said, it is not read off either.
+  const isReadable = [a, b].every(({ at }) => at.some(({ months, share }) => months === 12 && share !== null));
   const rows = a.at.map((read, index) => ({ a: read, b: b.at[index] ?? read }));
   return (
     <Columns
@@ -55,7 +57,7 @@ export function Swelling({ view }: { view: ResultsView }) {
             ))}
             <p>The date of swelling is the visit it was first seen, so the steps gather at visits. Those who left are taken to be like those who stayed; nobody is recorded as having died before swelling, so no competing event is handled.</p>
             <p>Both panels share one scale. The dashes in B repeat A. A month is 30.4 days.</p>
-            {view.suppressBelow > 0 ? <p>Your role is shown no count from 1 to {view.suppressBelow - 1} and no share that rests on one; a curve ends where fewer than {view.suppressBelow} are followed.</p> : null}
+            {view.suppressBelow > 0 ? <p>Your role is shown no count from 1 to {view.suppressBelow - 1} and no share that rests on one: the first {view.suppressBelow} people with swelling are drawn as one step, and a curve ends where fewer than {view.suppressBelow} are followed.</p> : null}
             <p className="text-[12.5px]">{a.reference}.</p>
             <p className="text-note">This is a group without a comparison arm. It cannot say that lifting causes or prevents swelling.</p>
           </div>
@@ -67,7 +69,7 @@ export function Swelling({ view }: { view: ResultsView }) {
         curves={[curveOf(a, 'A', isConfirmed), curveOf(b, 'B', isConfirmed)]}
         riskTimes={view.riskMonths}
         timeUnit="months"
-        readAt={12}
+        {...(isReadable ? { readAt: 12 } : {})}
         riskWords="still followed, without swelling"
         eventWords="swelling"
         finding={findingOf(view.incidence)}

@@ -49,10 +49,12 @@ const readMonths = [6, 12, 24] as const;
 /** One minus a survival limit; null where it does not exist. */
 const complement = (limit: number | null | undefined): number | null => (limit == null || Number.isNaN(limit) ? null : 1 - limit);
 
-/** The steps at which somebody swells; where only follow-up ends the curve does not move. */
-function stepsOf(curve: SurvivalCurve, lastDay: number): IncidenceView['steps'] {
-  return Array.from(curve.time, (day, index) => ({ day, index }))
-    .filter(({ day, index }) => day <= lastDay && (curve.eventsAt[index] ?? 0) > 0)
+/** The steps at which somebody swells; where only follow-up ends the curve does not move. Under a limit the first that many people are one step. */
+function stepsOf(curve: SurvivalCurve, { lastDay, below }: { lastDay: number; below: number }): IncidenceView['steps'] {
+  let swelled = 0;
+  return Array.from(curve.time, (day, index) => ({ day, index, events: curve.eventsAt[index] ?? 0 }))
+    .map((step) => ({ ...step, swelled: (swelled += step.events) }))
+    .filter((step) => step.day <= lastDay && step.events > 0 && step.swelled >= below)
     .map(({ day, index }) => ({ day, month: day / monthDays, share: 1 - (curve.survival[index] ?? 1), lower: complement(curve.upper[index]), upper: complement(curve.lower[index]) }));
 }
 
@@ -83,7 +85,7 @@ export function incidenceOf(code: SwellingCode, followUp: SwellingFollowUp, belo
     code,
     name,
     sentence,
-    steps: stepsOf(curve, lastDay),
+    steps: stepsOf(curve, { lastDay, below }),
     lastDay,
     lastMonth: lastDay / monthDays,
     atRisk: numberAtRisk(followUp, riskMonths.map((months) => months * monthDays)).map((count) => showCount(count, below)),
