@@ -16,6 +16,9 @@ export interface LimbPageView {
   readonly today: string;
   /** How the arms are held, as the protocol says. */
   readonly protocolPosition: string;
+  /** Where the tape is laid, and how far two readings may differ: of the assessment, or of the protocol before it began. */
+  readonly map: { readonly startOffsetMm: number; readonly stepMm: number; readonly levelCount: number };
+  readonly toleranceMm: number;
   readonly assessment: OpenAssessmentView | CompleteAssessmentView | null;
 }
 
@@ -31,6 +34,8 @@ export async function viewLimbPage(work: Work, { visitId, code }: { visitId: str
   );
   if (whose?.code !== code) throw new Refusal('not-found', 'There is no such visit in your reach.');
   const { measurement } = (await findProtocol(work, visit.protocolVersionId)).document;
+  const assessment = await viewAssessment(work, { visitId });
+  const { startOffsetMm, stepMm, levelCount, toleranceMm } = measurement;
   return {
     visit: toVisitView(visit),
     code,
@@ -38,6 +43,8 @@ export async function viewLimbPage(work: Work, { visitId, code }: { visitId: str
     siteName: whose.site_name,
     today: localDate(work.now, whose.time_zone),
     protocolPosition: measurement.position,
-    assessment: await viewAssessment(work, { visitId }),
+    map: assessment?.map ?? { startOffsetMm, stepMm, levelCount },
+    toleranceMm: assessment?.toleranceMm ?? toleranceMm,
+    assessment,
   };
 }

@@ -16,7 +16,7 @@ export default async function Page({ params }: Props) {
   const { code, visitId } = await params;
   const page = await loadPage('assessment.view', (work) => viewLimbPage(work, { code, visitId }));
   const { actor } = await requireSession();
-  const { visit, affectedSide, assessment } = page;
+  const { visit, affectedSide } = page;
   return (
     <>
       <PageHead
@@ -28,8 +28,8 @@ export default async function Page({ params }: Props) {
           { term: 'Participant', value: `${code}, ${affectedSide} arm affected` },
           { term: 'Date', value: formatDate(visit.doneOn ?? page.today) },
           { term: 'At', value: page.siteName },
-          { term: 'Marks', value: assessment ? marksInWords(assessment.map) : 'as the protocol lays them' },
-          { term: 'A third reading beyond', value: assessment ? `${(assessment.toleranceMm / 10).toFixed(1)} cm between trials` : 'the protocol’s tolerance' },
+          { term: 'Marks', value: marksInWords(page.map) },
+          { term: 'A third reading beyond', value: `${(page.toleranceMm / 10).toFixed(1)} cm between trials` },
         ]}
       />
       <LimbPage page={page} mayMeasure={may(actor.role, 'assessment.begin')} />
