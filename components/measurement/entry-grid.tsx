@@ -53,7 +53,8 @@ export function EntryGrid(props: EntryGridProps) {
           </th>
           {columns.map(({ side, trial }) => (
             <th key={`${side} ${trial}`} scope="col" data-side={side}>
-              {sideWord[side]}
+              <span className="entry-side">{sideWord[side]}</span>
+              <span className="entry-phone">{trial === 3 ? 'Third' : `Trial ${trial}`}</span>
             </th>
           ))}
         </tr>
