@@ -36,6 +36,8 @@ export class ProtocolConsent extends Migration {
       check (state <> 'complete' or (participant_signed_at is not null and staff_signed_at is not null)),
       check (mode <> 'paper' or state in ('reading', 'set aside') or paper_file_id is not null))`);
     this.addSql(`create unique index consent_one_open on consent (screening_id) where state in ('reading', 'signed by participant')`);
+    this.addSql('create index consent_participant on consent (participant_id)');
+    this.addSql('create index consent_screening on consent (screening_id, created_at)');
     this.addSql(`create table consent_signature (
       id uuid primary key default gen_random_uuid(), consent_id uuid not null references consent, screening_id uuid not null references screening, site_id uuid not null references site,
       participant_id uuid, who text not null check (who in ('participant', 'staff')), means text not null check (means in ('typed', 'drawn', 'paper')),

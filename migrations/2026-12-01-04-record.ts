@@ -43,6 +43,7 @@ export class TheRecord extends Migration {
       state text not null default 'due' check (state in ('due', 'in progress', 'submitted', 'missed')), answers jsonb not null default '{}', left_out text[] not null default '{}', page integer not null default 0, mode text not null default 'self, web', started_at timestamptz, submitted_at timestamptz, scores jsonb not null default '{}', version integer not null default 1,
       check ((state = 'submitted') = (submitted_at is not null)), check (opens_on <= due_on and due_on <= closes_on), unique (participant_id, instrument, due_on))`);
     this.addSql('create index questionnaire_response_site on questionnaire_response (site_id, state, closes_on)');
+    this.addSql('create index questionnaire_response_visit on questionnaire_response (visit_id)');
     this.addSql(`create table training_session (${record}, local_on date not null, time_zone text not null, entered_at timestamptz not null, late boolean not null default false,
       arm_check text not null check (arm_check in ('the same', 'a little fuller', 'clearly fuller', 'not sure')), soreness text not null check (soreness in ('no', 'a little', 'a lot')), effort integer check (effort between 0 and 10), note text check (length(note) <= 500),
       client_key uuid not null, version integer not null default 1, unique (participant_id, client_key))`);

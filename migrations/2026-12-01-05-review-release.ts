@@ -11,11 +11,13 @@ export class ReviewRelease extends Migration {
     this.addSql('create index data_query_site on data_query (site_id, state, raised_at)');
     this.addSql('create index data_query_target on data_query (target_id, field)');
     this.addSql('create index data_query_participant on data_query (participant_id)');
+    this.addSql('create index data_query_visit on data_query (visit_id)');
     this.addSql(`create table query_message (${record}, query_id uuid not null references data_query, author_id uuid not null references account, author_role text not null, author_label text not null, kind text not null check (kind in ('question', 'answer', 'ask again', 'close', 'cancel', 'remind', 'reopen')), text text not null check (length(text) between 1 and 1000), at timestamptz not null)`);
     this.addSql('create index query_message_query on query_message (query_id, at)');
     this.addSql(`create table verification (${record}, visit_id uuid references visit, target_table text not null, target_id uuid not null, field text not null, value jsonb, verified_by uuid not null references account, verified_label text not null, verified_at timestamptz not null, fell_at timestamptz, version integer not null default 1)`);
     this.addSql('create unique index verification_standing on verification (target_id, field) where fell_at is null');
     this.addSql('create index verification_participant on verification (participant_id)');
+    this.addSql('create index verification_visit on verification (visit_id)');
     for (const table of ['data_query', 'verification']) for (const line of guard({ table, reach: 'record', grants: ['select', 'insert', 'update'], audit: {} })) this.addSql(line);
     for (const line of guard({ table: 'query_message', reach: 'record', grants: ['select', 'insert'], audit: {} })) this.addSql(line);
     // Queries and verification are between site and monitor: a participant does not see them.

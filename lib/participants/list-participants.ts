@@ -51,10 +51,12 @@ const queries = `left join lateral (select count(*)::int as open from data_query
 
 const visits = `left join lateral (select count(*) filter (where v.state = 'complete')::int as done, count(*)::int as laid from visit v where v.participant_id = p.id) visits on true`;
 
-/** The laterals a sort or a filter looks at; the others are joined for the rows of the page only. */
-function neededFor({ sort, swelling }: ListParticipantsInput): { text: string; needsLast: boolean } {
-  const needsLast = sort === 'lastVisitOn' || sort === 'change' || swelling !== 'any';
-  return { text: [needsLast ? last : '', sort === 'nextCloses' ? next : '', sort === 'openQueries' ? queries : ''].join(' '), needsLast };
+/** The laterals a sort or a filter looks at; the others are joined for the rows of the page only. `last` takes the primary definition. */
+function neededFor({ sort, swelling }: ListParticipantsInput): { filter: { last: boolean; text: string }; page: { last: boolean; text: string } } {
+  const filters = swelling !== 'any';
+  const sorts = filters || sort === 'lastVisitOn' || sort === 'change';
+  const other = sort === 'nextCloses' ? next : sort === 'openQueries' ? queries : '';
+  return { filter: { last: filters, text: filters ? last : '' }, page: { last: sorts, text: `${sorts ? last : ''} ${other}` } };
 }
 
 /**
@@ -73,17 +75,18 @@ export async function listParticipants(work: Work, input: ListParticipantsInput)
   if (swelling !== 'any') conditions.push(['last.verdict = ?', [swelling]]);
   const where = conditions.length === 0 ? '' : `where ${conditions.map(([text]) => text).join(' and ')}`;
   const needed = neededFor(input);
-  const found = [...(needed.needsLast ? [primary] : []), ...conditions.flatMap(([, values]) => values)];
-  const from = `from participant p join site s on s.id = p.site_id ${needed.text} ${where}`;
-  const [total] = await work.sql<{ count: number }>(`select count(*)::int as count ${from}`, found);
+  const values = conditions.flatMap(([, each]) => each);
+  const from = (joined: string): string => `from participant p join site s on s.id = p.site_id ${joined} ${where}`;
+  // What only sorts does not change how many there are, and is not read for every participant to count them.
+  const [total] = await work.sql<{ count: number }>(`select count(*)::int as count ${from(needed.filter.text)}`, [...(needed.filter.last ? [primary] : []), ...values]);
   const order = `${orders[sort]} ${direction === 'desc' ? 'desc' : 'asc'} nulls last, p.code`;
   const rows = await work.sql<ParticipantRow>(
-    `with page as (select p.id, row_number() over (order by ${order}) as place ${from} order by ${order} limit ? offset ?)
+    `with page as (select p.id, row_number() over (order by ${order}) as place ${from(needed.page.text)} order by ${order} limit ? offset ?)
      select p.id, p.code, s.name as "siteName", p.cohort, p.enrolled_on::text as "enrolledOn", p.state, p.training_held as "trainingHeld",
        last.name as "lastVisitName", last.done_on::text as "lastVisitOn", last.rvc as change, last.verdict,
        next.name as "nextVisitName", next.opens_on::text as "nextOpens", next.closes_on::text as "nextCloses", queries.open as "openQueries", visits.done as "visitsDone", visits.laid as "visitsOf"
      from page join participant p on p.id = page.id join site s on s.id = p.site_id ${last} ${next} ${queries} ${visits} order by page.place`,
-    [...found, pageSize, page * pageSize, primary],
+    [...(needed.page.last ? [primary] : []), ...values, pageSize, page * pageSize, primary],
   );
   return { rows: rows.map((row) => ({ ...row, cohort: document.cohorts.find(({ key }) => key === row.cohort)?.name ?? row.cohort })), rowCount: total?.count ?? 0 };
 }

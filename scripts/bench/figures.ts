@@ -4,6 +4,8 @@ export interface Figure {
   readonly part: Part;
   readonly participants: number;
   readonly what: string;
+  /** How much it is at this size, where that says more than the number of participants. */
+  readonly detail?: string;
   /** What the floor is, in words. */
   readonly floor: string;
   /** Medians over the pairs, in milliseconds. */

@@ -14,7 +14,7 @@ function table(head, rows, words) {
 
 /** Each question's figures at every size, and how far they grow from the smallest to the largest. */
 function printRatios(figures, tell) {
-  const rows = figures.map(({ what, floor, participants, oursMs, floorMs, ratio, pairs }) => [what, floor, count(participants), ms(oursMs), ms(floorMs), times(ratio), String(pairs)]);
+  const rows = figures.map(({ what, detail, floor, participants, oursMs, floorMs, ratio, pairs }) => [detail ? `${what} (${detail})` : what, floor, count(participants), ms(oursMs), ms(floorMs), times(ratio), String(pairs)]);
   tell('\nOurs against a floor of the same run (medians of paired runs)\n');
   tell(table(['what', 'floor', 'participants', 'ours ms', 'floor ms', 'ours/floor', 'pairs'], rows, 2));
   const sizes = [...new Set(figures.map(({ participants }) => participants))].sort((a, b) => a - b);
