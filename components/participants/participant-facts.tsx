@@ -23,12 +23,11 @@ export function ParticipantFacts({ view }: { view: ParticipantView }) {
       facts={[
         { term: 'Affected side', value: inWords(facts.affectedSide) },
         { term: 'Dominant hand', value: inWords(facts.dominantSide) },
-        { term: 'Cohort', value: facts.cohort },
+        { term: 'Cohort', value: `${facts.cohort}, enrolled ${formatDate(facts.enrolledOn)}` },
         { term: 'Surgery', value: `${inWords(facts.surgery)}, ${facts.axillaryProcedure.replaceAll('-', ' ')}, ${formatDate(facts.surgeryOn)}` },
         { term: 'Radiotherapy', value: inWords(facts.radiotherapy) },
         { term: 'Systemic therapy', value: inWords(facts.systemicTherapy) },
         { term: 'At baseline', value: at },
-        { term: 'Enrolled', value: formatDate(facts.enrolledOn) },
       ]}
     />
   );

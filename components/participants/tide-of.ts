@@ -1,4 +1,5 @@
 import type { ParticipantView, ParticipantVisit } from '@/lib/participants/view-participant';
+import { mondayOf } from '@/instruments/calendar';
 import type { TideData, TideVisit } from '../chart/tide-data';
 import { dayNumber, dayOf } from '../chart/days';
 import { daysBetween, formatChange, formatDate, formatNearDate } from '../ui/format';
@@ -85,7 +86,7 @@ export function tideOf(view: ParticipantView): TideData {
     symptoms: symptoms.filter(({ on }) => on >= from).map(({ on, said, signCount }) => ({ on, signCount, words: twoLines(said.toLowerCase()) })),
     ...loadsOf(view),
     pauses: pausesOf(view),
-    callouts: flags.slice(-2).map(({ on, title, exercise }) => ({ week: on, words: exercise ? `${exercise}: ${title.toLowerCase()}` : title.toLowerCase() })),
+    callouts: flags.slice(-2).map(({ on, title, exercise }) => ({ week: mondayOf(on), words: exercise ? `${exercise}: ${title.toLowerCase()}` : title.toLowerCase() })),
   };
 }
 
