@@ -55,7 +55,7 @@ export function SurvivalChart({ curves, riskTimes, timeUnit, readAt, riskWords, 
         {curves.map((curve) => (
           <div key={curve.label}>
             <h3>{curve.label}</h3>
-            <p className="t-hand mb-2 text-[17px]">{curve.definition}</p>
+            <p className="t-hand mb-2 text-[17px] lg:min-h-[48px]">{curve.definition}</p>
             <SurvivalPanel
               {...{ curve, riskTimes, timeUnit, readAt, riskWords, shareEdges, eventWords }}
               beside={first && curve !== first ? first : undefined}

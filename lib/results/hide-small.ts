@@ -20,6 +20,6 @@ export function foldSmall(reasons: readonly CountedReason[], below: number): { r
   if (below === 0 || small.length === 0) return sorted;
   const sum = () => small.reduce((total, { count }) => total + count, 0);
   while (sum() > 0 && sum() < below && kept.length > 0) small.unshift(kept.pop() as CountedReason);
-  const [only] = small;
-  return [...kept, { reason: small.length === 1 && only ? only.reason : 'other reasons', count: showCount(sum(), below) }];
+  const names = small.filter(({ count }) => count > 0).map(({ reason }) => reason);
+  return [...kept, { reason: names.length > 0 && names.length <= 2 ? names.join(' or ') : 'other reasons', count: showCount(sum(), below) }];
 }

@@ -13,8 +13,8 @@ describe('small counts', () => {
   });
 
   test('are put together with the next smallest, as told', () => {
-    expect(foldSmall([{ reason: 'a', count: 40 }, { reason: 'b', count: 6 }, { reason: 'c', count: 2 }], below)).toEqual([{ reason: 'a', count: 40 }, { reason: 'other reasons', count: 8 }]);
-    expect(foldSmall([{ reason: 'a', count: 40 }, { reason: 'b', count: 4 }, { reason: 'c', count: 3 }], below)).toEqual([{ reason: 'a', count: 40 }, { reason: 'other reasons', count: 7 }]);
+    expect(foldSmall([{ reason: 'a', count: 40 }, { reason: 'b', count: 6 }, { reason: 'c', count: 2 }], below)).toEqual([{ reason: 'a', count: 40 }, { reason: 'b or c', count: 8 }]);
+    expect(foldSmall([{ reason: 'a', count: 40 }, { reason: 'b', count: 4 }, { reason: 'c', count: 3 }], below)).toEqual([{ reason: 'a', count: 40 }, { reason: 'b or c', count: 7 }]);
     expect(foldSmall([{ reason: 'a', count: 3 }], below)).toEqual([{ reason: 'a', count: null }]);
   });
 
