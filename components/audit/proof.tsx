@@ -19,7 +19,7 @@ export function Proof({ proof }: { proof: ProofView }) {
             <p>
               {seal
                 ? `${formatCount(seal.treeSize)} entries stand under one seal, made ${formatMoment(new Date(seal.sealedAt), 'UTC')} UTC.`
-                : 'The first seal is made within the quarter of an hour in which the job runs.'}
+                : 'Seals are made by a job every five minutes; none has run yet, so nothing is proven so far.'}
             </p>
           </div>
         </div>

@@ -1,12 +1,13 @@
 import Link from 'next/link';
 import type { FieldChange } from '@/lib/audit/changes-of';
 import type { TrailEntry } from '@/lib/audit/list-trail';
-import { formatCount, formatDate } from '../ui/format';
+import { countOf, formatCount, formatDate } from '../ui/format';
 import { EarlierValue } from '../ui/note';
 import type { TableColumn } from '../ui/plain-table';
 import { valueWords } from './value-words';
 
-const linesShown = 6;
+/** A change is shown whole; of what was first entered, the beginning. */
+const linesShown = { UPDATE: 8, INSERT: 2, DELETE: 2, EVENT: 4 } as const;
 
 /** Hours with seconds, UTC: two entries of one minute must tell apart. */
 const timeUtc = (at: string): string => at.slice(11, 19);
@@ -18,7 +19,7 @@ function ChangeLine({ change, op }: { change: FieldChange; op: TrailEntry['op'] 
       {label}{' '}
       {op === 'UPDATE' ? (
         <>
-          <EarlierValue>{valueWords(before, kind)}</EarlierValue> → <b>{valueWords(after, kind)}</b>
+          {before === null ? <span className="text-ink-3">nothing</span> : <EarlierValue>{valueWords(before, kind)}</EarlierValue>} → <b>{valueWords(after, kind)}</b>
         </>
       ) : (
         <span className="text-ink-2">{valueWords(after ?? before, kind)}</span>
@@ -29,6 +30,7 @@ function ChangeLine({ change, op }: { change: FieldChange; op: TrailEntry['op'] 
 
 function What({ entry }: { entry: TrailEntry }) {
   const { subject, code, changes, op } = entry;
+  const most = linesShown[op];
   const line = (change: FieldChange) => <ChangeLine key={change.column} change={change} op={op} />;
   return (
     <>
@@ -39,11 +41,11 @@ function What({ entry }: { entry: TrailEntry }) {
       ) : null}
       {subject}
       <span className="mt-0.5 block text-[13.5px] leading-[20px]">
-        {changes.slice(0, linesShown).map(line)}
-        {changes.length > linesShown ? (
+        {changes.slice(0, most).map(line)}
+        {changes.length > most ? (
           <details>
-            <summary>{formatCount(changes.length - linesShown)} more fields</summary>
-            {changes.slice(linesShown).map(line)}
+            <summary>{countOf(changes.length - most, 'more field')}</summary>
+            {changes.slice(most).map(line)}
           </details>
         ) : null}
       </span>

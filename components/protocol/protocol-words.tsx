@@ -42,7 +42,7 @@ function Measurement({ view }: { view: ProtocolView }) {
       <div className={prose}>
         <p>
           Both arms are measured by tape at {measurement.levelCount} levels, every {formatGirthCm(measurement.stepMm)} from {measurement.startOffsetMm === 0 ? 'the wrist' : `${formatGirthCm(measurement.startOffsetMm)} above the wrist`} upward, twice; a third time
-          where the two differ by more than {formatGirthCm(measurement.toleranceMm)}. {measurement.position}.
+          where the two differ by more than {formatGirthCm(measurement.toleranceMm)}. Position: {measurement.position}.
         </p>
         <p>
           Volumes are summed from {measurement.method === 'frustum' ? 'truncated cones' : 'disks'}. The standard error of one arm’s volume is taken as {formatPercent(measurement.semPct / 100, 2)} until the registry has its own.
