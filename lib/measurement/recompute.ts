@@ -1,3 +1,4 @@
+import { isDeepStrictEqual } from 'node:util';
 import { LimbAssessmentSchema, type LimbAssessment } from '@/entities/limb-assessment';
 import { LimbTrialSchema, type LimbTrial } from '@/entities/limb-trial';
 import { ParticipantSchema } from '@/entities/participant';
@@ -54,7 +55,8 @@ export async function recompute(work: Work, participantId: string, completingId?
     assessment.leftVolumeMl = rounded(computed.leftVolumeMl, 3);
     assessment.rightVolumeMl = rounded(computed.rightVolumeMl, 3);
     assessment.rvc = computed.rvc === null ? null : rounded(computed.rvc, 6);
-    assessment.verdicts = { ...computed.verdicts };
+    // The column keeps its keys in an order of its own; only what says something else is written again.
+    if (!isDeepStrictEqual(assessment.verdicts, JSON.parse(JSON.stringify(computed.verdicts)))) assessment.verdicts = { ...computed.verdicts };
     assessment.formulaVersion = computed.formulaVersion;
   }
 }

@@ -83,7 +83,7 @@ export function measure(scene: Scene, visit: PlannedVisit & { outcome: { on: Loc
     impedanceRatio: draw.chance(0.04) && !person.cast ? null : ratio,
   };
   const trialIds = new Map([...sides.flatMap((side) => [1, 2, 3].map((trial) => [`${side} ${trial}`, ids.uuid()] as const))]);
-  const slip = person.cast?.course ? (isStory ? trialSlip(right, trialIds, { side: 'left', trial: 2, level: storyLevel, byMm: 17 }) : null) : inventSlip(draw, right, trialIds);
+  const slip = person.cast?.course ? (isStory ? trialSlip(right, trialIds, { side: 'left', trial: 2, level: storyLevel, byMm: 17 }) : null) : inventSlip(draw, right, trialIds, baseline !== null);
   const asEntered = slip ? withSlip(right, slip) : right;
   const settings = { earlyExclusionDays: swelling.earlyExclusionDays, impedanceCutoffs: swelling.impedanceCutoffs };
   const compute = (sitting: MeasuredSitting): ComputedAssessment => computeAssessment({ sitting, arms: person.facts, baseline, settings });
@@ -120,13 +120,14 @@ function weightSlip(right: MeasuredSitting): Slip | null {
   return swapped > 35 && swapped < 240 && Math.abs(swapped - Number(typed)) > 1 ? { kind: 'weight', wrongG: Math.round(swapped * 1000) } : null;
 }
 
-function inventSlip(draw: Draw, right: MeasuredSitting, trialIds: ReadonlyMap<string, string>): Slip | null {
+/** A baseline's girths are right from the start: every later change is measured from them. */
+function inventSlip(draw: Draw, right: MeasuredSitting, trialIds: ReadonlyMap<string, string>, mayMisread: boolean): Slip | null {
   const fate = draw.uniform(0, 1);
   const side = draw.pick(sides);
   const byMm = draw.pick([-20, 20, 18, -17]);
   if (fate < 0.035) return weightSlip(right);
   const level = right.trials.find((trial) => trial.side === side && trial.trial === 3)?.circumferencesMm.findIndex((girth) => girth !== null) ?? -1;
-  return fate < 0.12 && level >= 0 ? trialSlip(right, trialIds, { side, trial: 2, level, byMm }) : null;
+  return fate < 0.12 && level >= 0 && mayMisread ? trialSlip(right, trialIds, { side, trial: 2, level, byMm }) : null;
 }
 
 /** In the story the elbow bent during the second pass, and a third reading stands at that one level. */

@@ -1,6 +1,14 @@
 import { randomBytes } from 'node:crypto';
 import { Client } from 'pg';
 import { afterAll, beforeAll, describe, expect, inject, test } from 'vitest';
+import { ParticipantSchema } from '@/entities/participant';
+import { SiteSchema } from '@/entities/site';
+import type { Actor } from '@/lib/auth/roles';
+import { recompute } from '@/lib/measurement/recompute';
+import { judgeRecord } from '@/lib/training/judge-record';
+import { loadTrainingRecord } from '@/lib/training/training-record';
+import { getOrm } from '@/lib/work/orm';
+import { withWork } from '@/lib/work/with-work';
 import { finalRows } from '@/scripts/demo/events';
 import { people, studyEvents } from '@/scripts/demo/generate';
 import { layOut } from '@/scripts/demo/plan';
@@ -37,7 +45,7 @@ beforeAll(async () => {
 }, 400_000);
 
 afterAll(async () => {
-  await Promise.all([owner.end(), twin.end(), app.end()]);
+  await Promise.all([owner.end(), twin.end(), app.end(), (await getOrm()).close()]);
   const admin = await connect(inject('database').ownerUrl);
   await admin.query(`drop database if exists ${twinName} with (force)`);
   await admin.end();
@@ -93,6 +101,42 @@ describe('the seed', () => {
     );
     expect(rows.length).toBeGreaterThan(0);
     expect(rows.every(({ reason }) => reason !== null)).toBe(true);
+  });
+});
+
+describe('the application, when it judges the seeded record again,', () => {
+  /** A coordinator of the first site, as signing in would make one. */
+  const coordinator = async (): Promise<Actor> => {
+    const grant = await one<{ account_id: string; label: string; study_id: string; site_ids: string[] }>(owner, `select account_id, label, study_id, site_ids from role_grant where label = 'C-03'`);
+    return { accountId: grant.account_id, role: 'site-coordinator', label: grant.label, studyId: grant.study_id, reach: grant.site_ids, participantId: null, screeningId: null };
+  };
+  const all = async (): Promise<{ id: string; site_id: string }[]> => (await owner.query<{ id: string; site_id: string }>(`select p.id, p.site_id from participant p join site s on s.id = p.site_id where s.code = 'NM' order by p.code`)).rows;
+  const sumOf = (table: string): Promise<{ sum: string; n: number }> => one(owner, `select md5(string_agg(to_jsonb(t)::text, '' order by t.id)) as sum, count(*)::int as n from ${table} t`);
+
+  test('finds the same volumes, changes and verdicts', async () => {
+    const before = await sumOf('limb_assessment');
+    const actor = await coordinator();
+    for (const { id } of await all()) {
+      const { n } = await one<{ n: number }>(owner, `select count(*)::int as n from limb_assessment where participant_id = $1 and state = 'complete'`, [id]);
+      if (n > 0) await withWork(actor, 'assessment.correct', (work) => recompute(work, id));
+    }
+    expect(before.n).toBeGreaterThan(50);
+    expect(await sumOf('limb_assessment')).toEqual(before);
+  });
+
+  test('raises the same flags, no more and no fewer', async () => {
+    const before = await sumOf('training_flag');
+    const actor = await coordinator();
+    for (const { id, site_id } of await all()) {
+      await withWork(actor, 'participant.correct', async (work) => {
+        const participant = await work.em.findOneOrFail(ParticipantSchema, { id });
+        const site = await work.em.findOneOrFail(SiteSchema, { id: site_id });
+        const record = await loadTrainingRecord(work, { id, protocolVersionId: participant.protocolVersionId, timeZone: site.timeZone });
+        await judgeRecord(work, { participant, site, today: '2027-03-03' }, record);
+      });
+    }
+    expect(before.n).toBeGreaterThan(10);
+    expect(await sumOf('training_flag')).toEqual(before);
   });
 });
 
