@@ -70,9 +70,12 @@ export class Foundation extends Migration {
     this.addSql('create index audit_entry_actor on audit_entry (actor_id, id)');
     this.addSql('alter table audit_entry enable row level security');
     this.addSql('alter table audit_entry force row level security');
+    // Accounts and roles stand at no site and may carry a code: a site's own people do not see them.
+    this.addSql(`create function app_whole_study() returns boolean language plpgsql stable as $$ begin
+      return app_actor() is not null and not exists (select from site where id <> all (app_reach())); end $$`);
     // Rows of no site (accounts, study set-up) are seen by whoever reaches the whole study; identity rows only where identity may be read.
     this.addSql(`create policy audit_entry_reach on audit_entry for select using (
-      (site_id = any ((select app_reach())::uuid[]) or (site_id is null and (select app_actor()) is not null and (select app_participant()) is null))
+      (site_id = any ((select app_reach())::uuid[]) or (site_id is null and (select app_participant()) is null and (select app_whole_study())))
       and ((select app_participant()) is null or participant_id = (select app_participant()))
       and (not identity or (select app_identity()) = 'on'))`);
     // The trigger function runs as the owner; forced security needs its insert allowed. Nobody is granted insert.

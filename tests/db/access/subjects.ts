@@ -18,6 +18,7 @@ export interface Subject {
   readonly reportId: string;
   readonly responseId: string;
   readonly flagId: string;
+  readonly extractId: string;
 }
 
 const made = async (sql: string, values: readonly unknown[]): Promise<string> => {
@@ -53,6 +54,10 @@ export async function subjectAt(scene: GivenScene, site: GivenSite, staff: Actor
     `insert into training_flag (site_id, participant_id, session_id, flag_key, rule, raised_at) values ($1, $2, $3, 'k', 'START_HIGH', now())`,
     [...record, sessionId],
   );
+  const extractId = await made(
+    `insert into extract (study_id, profile, purpose, recipient, as_of, requested_by, requested_label, requested_at) values ($1, 'open', 'To see who may read it.', 'Nobody', now(), $2, $3, now())`,
+    [site.studyId, staff.accountId, staff.label],
+  );
   return {
     site,
     participant,
@@ -66,5 +71,6 @@ export async function subjectAt(scene: GivenScene, site: GivenSite, staff: Actor
     reportId,
     responseId: response?.id ?? '',
     flagId,
+    extractId,
   };
 }

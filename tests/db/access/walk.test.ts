@@ -95,4 +95,4 @@ describe.each(guarded.map((route) => [route.name, route] as const))('%s', (name,
 });
 
 /** Files that do not exist yet in this scene. */
-const mayBeAbsent = new Set(['GET /api/consents/{id}/file/{which}', 'GET /api/consents/{id}']);
+const mayBeAbsent = new Set(['GET /api/consents/{id}/file/{which}', 'GET /api/consents/{id}', 'GET /api/extracts/{id}/files/{name}']);
