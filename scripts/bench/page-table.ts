@@ -44,6 +44,7 @@ export const benchPages: readonly BenchPage[] = [
   { route: '/safety/[id]', account: 'coordinator', fill: `select r.id ${atSite} join symptom_report r on r.participant_id = p.id order by r.reported_at desc limit 1` },
   { route: '/results', account: 'investigator' },
   { route: '/extracts', account: 'data-manager' },
+  { route: '/extracts/[id]', account: 'data-manager', fill: 'select id from extract where $1::text is not null order by requested_at desc limit 1' },
   { route: '/extracts/new', account: 'data-manager' },
   { route: '/audit', account: 'data-manager' },
   { route: '/protocol', account: 'data-manager' },
@@ -62,8 +63,8 @@ export const benchPages: readonly BenchPage[] = [
   { route: '/my-consent', account: 'participant-one' },
 ];
 
-/** Pages that need a letter's secret link, or show components only: not opened by the bench. */
-export const leftOut: readonly string[] = ['/', '/gallery', '/gallery/staff', '/gallery/phone', '/join/[token]', '/consent/[token]'];
+/** Pages that need a letter's secret link or a tablet handed over, or show components only: not opened by the bench. */
+export const leftOut: readonly string[] = ['/', '/gallery', '/gallery/staff', '/gallery/phone', '/hand-back', '/join/[token]', '/consent/[token]'];
 
 /** The address of a page with its parts filled in; null when the data base holds nothing to show there. */
 export async function addressOf({ route, fill }: BenchPage, email: string | null, owner: Client): Promise<string | null> {

@@ -23,7 +23,7 @@ function routesInApp(): string[] {
  * Opens a page in a context of its own, with nothing cached, and adds up the scripts it loads until it is still. What
  * Next fetches ahead for the pages behind its links is held back, because it is not this page's own weight.
  */
-async function weigh(browser: Browser, { url, path, cookies }: { url: string; path: string; cookies: SignedIn['cookies'] }): Promise<Omit<PageFigure, 'kind' | 'role'>> {
+async function weigh(browser: Browser, { url, path, cookies }: { url: string; path: string; cookies: SignedIn['cookies'] }): Promise<Omit<PageFigure, 'kind' | 'role'> & { landedOn: string }> {
   const context = await browser.newContext({ locale: 'en-GB', viewport: { width: 1440, height: 900 } });
   await context.addCookies(cookies);
   const page = await context.newPage();
@@ -37,8 +37,9 @@ async function weigh(browser: Browser, { url, path, cookies }: { url: string; pa
     transferBytes += (await request.sizes()).responseBodySize;
     rawBytes += (await (await request.response())?.body())?.length ?? 0;
   }
+  const landedOn = new URL(page.url()).pathname;
   await context.close();
-  return { path, status: response?.status() ?? 0, files: scripts.length, transferBytes, rawBytes };
+  return { path, landedOn, status: response?.status() ?? 0, files: scripts.length, transferBytes, rawBytes };
 }
 
 /** The scripts of every page, as transferred, signed in as somebody who opens it. */
@@ -58,8 +59,13 @@ export async function benchPageScripts({ participants, url, tell }: Bench): Prom
     const demo = demoAccounts.find(({ key }) => key === account);
     if (account && !signedIn.has(account)) signedIn.set(account, await SignedIn.as(account, url));
     const path = await addressOf(benchPage, demo?.email ?? null, owner);
-    if (path === null) notRun(route, 'the seeded data holds nothing to show there');
-    else tell({ kind: 'page', role: demo?.roleLabel ?? 'nobody', ...(await weigh(browser, { url, path, cookies: signedIn.get(account ?? '')?.cookies ?? [] })), path: route });
+    if (path === null) {
+      notRun(route, 'the seeded data holds nothing to show there');
+      continue;
+    }
+    const { landedOn, ...weight } = await weigh(browser, { url, path, cookies: signedIn.get(account ?? '')?.cookies ?? [] });
+    if (landedOn === path && weight.status === 200) tell({ kind: 'page', role: demo?.roleLabel ?? 'nobody', ...weight, path: route });
+    else notRun(route, `${account ?? 'nobody'} was answered ${weight.status} at ${landedOn}`);
   }
   await browser.close();
   await owner.end();

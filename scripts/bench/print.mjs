@@ -32,7 +32,7 @@ function printRatios(figures, tell) {
 
 function printPages(pages, tell) {
   tell('\nJavaScript of each page, first load with nothing cached\n');
-  tell(table(['page', 'signed in as', 'status', 'files', 'gzip kB', 'raw kB'], pages.map(({ path, role, status, files, transferBytes, rawBytes }) => [path, role, String(status), String(files), kb(transferBytes), kb(rawBytes)]), 2));
+  tell(table(['page', 'signed in as', 'files', 'gzip kB', 'raw kB'], pages.map(({ path, role, files, transferBytes, rawBytes }) => [path, role, String(files), kb(transferBytes), kb(rawBytes)]), 2));
 }
 
 /** Prints everything that was measured, and by name what was not. */
