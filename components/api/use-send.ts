@@ -23,5 +23,7 @@ export function useSend<Answer, Body extends object = object>(
       return answer;
     },
     retry: false,
+    // Without a line the mutation would wait in silence; sent all the same, it fails at once and that is said.
+    networkMode: 'always',
   });
 }

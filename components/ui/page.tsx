@@ -26,6 +26,7 @@ export function PageHead({ title, beside, crumbs = [], lede, actions }: PageHead
         <div>
           <h1>
             {title}
+            {beside ? ' ' : null}
             {beside ? <small className="ml-3.5 font-serif text-[24px] leading-tight text-ink-2">{beside}</small> : null}
           </h1>
           {lede ? <p className="t-lede mt-1.5">{lede}</p> : null}

@@ -12,7 +12,7 @@ export interface ScreeningView {
   readonly id: string;
   readonly version: number;
   readonly number: number;
-  readonly site: { readonly id: string; readonly name: string; readonly timeZone: string };
+  readonly site: { readonly id: string; readonly code: string; readonly name: string; readonly timeZone: string };
   readonly screenedOn: string;
   readonly cohort: { readonly key: string; readonly name: string };
   readonly referredBy: string | null;
@@ -39,7 +39,7 @@ export async function viewScreening(work: Work, { id }: { id: string }): Promise
     id: screening.id,
     version: screening.version,
     number: screening.number,
-    site: { id: site.id, name: site.name, timeZone: site.timeZone },
+    site: { id: site.id, code: site.code, name: site.name, timeZone: site.timeZone },
     screenedOn: screening.screenedOn,
     cohort: { key: screening.cohort, name: cohort?.name ?? screening.cohort },
     referredBy: screening.referredBy ?? null,

@@ -48,7 +48,7 @@ test('a person is screened, consents on the tablet, is enrolled and opens the in
     await page.getByRole('group', { name: 'Cohort' }).getByRole('radio', { name: 'At risk of swelling' }).check();
     await page.getByLabel(/^Referred by/).fill('Breast clinic');
     await page.getByRole('button', { name: 'Open the screening' }).click();
-    await expect(page.getByRole('heading', { level: 1, name: /^Screening NM-S\d{4}$/ })).toBeVisible();
+    await expect(page.getByRole('heading', { level: 1, name: /^Screening NM-S\d{4} Northmoor$/ })).toBeVisible();
   });
   const screeningPath = new URL(page.url()).pathname;
 
@@ -112,7 +112,7 @@ test('a person is screened, consents on the tablet, is enrolled and opens the in
     expect((await page.request.get('/api/participants')).status()).toBe(403);
     await page.getByLabel('For the site: your password').fill(coordinator.password);
     await page.getByRole('button', { name: 'Take the tablet back' }).click();
-    await expect(page.getByRole('heading', { level: 1, name: /^Screening NM-S/ })).toBeVisible();
+    await expect(page.getByRole('heading', { level: 1, name: /^Screening NM-S\d{4}/ })).toBeVisible();
   });
 
   await test.step('the coordinator signs second and the copy goes out as a PDF', async () => {

@@ -24,7 +24,7 @@ export default async function ScreeningPage({ params }: { params: Promise<{ id: 
   const identity = may(role, 'identity.view') ? await loadPage('identity.view', (work) => viewIdentity(work, { id })) : null;
   const { site, state, eligibility, today, version } = screening;
   const isOpen = state === 'screening';
-  const title = `Screening ${screening.number}`;
+  const title = `Screening ${site.code}-S${String(screening.number).padStart(4, '0')}`;
   return (
     <>
       <PageHead
