@@ -1,5 +1,6 @@
 'use client';
 
+import { useRouter } from 'next/navigation';
 import { useState } from 'react';
 import { ProblemError, send } from '../api/send';
 import { PlainShell } from '../shell/plain-shell';
@@ -9,6 +10,7 @@ import { TextField } from '../ui/text-field';
 
 /** The tablet comes back: only the password of who signed in opens the rest again. */
 export function HandBack({ screeningId }: { screeningId: string }) {
+  const router = useRouter();
   const [password, setPassword] = useState('');
   const [refusal, setRefusal] = useState<string | null>(null);
   const [taking, setTaking] = useState(false);
@@ -17,7 +19,8 @@ export function HandBack({ screeningId }: { screeningId: string }) {
     setRefusal(null);
     try {
       await send('POST', '/api/session/take-back', { password });
-      window.location.assign(`/screening/${screeningId}`);
+      router.replace(`/screening/${screeningId}`);
+      router.refresh();
     } catch (error) {
       setRefusal(error instanceof ProblemError ? error.message : 'Not taken back. Try again.');
       setTaking(false);

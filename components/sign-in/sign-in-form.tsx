@@ -1,6 +1,7 @@
 'use client';
 import { zodResolver } from '@hookform/resolvers/zod';
 import { signIn } from 'next-auth/react';
+import { useRouter } from 'next/navigation';
 import { useState } from 'react';
 import { useForm } from 'react-hook-form';
 import { z } from 'zod';
@@ -29,6 +30,7 @@ export interface DemoSignIn {
 /** Address and password. What was typed stays when it is refused. */
 export function SignInForm({ demo }: { demo: readonly DemoSignIn[] }) {
   const { register, handleSubmit, formState } = useForm({ resolver: zodResolver(signInInput), defaultValues: { email: '', password: '' } });
+  const router = useRouter();
   const [refusal, setRefusal] = useState<string | null>(null);
   const [entering, setEntering] = useState<string | null>(null);
   const [shown, setShown] = useState(false);
@@ -38,7 +40,8 @@ export function SignInForm({ demo }: { demo: readonly DemoSignIn[] }) {
     setEntering(email);
     const answer = await signIn('credentials', { email, password, redirect: false }).catch(() => null);
     if (answer?.ok && !answer.error) {
-      window.location.assign('/');
+      router.replace('/');
+      router.refresh();
       return;
     }
     setEntering(null);
