@@ -1,5 +1,6 @@
 import 'server-only';
 import { MikroORM } from '@mikro-orm/postgresql';
+import { env } from '@/lib/env';
 import config from '@/mikro-orm.config';
 
 // A bundler may evaluate this module once per layer; one process has one pool all the same.
@@ -7,7 +8,7 @@ const shared = globalThis as typeof globalThis & { tidemarkOrm?: Promise<MikroOR
 
 /** The one ORM of this process. */
 export function getOrm(): Promise<MikroORM> {
-  shared.tidemarkOrm ??= MikroORM.init(config).catch((error: unknown) => {
+  shared.tidemarkOrm ??= MikroORM.init({ ...config, clientUrl: env().DATABASE_URL }).catch((error: unknown) => {
     delete shared.tidemarkOrm;
     throw error;
   });
