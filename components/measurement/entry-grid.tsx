@@ -129,8 +129,16 @@ function moveFrom({ cell, columns, onArm, onLeaveColumn }: Pick<EntryGridProps, 
     const next = nextCell(columns, cell, step);
     if (event.key !== 'Tab' || next) event.preventDefault();
     if (!next || next.side !== cell.side || next.trial !== cell.trial) onLeaveColumn();
-    if (!next) return;
+    if (!next) {
+      if (event.key === 'Tab' && step === 'on') lastInOrderOfPage(event.currentTarget)?.focus();
+      return;
+    }
     flushSync(() => onArm(next.side));
     document.getElementById(cellId(cellName(next)))?.focus();
   };
+}
+
+/** The order of work ends at a third reading in the middle of the table; from there Tab would lead back into it for ever. */
+function lastInOrderOfPage(cell: HTMLInputElement): HTMLInputElement | undefined {
+  return [...(cell.closest('table')?.querySelectorAll('input') ?? [])].findLast((input) => input.offsetParent !== null);
 }

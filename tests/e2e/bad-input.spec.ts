@@ -196,7 +196,7 @@ test('a day to come is refused, and the form stays as typed', async ({ as }) => 
     { 'idempotency-key': crypto.randomUUID() },
   );
   expect(ahead.status()).toBe(422);
-  expect(await ahead.text()).toContain('future');
+  expect(await ahead.text()).toContain('has not come yet');
 });
 
 test('an upload that is not what it says is refused by its content', async ({ as }) => {

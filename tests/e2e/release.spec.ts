@@ -64,7 +64,7 @@ test('a de-identified data set is asked for, prepared, saved and holds nobody', 
     const download = page.waitForEvent('download');
     await line.getByRole('link', { name: /^Save/ }).click();
     const arrived = await download;
-    saved.set(arrived.suggestedFilename(), { content: await readFile(await arrived.path()), shown });
+    saved.set(arrived.suggestedFilename().replace(/^extract-\d+-/, ''), { content: await readFile(await arrived.path()), shown });
   }
   const checksums = saved.get('checksums.txt');
   if (!checksums) throw new Error('There is no checksums.txt.');
