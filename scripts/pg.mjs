@@ -33,7 +33,9 @@ function makeRoles(cluster) {
      end $$;
      alter role app_owner nosuperuser createdb createrole bypassrls password ${quoted('app_owner')};
      alter role app_login nosuperuser nocreatedb nocreaterole nobypassrls password ${quoted('app_login')};
-     grant app_rw to app_login;`,
+     grant app_rw to app_login;
+     -- Dropping a data base ends the sessions that are still closing in it.
+     grant app_login to app_owner;`,
   );
 }
 
