@@ -30,11 +30,22 @@ function parts(day: Day, zone: string): Parts {
   return { year, month, day: date };
 }
 
+const clocks = {
+  day: { options: { year: 'numeric', month: '2-digit', day: '2-digit' }, made: new Map<string, Intl.DateTimeFormat>() },
+  time: { options: { hour: '2-digit', minute: '2-digit', hourCycle: 'h23' }, made: new Map<string, Intl.DateTimeFormat>() },
+} as const;
+
+/** The clock of a zone. Making one costs as much as thirty readings, and a long list reads thousands: each is made once. */
+function clockOf(kind: keyof typeof clocks, zone: string): Intl.DateTimeFormat {
+  const { options, made } = clocks[kind];
+  const clock = made.get(zone) ?? new Intl.DateTimeFormat('en-GB', { timeZone: zone, ...options });
+  made.set(zone, clock);
+  return clock;
+}
+
 /** The calendar day of a moment in a zone, as `yyyy-mm-dd`. Throws RangeError for an invalid moment or zone. */
 export function dayIn(moment: Date, zone: string): string {
-  const fields = new Intl.DateTimeFormat('en-GB', { timeZone: zone, year: 'numeric', month: '2-digit', day: '2-digit' }).formatToParts(
-    moment,
-  );
+  const fields = clockOf('day', zone).formatToParts(moment);
   const pick = (type: string) => fields.find((field) => field.type === type)?.value ?? '';
   return `${pick('year').padStart(4, '0')}-${pick('month')}-${pick('day')}`;
 }
@@ -69,7 +80,7 @@ export function formatDateRange(from: Day, to: Day, zone = 'UTC'): string {
 
 /** '10:40', 24 hours, in the zone. */
 export function formatTime(moment: Date, zone: string): string {
-  return new Intl.DateTimeFormat('en-GB', { timeZone: zone, hour: '2-digit', minute: '2-digit', hourCycle: 'h23' }).format(moment);
+  return clockOf('time', zone).format(moment);
 }
 
 /** '3 Mar 2027, 10:40'. The zone itself is said once, in the footer. */

@@ -39,8 +39,9 @@ const checksums = (files: readonly ExtractFile[]): string => files.map(({ name, 
  * files, then the codebook, then the checksums over all of them.
  */
 export async function writeExtract(work: Work, { profile, format, folder, storage, onProgress, onKey }: WriteExtract): Promise<{ files: ExtractFile[]; counts: PeopleCounts }> {
-  // The planner cannot know how many people a list holds, and would go through the numbered sessions once for every set.
-  await work.sql('set local enable_nestloop to off');
+  // The planner cannot know how many people a list holds or how many rows row security lets through, and would go through the
+  // numbered sessions once for every set. Without its loops a plan looks dear, and compiling it would cost more than it saves.
+  await work.sql(`select set_config('enable_nestloop', 'off', true), set_config('jit', 'off', true)`);
   const { people, counts } = await choosePeople(work);
   const files: ExtractFile[] = [];
   const keep = async (name: string, contentType: string, rows: Readable, through: readonly Transform[]) => {

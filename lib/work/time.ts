@@ -14,18 +14,29 @@ export function moment(value: Date | string): Date {
 /** A moment some seconds later (or earlier). */
 export const secondsAfter = (at: Date, seconds: number): Date => new Date(at.getTime() + seconds * 1000);
 
+const formats = new Map<string, Intl.DateTimeFormat>();
+
+/** The clock of a time zone. Making one costs as much as thirty readings, so each is made once. */
+function clockOf(timeZone: string): Intl.DateTimeFormat {
+  const known = formats.get(timeZone);
+  if (known) return known;
+  const made = new Intl.DateTimeFormat('en-GB', {
+    timeZone,
+    year: 'numeric',
+    month: '2-digit',
+    day: '2-digit',
+    hour: '2-digit',
+    minute: '2-digit',
+    second: '2-digit',
+    hourCycle: 'h23',
+  });
+  formats.set(timeZone, made);
+  return made;
+}
+
 const partsIn = (at: Date, timeZone: string): Record<string, string> =>
   Object.fromEntries(
-    new Intl.DateTimeFormat('en-GB', {
-      timeZone,
-      year: 'numeric',
-      month: '2-digit',
-      day: '2-digit',
-      hour: '2-digit',
-      minute: '2-digit',
-      second: '2-digit',
-      hourCycle: 'h23',
-    })
+    clockOf(timeZone)
       .formatToParts(at)
       .map(({ type, value }) => [type, value]),
   );
