@@ -80,7 +80,7 @@ function ArmMark({ point, x, y }: { point: ArmPoint; x: number; y: number }) {
         <text
           x={provisional ? x + 14 : x}
           y={y - 17}
-          textAnchor={x > 200 && words.length > 8 ? 'end' : 'middle'}
+          textAnchor={x > 200 && words.length > 8 ? 'end' : x < 60 ? 'start' : 'middle'}
           className="arm-words halo"
         >
           {words}
