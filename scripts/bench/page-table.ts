@@ -55,7 +55,8 @@ export const benchPages: readonly BenchPage[] = [
   {
     route: '/questions/[id]',
     account: 'participant-one',
-    fill: `select q.id ${own} join questionnaire_response q on q.participant_id = p.id order by q.state in ('due', 'in progress') desc, q.due_on desc limit 1`,
+    fill: `select q.id ${own} join questionnaire_response q on q.participant_id = p.id
+      where q.state in ('due', 'in progress') and current_date between q.opens_on and q.closes_on order by q.due_on limit 1`,
   },
   { route: '/report', account: 'participant-one' },
   { route: '/my-arm', account: 'participant-one' },
