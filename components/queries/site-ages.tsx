@@ -15,7 +15,7 @@ export function SiteAges({ sites, limitDays, answeredWords }: { sites: readonly 
   const x = (days: number) => 1 + (Math.min(days, mostDays) / mostDays) * (width - 4);
   const label = lines.map(({ name, words }) => `${name}: ${words}`).join('; ');
   return (
-    <svg className="site-ages mt-3" width={width} height={height} viewBox={`0 0 ${width} ${height}`} role="img" aria-label={`${label}. The limit is ${limitDays} days.`}>
+    <svg className="site-ages mt-3 h-auto max-w-full" width={width} height={height} viewBox={`0 0 ${width} ${height}`} role="img" aria-label={`${label}. The limit is ${limitDays} days.`}>
       {lines.map(({ key, name, words, ages, mayBeLate }, index) => {
         const y = index * rowPx + 38;
         return (
