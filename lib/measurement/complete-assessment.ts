@@ -11,6 +11,7 @@ import { findOpenAssessment, trialsOf } from './find-assessment';
 import { findingsOf, type KeptFinding } from './findings';
 import type { CompleteAssessmentInput } from './input';
 import { recompute } from './recompute';
+import { settleHold } from './settle-hold';
 import { viewComplete, type CompleteAssessmentView } from './view-complete';
 
 /** Both trials of both arms, and a third where the two differ beyond the tolerance. */
@@ -51,14 +52,6 @@ async function queryUnexplained(work: Work, assessment: LimbAssessment, trials: 
   }
 }
 
-/** Training that was held is free again once the arm was measured and no report that holds it waits for review. */
-const releaseHold = (work: Work, participantId: string): Promise<unknown[]> =>
-  work.sql(
-    `update participant set training_held = false, version = version + 1 where id = ? and training_held
-     and not exists (select from symptom_report r where r.participant_id = participant.id and r.hold_training and r.state <> 'reviewed')`,
-    [participantId],
-  );
-
 /**
  * Saves a sitting as complete: only now are volumes, change and verdicts computed and shown.
  * @throws Refusal 'invalid' with the place of the first missing or impossible reading.
@@ -77,6 +70,6 @@ export async function completeAssessment(work: Work, { id, kept }: CompleteAsses
   completeVisit(await findVisit(work, assessment.visitId));
   await work.em.flush();
   await queryUnexplained(work, assessment, trials, findings);
-  await releaseHold(work, assessment.participantId);
+  await settleHold(work, assessment.participantId);
   return viewComplete(work, assessment);
 }

@@ -3,7 +3,7 @@ import { type SafetyVerdict, safetyVerdict } from '@/instruments/safety/judge-sy
 import type { OwnRecord } from '@/lib/people/find-own-record';
 import type { Work } from '@/lib/work/work';
 import { dueAt } from './due-at';
-import { settleHold } from './settle-hold';
+import { settleHold } from '@/lib/measurement/settle-hold';
 
 /** What the participant reads once a report is in. */
 export interface SentReport {

@@ -7,7 +7,7 @@ import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import { findReport } from './find-report';
 import type { ReviewReportInput } from './input';
-import { settleHold } from './settle-hold';
+import { settleHold } from '@/lib/measurement/settle-hold';
 import { viewReport, type ReportView } from './view-report';
 
 /**

@@ -6,7 +6,7 @@ import { markReportRead } from '@/lib/safety/mark-report-read';
 import { reportSymptoms } from '@/lib/safety/report-symptoms';
 import type { ReportSymptomsInput } from '@/lib/safety/input';
 import { reviewReport } from '@/lib/safety/review-report';
-import { settleHold } from '@/lib/safety/settle-hold';
+import { settleHold } from '@/lib/measurement/settle-hold';
 import { viewReport } from '@/lib/safety/view-report';
 import { withWork } from '@/lib/work/with-work';
 import { asOwner, givenParticipant, givenScene, givenSite, givenStaff, setScene, type GivenParticipant, type GivenScene } from '../given';
