@@ -19,7 +19,7 @@ export async function verifyAudit(connectionString) {
   try {
     const { rows: seals } = await client.query('select tree_size::text, last_entry_id::text, root_hash, below_txid::text, sealed_at from seal order by id');
     await client.query('begin');
-    await client.query(`declare trail no scroll cursor for select id::text, ${leafSql} as leaf from audit_entry order by txid, id`);
+    await client.query(`declare trail no scroll cursor for select id::text, ${leafSql} as leaf from audit_entry order by audit_entry.txid, audit_entry.id`);
     let peaks = [];
     let size = 0;
     let firstId = null;

@@ -38,9 +38,10 @@ export async function sealTrail(work: Work): Promise<Seal | null> {
   let from = { txid: last?.below_txid ?? '0', id: '0' };
   let lastId = 0;
   for (;;) {
+    // The order names the table's columns: by the bare names it would take the selected texts, and '10' before '9'.
     const rows = await work.sql<{ id: string; txid: string; leaf: string }>(
       `select id::text, txid::text, ${leafSql} as leaf from audit_entry
-       where (txid, id) > (?::xid8, ?::bigint) and txid < ?::xid8 order by txid, id limit ${batch}`,
+       where (txid, id) > (?::xid8, ?::bigint) and txid < ?::xid8 order by audit_entry.txid, audit_entry.id limit ${batch}`,
       [from.txid, from.id, below],
     );
     for (const row of rows) {

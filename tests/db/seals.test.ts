@@ -1,6 +1,7 @@
 import { Client } from 'pg';
 import { afterAll, beforeAll, expect, test } from 'vitest';
-import { sealTrail } from '@/lib/audit/seal-trail';
+import { append, emptyTree, leafHash, rootOf } from '@/lib/audit/merkle';
+import { leafSql, sealTrail } from '@/lib/audit/seal-trail';
 import { systemActor } from '@/lib/auth/roles';
 import { withWork } from '@/lib/work/with-work';
 import { verifyAudit } from '@/scripts/verify-audit.mjs';
@@ -49,6 +50,25 @@ test('seals grow with the trail, hold, and name the range in which an owner edit
   const verdict = await verifyAudit(ownerUrl());
   expect(verdict.ok).toBe(false);
   expect(verdict.sentence).toMatch(/does not hold/);
+});
+
+test('rows are sealed in the order of numbers, across a power of ten and across batches', async () => {
+  // 12 000 rows of one transaction: ids of four and five digits, read in batches of 5 000.
+  await owner.query('alter table audit_entry disable trigger user');
+  await owner.query('delete from audit_entry');
+  await owner.query('alter table seal disable trigger user');
+  await owner.query('delete from seal');
+  await owner.query('alter table seal enable trigger user');
+  await owner.query('alter table audit_entry enable trigger user');
+  await write(12_000);
+  await sealTo(12_000);
+  const [first] = (await owner.query<{ id: string }>('select min(id)::text as id from audit_entry')).rows;
+  expect(Number(first?.id)).toBeLessThan(1000);
+  expect((await verifyAudit(ownerUrl())).sentence).toMatch(/^Unbroken: 12000 entries/);
+  const { rows } = await owner.query<{ hashes: string[] }>(`select array_agg(leaf order by txid, id) as hashes from (select txid, id, ${leafSql} as leaf from audit_entry) t`);
+  const tree = (rows[0]?.hashes ?? []).reduce((grown, leaf) => append(grown, leafHash(leaf)), emptyTree);
+  const sealed = await owner.query<{ root_hash: string }>('select root_hash from seal order by id desc limit 1');
+  expect(sealed.rows[0]?.root_hash).toBe(rootOf(tree).toString('hex'));
 });
 
 test('a row that disappeared is missed', async () => {
