@@ -14,7 +14,7 @@ import { mkdirSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { parseArgs } from 'node:util';
 import { measure } from './bench/measure-child.mjs';
-import { printFigures } from './bench/print.mjs';
+import { printFigures, progressLine } from './bench/print.mjs';
 import { ensureDatabase } from './pg.mjs';
 import { ensureChromium } from './set-up/chromium.mjs';
 import { checkNode, ensurePackages } from './set-up/packages.mjs';
@@ -75,7 +75,10 @@ async function bench() {
     // A page's scripts do not depend on how many participants there are.
     const parts = options.parts.filter((part) => part !== 'pages' || index === 0);
     if (parts.length === 0) continue;
-    const code = await measureSize(size, { ...options, parts }, (one) => told.push(one));
+    const code = await measureSize(size, { ...options, parts }, (one) => {
+      told.push(one);
+      tell(progressLine(one));
+    });
     if (code !== 0) process.exitCode = 1;
   }
   printFigures(told, tell);

@@ -35,6 +35,12 @@ function printPages(pages, tell) {
   tell(table(['page', 'signed in as', 'files', 'gzip kB', 'raw kB'], pages.map(({ path, role, files, transferBytes, rawBytes }) => [path, role, String(files), kb(transferBytes), kb(rawBytes)]), 2));
 }
 
+/** One line for what has just been measured: a long run shows that it goes on. */
+export function progressLine(one) {
+  if (one.kind === 'ratio') return `  ${one.what}, ${count(one.participants)} participants: ${ms(one.oursMs)} ms, ${times(one.ratio)}`;
+  return one.kind === 'page' ? `  ${one.path}: ${kb(one.transferBytes)} kB` : `  ${one.what}: not measured`;
+}
+
 /** Prints everything that was measured, and by name what was not. */
 export function printFigures(told, tell) {
   const of = (kind) => told.filter((one) => one.kind === kind);
