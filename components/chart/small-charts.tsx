@@ -73,7 +73,7 @@ export function AgeSpan({ days, limitDays, mostDays = 30, words = 'since asked' 
   const late = days > limitDays;
   const end = x(days);
   return (
-    <svg width="202" height="20" viewBox="0 0 202 20" role="img" aria-label={`${days} days ${words}${late ? `, limit ${limitDays}` : ''}`}>
+    <svg className="h-auto max-w-full" width="202" height="20" viewBox="0 0 202 20" role="img" aria-label={`${days} days ${words}${late ? `, limit ${limitDays}` : ''}`}>
       <path d={`M0 10H${Math.min(end, x(limitDays))}`} stroke="var(--act)" strokeWidth="4" />
       {late ? (
         <path d={`M${x(limitDays)} 10H${end}`} stroke="var(--needs)" strokeWidth="1.75" strokeDasharray="2 3" />
