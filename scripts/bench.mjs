@@ -42,6 +42,16 @@ function readOptions() {
   return { sizes, parts, pairs, keep: values.keep };
 }
 
+/** What stands while a size is measured, so that Ctrl-C puts it away: its processes stand in groups of their own. */
+const standing = { services: null, base: null };
+
+async function putAway() {
+  const { services, base } = standing;
+  Object.assign(standing, { services: null, base: null });
+  await services?.stop();
+  base?.stop();
+}
+
 /** Serves one size and measures the parts over it. */
 async function measureSize(size, { parts, pairs, keep }, heard) {
   const folder = join(dataFolder, 'bench', String(size));
@@ -49,17 +59,14 @@ async function measureSize(size, { parts, pairs, keep }, heard) {
   mkdirSync(folder, { recursive: true, mode: 0o700 });
   const filesFolder = join(folder, 'files');
   const base = await ensureDatabase({ name: 'pg-bench', database: `bench_${size}`, fresh: !keep });
+  standing.base = base;
   try {
     migrate(base);
     seed({ ...base, filesFolder }, ['--if-empty', '--light', '--participants', String(size)]);
-    const services = await startServices({ appUrl: base.appUrl, mode: 'start', folder });
-    try {
-      return await measure({ base, url: services.url, filesFolder, size, parts, pairs }, heard);
-    } finally {
-      await services.stop();
-    }
+    standing.services = await startServices({ appUrl: base.appUrl, mode: 'start', folder });
+    return await measure({ base, url: standing.services.url, filesFolder, size, parts, pairs }, heard);
   } finally {
-    base.stop();
+    await putAway();
   }
 }
 
@@ -83,5 +90,7 @@ async function bench() {
   }
   printFigures(told, tell);
 }
+
+for (const sign of ['SIGINT', 'SIGTERM']) process.once(sign, () => void putAway().then(() => process.exit(1), fail));
 
 bench().catch(fail);
