@@ -1,8 +1,7 @@
 import type { Metadata } from 'next';
 import { z } from 'zod';
 import { notFound } from 'next/navigation';
-import { LazySurvey } from '@/components/questionnaire/lazy-survey';
-import { ClosedQuestionnaire } from '@/components/questionnaire/closed-questionnaire';
+import { QuestionnaireTask } from '@/components/questionnaire/questionnaire-task';
 import { viewQuestionnaire } from '@/lib/questionnaires/view-questionnaire';
 import { loadPage } from '@/lib/web/session';
 
@@ -12,5 +11,5 @@ export default async function QuestionnairePage({ params }: { params: Promise<{ 
   const { id } = await params;
   if (!z.uuid().safeParse(id).success) notFound();
   const questionnaire = await loadPage('questionnaire.view', (work) => viewQuestionnaire(work, { id }));
-  return questionnaire.isOpen ? <LazySurvey questionnaire={questionnaire} /> : <ClosedQuestionnaire questionnaire={questionnaire} />;
+  return <QuestionnaireTask key={id} questionnaire={questionnaire} />;
 }
