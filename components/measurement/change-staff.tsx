@@ -12,7 +12,7 @@ export interface ChangeStaffProps {
   nowPct: number;
   earlier: readonly ChangeStroke[];
   /** Percent at which the primary definition counts swelling; null where it is not one of change. */
-  highWaterPct: number | null;
+  highWaterPct: number;
   /** 95 % measurement error of a change, percentage points. */
   errorPoints: number;
 }
@@ -44,7 +44,7 @@ function spread(marks: readonly { y: number; label: string }[]): { y: number; at
 
 /** The change from baseline on its staff: now, earlier sittings, the measurement error and high water. */
 export function ChangeStaff({ nowPct, earlier, highWaterPct, errorPoints }: ChangeStaffProps) {
-  const values = [nowPct, errorPoints, -errorPoints, ...earlier.map(({ changePct }) => changePct), ...(highWaterPct === null ? [] : [highWaterPct + 1])];
+  const values = [nowPct, errorPoints, -errorPoints, ...earlier.map(({ changePct }) => changePct), highWaterPct + 1];
   const edges = edgesFor(values);
   const [low, high] = [edges[0] ?? -4, edges.at(-1) ?? 12];
   const y = (pct: number) => foot - ((pct - low) / (high - low)) * (foot - head);
@@ -58,14 +58,10 @@ export function ChangeStaff({ nowPct, earlier, highWaterPct, errorPoints }: Chan
       <text x={width} y={y(-errorPoints) - 9} textAnchor="end" className="staff-words">
         measurement error ±{formatNumber(errorPoints, 1)}
       </text>
-      {highWaterPct === null ? null : (
-        <g>
-          <path d={`M46 ${y(highWaterPct)}H${width}`} stroke="var(--note)" strokeWidth="1.5" strokeDasharray="11 4" />
-          <text x={width} y={y(highWaterPct) - 7} textAnchor="end" className="staff-words staff-note">
-            high water
-          </text>
-        </g>
-      )}
+      <path d={`M46 ${y(highWaterPct)}H${width}`} stroke="var(--note)" strokeWidth="1.5" strokeDasharray="11 4" />
+      <text x={width} y={y(highWaterPct) - 7} textAnchor="end" className="staff-words staff-note">
+        high water
+      </text>
       {strokes.map(({ y: from, at, label }) => (
         <g key={label}>
           <path d={`M46 ${from}h10L62 ${at}`} stroke="var(--ink)" strokeWidth="1.5" fill="none" />

@@ -28,7 +28,7 @@ export function LimbResult({ view }: { view: CompleteAssessmentView }) {
           {earlier.length === 0 ? 'This is the first measurement; change is counted from the baseline.' : 'Change is not computed: there is no baseline that compares.'}
         </p>
       ) : (
-        <ChangeStaff nowPct={rvc * 100} earlier={strokesOf(view)} highWaterPct={highWaterOf(view.verdicts)} errorPoints={errorPoints} />
+        <ChangeStaff nowPct={rvc * 100} earlier={strokesOf(view)} highWaterPct={view.highWaterPct} errorPoints={errorPoints} />
       )}
       <p className="t-small mt-2 text-ink-2">
         Truncated cones between the marks, formula {formulaVersion}. Change is relative to the other arm. 95 of 100 changes by measurement error alone lie within ±
@@ -43,13 +43,6 @@ function strokesOf({ earlier }: CompleteAssessmentView) {
     if (isBaseline) return [{ label: 'Baseline', changePct: 0 }];
     return rvc === null ? [] : [{ label: `${visitName}, ${formatDate(on)}`, changePct: rvc * 100 }];
   });
-}
-
-/** The line of the primary definition, read from its own name; null where it is not one of relative change. */
-function highWaterOf(verdicts: readonly VerdictView[]): number | null {
-  const primary = verdicts.find(({ isPrimary }) => isPrimary);
-  const line = primary ? /^RVC (\d+(?:\.\d+)?) %/.exec(primary.name)?.[1] : undefined;
-  return line === undefined ? null : Number(line);
 }
 
 /** Each definition of swelling with its verdict, the primary one first. */

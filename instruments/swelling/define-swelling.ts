@@ -49,6 +49,8 @@ export interface SwellingDefinition {
   readonly sentence: string;
   readonly needsBaseline: boolean;
   readonly source: string;
+  /** The line on the scale of relative volume change, in percent, where the definition is one. */
+  readonly rvcLinePct?: number;
   judge(assessment: SwellingAssessment, baseline: SwellingAssessment | null, context: SwellingContext): SwellingVerdict;
 }
 

@@ -36,3 +36,16 @@ export function judgeSwelling(
 ): (SwellingVerdict & { readonly code: SwellingCode })[] {
   return swellingCodes.map((code) => ({ code, ...swellingDefinition(code).judge(assessment, baseline, context) }));
 }
+
+/** High water: the case threshold that charts of relative volume change draw, in percent. */
+export interface HighWater {
+  readonly percent: number;
+  /** The definition whose line it is. */
+  readonly name: string;
+}
+
+/** The primary definition's own line; where it is not one of relative change, that of RVC 10 %. */
+export function highWater(primary: SwellingCode): HighWater {
+  const { rvcLinePct, name } = swellingDefinition(primary);
+  return rvcLinePct === undefined ? highWater('D6') : { percent: rvcLinePct, name };
+}

@@ -19,6 +19,7 @@ export const d5Rvc5 = defineSwelling({
   sentence: 'Relative volume change is 5 % or more.',
   needsBaseline: true,
   source: 'Ancukiewicz 2011, IJROBP 79:1436; 5 to under 10 % is called subclinical',
+  rvcLinePct: 5,
   judge(assessment, baseline) {
     const rvc = rvcOf(assessment, baseline);
     if (rvc === null) return notJudged('A volume is missing, now or at baseline.');
@@ -32,6 +33,7 @@ export const d6Rvc10 = defineSwelling({
   sentence: 'Relative volume change is 10 % or more, more than 3 months after surgery.',
   needsBaseline: true,
   source: 'McDuff 2019; Naoum 2020, JCO',
+  rvcLinePct: 10,
   judge(assessment, baseline, { earlyExclusionDays }) {
     const rvc = rvcOf(assessment, baseline);
     if (rvc === null) return notJudged('A volume is missing, now or at baseline.');

@@ -7,7 +7,7 @@ import { findVisit } from '@/lib/schedule/view-visit';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
 import type { SwellingVerdict } from '@/instruments/swelling/define-swelling';
-import { swellingDefinition, type SwellingCode } from '@/instruments/swelling';
+import { highWater, swellingDefinition, type SwellingCode } from '@/instruments/swelling';
 import { settledGirthsMm } from './compute-assessment';
 import { trialsOf } from './find-assessment';
 import type { KeptFinding } from './findings';
@@ -48,6 +48,8 @@ export interface CompleteAssessmentView extends Omit<OpenAssessmentView, 'state'
   readonly rvc: number | null;
   /** 95 % measurement error of the change, in percentage points. */
   readonly errorPoints: number;
+  /** The case threshold on the scale of the change, in percent. */
+  readonly highWaterPct: number;
   readonly verdicts: readonly VerdictView[];
   readonly findings: readonly KeptFinding[];
   readonly earlier: readonly EarlierSitting[];
@@ -118,6 +120,7 @@ export async function viewComplete(work: Work, assessment: LimbAssessment): Prom
     interLimb: { differenceMl, differencePct },
     rvc: assessment.rvc ?? null,
     errorPoints: rvcMeasurementError(measurement.semPct),
+    highWaterPct: highWater(swelling.primary).percent,
     verdicts: shown.flatMap((code) => verdictView(code, assessment, code === swelling.primary)),
     findings: assessment.findings as KeptFinding[],
     earlier: await earlierThan(work, assessment.participantId, visit.doneOn),

@@ -3,7 +3,7 @@ import { trainingRule } from '@/instruments/training';
 import type { TrainingRuleCode } from '@/instruments/training/define-training-rule';
 import { findExercise } from '@/instruments/training/exercises';
 import { rvcMeasurementError } from '@/instruments/measurement/rvc-measurement-error';
-import { swellingDefinition } from '@/instruments/swelling';
+import { highWater, type HighWater } from '@/instruments/swelling';
 import { findProtocol } from '@/lib/protocol/find-protocol';
 import { reportWords } from '@/lib/safety/report-words';
 import { Refusal } from '@/lib/work/refusal';
@@ -71,7 +71,7 @@ export interface ParticipantView {
   /** Flags of a safety or deviation rule. */
   readonly flags: readonly { readonly on: string; readonly title: string; readonly exercise: string | null }[];
   readonly consent: { readonly number: string; readonly mode: string; readonly signedAt: string | null } | null;
-  readonly threshold: { readonly percent: number; readonly name: string };
+  readonly threshold: HighWater;
   readonly errorPoints: number;
   /** Days without training from which a break counts. */
   readonly breakDays: number;
@@ -163,7 +163,6 @@ export async function viewParticipant(work: Work, { code }: { code: string }): P
     `select s.local_on::text as "on", f.rule, f.exercise from training_flag f join training_session s on s.id = f.session_id where f.participant_id = ? and f.state <> 'withdrawn' and f.detail ->> 'severity' in ('safety', 'deviation') order by s.local_on`,
     [head.id],
   );
-  const primary = swellingDefinition(document.swelling.primary);
   const baseline = visits.find(({ key, rvc, sides }) => key === 'baseline' && sides !== null && rvc === null);
   return {
     id: head.id,
@@ -188,7 +187,7 @@ export async function viewParticipant(work: Work, { code }: { code: string }): P
     flags: flags.map(({ on, rule, exercise }) => ({ on, title: trainingRule(rule).title, exercise: exercise === null ? null : (findExercise(exercise)?.name ?? exercise) })),
     breakDays: document.training.breakDays,
     consent: head.consent,
-    threshold: { percent: document.swelling.primary === 'D5' ? 5 : 10, name: primary.name },
+    threshold: highWater(document.swelling.primary),
     errorPoints: rvcMeasurementError(document.measurement.semPct),
   };
 }

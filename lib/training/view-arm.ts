@@ -1,3 +1,4 @@
+import { highWater } from '@/instruments/swelling';
 import { rvcMeasurementError } from '@/instruments/measurement/rvc-measurement-error';
 import { findOwnRecord } from '@/lib/people/find-own-record';
 import { findProtocol } from '@/lib/protocol/find-protocol';
@@ -17,9 +18,6 @@ export interface ArmView {
   readonly thresholdPercent: number;
 }
 
-/** The safety table's line for a clinician's review (S3): RVC of 10 % or more. */
-const highWaterPercent = 10;
-
 export async function viewArm(work: Work): Promise<ArmView> {
   const { participant, site, today } = await findOwnRecord(work);
   const protocol = await findProtocol(work, participant.protocolVersionId);
@@ -31,5 +29,5 @@ export async function viewArm(work: Work): Promise<ArmView> {
     const changePercent = index === 0 ? 0 : rvc === null ? null : rvc * 100;
     return changePercent === null ? [] : [{ on: localDate(moment(measured_at), site.timeZone), changePercent }];
   });
-  return { today, affectedSide: participant.affectedSide, siteName: site.name, points, errorPercent: rvcMeasurementError(protocol.document.measurement.semPct), thresholdPercent: highWaterPercent };
+  return { today, affectedSide: participant.affectedSide, siteName: site.name, points, errorPercent: rvcMeasurementError(protocol.document.measurement.semPct), thresholdPercent: highWater(protocol.document.swelling.primary).percent };
 }
