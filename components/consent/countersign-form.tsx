@@ -9,6 +9,7 @@ import { useSend } from '../api/use-send';
 import { Button } from '../ui/button';
 import { Checkbox } from '../ui/checkbox';
 import { ErrorSummary } from '../ui/error-summary';
+import { PasswordField } from '../ui/password-field';
 import { TextField } from '../ui/text-field';
 import { useToast } from '../ui/toast';
 
@@ -34,9 +35,8 @@ export function CountersignForm({ consentId, version }: { consentId: string; ver
       <ErrorSummary problems={listProblems(formState.errors, signing.error?.problem ?? null)} />
       <Checkbox id="agreed" label={staffStatement} error={formState.errors.agreed?.message} {...register('agreed')} />
       <TextField id="name" label="Type your full name as your signature" autoComplete="name" error={formState.errors.name?.message} {...register('name')} />
-      <TextField
+      <PasswordField
         id="password"
-        type="password"
         label="Your password"
         hint="Signing takes it once more, so that nobody signs in your place."
         autoComplete="current-password"

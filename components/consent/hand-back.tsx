@@ -6,7 +6,7 @@ import { ProblemError, send } from '../api/send';
 import { PlainShell } from '../shell/plain-shell';
 import { Button } from '../ui/button';
 import { PageHead } from '../ui/page';
-import { TextField } from '../ui/text-field';
+import { PasswordField } from '../ui/password-field';
 
 /** The tablet comes back: only the password of who signed in opens the rest again. */
 export function HandBack({ screeningId }: { screeningId: string }) {
@@ -37,9 +37,8 @@ export function HandBack({ screeningId }: { screeningId: string }) {
           void take();
         }}
       >
-        <TextField
+        <PasswordField
           id="password"
-          type="password"
           label="For the site: your password"
           autoComplete="current-password"
           value={password}

@@ -10,13 +10,12 @@ import { listProblems, placeRefusal } from '../api/form-problems';
 import { useSend } from '../api/use-send';
 import { Button } from '../ui/button';
 import { ErrorSummary } from '../ui/error-summary';
-import { TextField } from '../ui/text-field';
+import { PasswordField } from '../ui/password-field';
 
 const input = z.object({ password: joinInput.shape.password });
 
 /** Chooses a password and signs in. The rule is said before typing; nothing is used up by looking at the page. */
 export function JoinForm({ token }: { token: string }) {
-  const [shown, setShown] = useState(false);
   const [entering, setEntering] = useState(false);
   const { register, handleSubmit, setError, formState } = useForm<{ password: string }>({ resolver: zodResolver(input), defaultValues: { password: '' } });
   const joining = useSend<{ email: string }, { token: string; password: string }>('POST', '/api/join');
@@ -38,18 +37,12 @@ export function JoinForm({ token }: { token: string }) {
   return (
     <form noValidate className="mt-6 grid gap-5" onSubmit={(event) => void join(event)}>
       <ErrorSummary problems={listProblems(formState.errors, joining.error?.problem ?? null)} />
-      <TextField
+      <PasswordField
         id="password"
         label="Your password"
         hint="At least 12 characters. A few unrelated words in a row are easy to remember and hard to guess; spaces are welcome."
-        type={shown ? 'text' : 'password'}
         autoComplete="new-password"
         error={formState.errors.password?.message}
-        unit={
-          <Button kind="link" onClick={() => setShown(!shown)} aria-pressed={shown}>
-            {shown ? 'Hide' : 'Show'}
-          </Button>
-        }
         {...register('password')}
       />
       <Button kind="primary" size="phone" wide type="submit" atWork={(joining.isPending || entering) && 'Setting the password'}>

@@ -7,6 +7,7 @@ import { useForm } from 'react-hook-form';
 import { z } from 'zod';
 import { Button } from '../ui/button';
 import { ErrorSummary } from '../ui/error-summary';
+import { PasswordField } from '../ui/password-field';
 import { TextField } from '../ui/text-field';
 
 const signInInput = z.object({
@@ -33,7 +34,6 @@ export function SignInForm({ demo }: { demo: readonly DemoSignIn[] }) {
   const router = useRouter();
   const [refusal, setRefusal] = useState<string | null>(null);
   const [entering, setEntering] = useState<string | null>(null);
-  const [shown, setShown] = useState(false);
 
   const enter = async ({ email, password }: z.infer<typeof signInInput>) => {
     setRefusal(null);
@@ -64,17 +64,11 @@ export function SignInForm({ demo }: { demo: readonly DemoSignIn[] }) {
           error={formState.errors.email?.message}
           {...register('email')}
         />
-        <TextField
+        <PasswordField
           id="password"
           label="Password"
-          type={shown ? 'text' : 'password'}
           autoComplete="current-password"
           error={formState.errors.password?.message}
-          unit={
-            <Button kind="link" onClick={() => setShown(!shown)} aria-pressed={shown}>
-              {shown ? 'Hide' : 'Show'}
-            </Button>
-          }
           {...register('password')}
         />
         <Button kind="primary" size="phone" wide type="submit" atWork={entering !== null && 'Signing in'}>
