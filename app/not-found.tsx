@@ -1,14 +1,10 @@
+import { ClosedDoor } from '@/components/shell/closed-door';
 import { PlainShell } from '@/components/shell/plain-shell';
-import { ButtonLink } from '@/components/ui/button';
-import { PageHead } from '@/components/ui/page';
 
 export default function NotFound() {
   return (
     <PlainShell>
-      <PageHead title="There is no such page" lede="It may be at another site, or the address was mistyped. What is out of your reach looks the same as what does not exist." />
-      <div className="mt-6">
-        <ButtonLink href="/">Go to your start page</ButtonLink>
-      </div>
+      <ClosedDoor why="not found" />
     </PlainShell>
   );
 }
