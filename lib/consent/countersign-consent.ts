@@ -3,6 +3,7 @@ import { ConsentSignatureSchema } from '@/entities/consent-signature';
 import { consentCopy } from '@/lib/jobs/handlers/consent-copy';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
+import { addSignature } from './add-signature';
 import { contentHash } from './consent-content';
 import { findConsent } from './find-consent';
 import { stepOf, type ConsentStep } from './view-consent';
@@ -18,18 +19,7 @@ export async function countersignConsent(work: Work, { id, name }: { id: string;
   const contentSha256 = contentHash({ formNumber: form.number, form: form.form, permissions: consent.permissions });
   const first = await work.em.findOneOrFail(ConsentSignatureSchema, { consentId: id, who: 'participant' });
   if (first.contentSha256 !== contentSha256) throw new Refusal('locked', 'The content has changed since the participant signed it. Start the consent again.');
-  work.em.create(ConsentSignatureSchema, {
-    consentId: consent.id,
-    screeningId: consent.screeningId,
-    siteId: consent.siteId,
-    participantId: null,
-    who: 'staff',
-    means: 'typed',
-    name,
-    drawing: null,
-    signedAt: work.now,
-    contentSha256,
-  });
+  await addSignature(work, consent, { who: 'staff', means: 'typed', name, contentSha256 });
   await work.em.flush();
   await work.later(consentCopy, { consentId: consent.id, siteId: consent.siteId });
   return stepOf(consent);

@@ -1,9 +1,8 @@
 import { signByParticipant } from '@/entities/consent';
-import { ConsentSignatureSchema } from '@/entities/consent-signature';
-import { ParticipantIdentitySchema } from '@/entities/participant-identity';
 import { Refusal } from '@/lib/work/refusal';
 import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
+import { addSignature } from './add-signature';
 import { contentHash } from './consent-content';
 import { checkPermissions, checkStatements, findConsent } from './find-consent';
 import { stepOf, type ConsentStep } from './view-consent';
@@ -27,19 +26,7 @@ export async function recordPaperSignature(
   // On paper, reading cannot be followed; the signature beside the statements stands for it.
   consent.sectionsRead = form.form.sections.map(({ key }) => key);
   signByParticipant(consent, { sections: consent.sectionsRead, permissions: form.form.permissions.map(({ key }) => key) }, work.now);
-  const identity = await work.em.findOne(ParticipantIdentitySchema, { screeningId: consent.screeningId });
-  work.em.create(ConsentSignatureSchema, {
-    consentId: consent.id,
-    screeningId: consent.screeningId,
-    siteId: consent.siteId,
-    participantId: null,
-    who: 'participant',
-    means: 'paper',
-    name: identity?.name ?? '',
-    drawing: null,
-    signedAt: work.now,
-    contentSha256: contentHash({ formNumber: form.number, form: form.form, permissions }),
-  });
+  await addSignature(work, consent, { who: 'participant', means: 'paper', contentSha256: contentHash({ formNumber: form.number, form: form.form, permissions }) });
   await work.em.flush();
   return stepOf(consent);
 }

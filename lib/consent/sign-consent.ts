@@ -1,8 +1,7 @@
 import { signByParticipant } from '@/entities/consent';
-import { ConsentSignatureSchema } from '@/entities/consent-signature';
-import { ParticipantIdentitySchema } from '@/entities/participant-identity';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
+import { addSignature } from './add-signature';
 import { contentHash } from './consent-content';
 import { checkPermissions, checkStatements, findConsent } from './find-consent';
 import type { SignConsentInput } from './input';
@@ -20,17 +19,10 @@ export async function signConsent(work: Work, { id, statements, permissions, sig
   checkPermissions(form, permissions);
   consent.permissions = permissions;
   signByParticipant(consent, { sections: form.form.sections.map(({ key }) => key), permissions: form.form.permissions.map(({ key }) => key) }, work.now);
-  const identity = await work.em.findOne(ParticipantIdentitySchema, { screeningId: consent.screeningId });
-  work.em.create(ConsentSignatureSchema, {
-    consentId: consent.id,
-    screeningId: consent.screeningId,
-    siteId: consent.siteId,
-    participantId: null,
+  await addSignature(work, consent, {
     who: 'participant',
     means: signature.kind,
-    name: signature.kind === 'typed' ? signature.name : (identity?.name ?? ''),
-    drawing: signature.kind === 'drawn' ? JSON.stringify({ path: signature.path, width: signature.width, height: signature.height }) : null,
-    signedAt: work.now,
+    ...(signature.kind === 'typed' ? { name: signature.name } : { drawing: JSON.stringify({ path: signature.path, width: signature.width, height: signature.height }) }),
     contentSha256: contentHash({ formNumber: form.number, form: form.form, permissions }),
   });
   await work.em.flush();
