@@ -143,7 +143,7 @@ describe('the house', () => {
 
   test('every address of the API is in the route table', () => {
     const table = readFileSync(join(root, 'app/api/routes.ts'), 'utf8');
-    const made = inRoom('app').filter(({ path, text }) => path.endsWith('/route.ts') && /\broute\(\{|\buploadRoute\(\{/.test(text));
+    const made = inRoom('app').filter(({ path, text }) => path.endsWith('/route.ts') && /\b(?:route|uploadRoute|plainRoute)\(\{/.test(text));
     const missing = made
       .map(({ path }) => path.replace(/^app/, '').replace(/\/route\.ts$/, '').replace(/\[(\w+)\]/g, '{$1}'))
       .filter((address) => !table.includes(`'${address}'`));

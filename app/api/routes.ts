@@ -23,6 +23,10 @@ import * as participantsRoute from './participants/route';
 import * as participantRoute from './participants/[code]/route';
 import * as participantIdentityRoute from './participants/[code]/identity/route';
 import * as peopleRoute from './people/route';
+import * as joinRoute from './join/route';
+import * as sessionHandOverRoute from './session/hand-over/route';
+import * as sessionRoleRoute from './session/role/route';
+import * as sessionTakeBackRoute from './session/take-back/route';
 import * as queriesRoute from './queries/route';
 import * as queriesAnswerRoute from './queries/[id]/answer/route';
 import * as queriesAskAgainRoute from './queries/[id]/ask-again/route';
@@ -86,6 +90,10 @@ export const routes: RouteTable = {
   '/api/extracts/{id}/retry': { POST: extractsRetryRoute.POST },
   '/api/history': { GET: historyRoute.GET },
   '/api/invitations': { POST: invitationsRoute.POST },
+  '/api/join': { POST: joinRoute.POST },
+  '/api/session/hand-over': { POST: sessionHandOverRoute.POST },
+  '/api/session/role': { POST: sessionRoleRoute.POST },
+  '/api/session/take-back': { POST: sessionTakeBackRoute.POST },
   '/api/participants': { GET: participantsRoute.GET },
   '/api/participants/{code}': { GET: participantRoute.GET },
   '/api/participants/{code}/identity': { POST: participantIdentityRoute.POST },

@@ -37,11 +37,20 @@ export async function requireActor(act: Act): Promise<Actor> {
   return may(actor.role, act) ? actor : forbidden();
 }
 
-/** For the few handlers that act on the session itself. @throws Refusal 'unauthenticated'. */
-export async function requireStaffActor(): Promise<Actor> {
+const signInFirst = () => new Refusal('unauthenticated', 'Sign in first.');
+
+/** For the few handlers that act on the session itself: who is signed in. @throws Refusal 'unauthenticated'. */
+export async function requireSignedIn(): Promise<Actor> {
   const session = await currentSession();
-  if (!session) throw new Refusal('unauthenticated', 'Sign in first.');
+  if (!session) throw signInFirst();
   return session.actor;
+}
+
+/** The same, for the session's token. @throws Refusal 'unauthenticated'. */
+export async function requireToken(): Promise<string> {
+  const token = await sessionToken();
+  if (!token) throw signInFirst();
+  return token;
 }
 
 /** For pages: loads one view under an act; what is out of reach is 'not found', what the role may not is 'forbidden'. */

@@ -1,13 +1,14 @@
 import { expect, test } from 'vitest';
 import { hashPassword } from '@/lib/auth/password';
 import { handOver, takeBack } from '@/lib/auth/hand-over';
+import { handOverForConsent } from '@/lib/consent/hand-over-for-consent';
 import { may } from '@/lib/auth/policy';
 import { liveSession } from '@/lib/auth/session';
 import { openSession } from '@/lib/auth/sign-in';
 import { viewScreening } from '@/lib/enrolment/view-screening';
 import { signConsent } from '@/lib/consent/sign-consent';
 import { withWork } from '@/lib/work/with-work';
-import { asOwner, givenConsent, givenScene, givenScreening } from '../given';
+import { asOwner, givenConsent, givenParticipant, givenScene, givenScreening, givenStaff } from '../given';
 
 test('a tablet in the participant’s hands reaches one consent and nothing else, until its owner takes it back', async () => {
   const { site, protocol, coordinator } = await givenScene();
@@ -31,4 +32,18 @@ test('a tablet in the participant’s hands reaches one consent and nothing else
   expect((await liveSession(token))?.actor.role).toBe('invitee');
   await takeBack(token, 'slack-water-lantern-9');
   expect((await liveSession(token))?.actor.role).toBe('site-coordinator');
+});
+
+test('only who takes consent at the site hands the tablet over, and only for a consent that is read on it', async () => {
+  const scene = await givenScene();
+  const { site, protocol, coordinator, otherCoordinator } = scene;
+  const participant = await givenParticipant(site, protocol, coordinator);
+  const open = await givenScreening(site, protocol, { confirmedBy: coordinator });
+  await givenConsent(open, protocol, coordinator, 'reading');
+  const token = await openSession(coordinator.accountId);
+  await expect(handOverForConsent(participant.actor, token, participant.screeningId)).rejects.toMatchObject({ code: 'forbidden' });
+  await expect(handOverForConsent(await givenStaff('assessor', site), token, open.id)).rejects.toMatchObject({ code: 'forbidden' });
+  await expect(handOverForConsent(otherCoordinator, token, open.id)).rejects.toMatchObject({ code: 'not-found' });
+  await expect(handOverForConsent(coordinator, token, participant.screeningId)).rejects.toMatchObject({ code: 'conflict' });
+  await expect(handOverForConsent(coordinator, token, open.id)).resolves.toEqual({ handedOver: true });
 });

@@ -4,4 +4,9 @@ import { plainRoute } from '@/lib/web/plain-route';
 import { originOf } from '@/lib/web/request';
 
 // Counts wrong links although it refuses them, so it opens its own work.
-export const POST = plainRoute('account.join', (body, request) => join(joinInput.parse(body), { from: originOf(request) }));
+export const POST = plainRoute({
+  act: 'account.join',
+  summary: 'Join by an invitation link and set a password',
+  input: joinInput,
+  receive: (input, request) => join(input, { from: originOf(request) }),
+});

@@ -1,19 +1,11 @@
 import { z } from 'zod';
-import { handOver } from '@/lib/auth/hand-over';
-import { viewScreeningConsent } from '@/lib/consent/view-consent';
+import { handOverForConsent } from '@/lib/consent/hand-over-for-consent';
 import { plainRoute } from '@/lib/web/plain-route';
-import { requireStaffActor, sessionToken } from '@/lib/web/session';
-import { Refusal } from '@/lib/work/refusal';
-import { withWork } from '@/lib/work/with-work';
+import { requireSignedIn, requireToken } from '@/lib/web/session';
 
-const input = z.strictObject({ screeningId: z.uuid() });
-
-export const POST = plainRoute('session.hand-over', async (body) => {
-  const { screeningId } = input.parse(body);
-  const actor = await requireStaffActor();
-  const consent = await withWork(actor, 'consent.view', (work) => viewScreeningConsent(work, { screeningId }));
-  const token = await sessionToken();
-  if (!token || !consent) throw new Refusal('not-found', 'There is no consent to read here.');
-  await handOver(token, { screeningId, siteId: consent.siteId });
-  return { handedOver: true };
+export const POST = plainRoute({
+  act: 'session.hand-over',
+  summary: 'Hand the tablet to a participant for one consent',
+  input: z.strictObject({ screeningId: z.uuid() }),
+  receive: async ({ screeningId }) => handOverForConsent(await requireSignedIn(), await requireToken(), screeningId),
 });

@@ -1,14 +1,11 @@
 import { z } from 'zod';
 import { takeBack } from '@/lib/auth/hand-over';
 import { plainRoute } from '@/lib/web/plain-route';
-import { sessionToken } from '@/lib/web/session';
-import { Refusal } from '@/lib/work/refusal';
+import { requireToken } from '@/lib/web/session';
 
-const input = z.strictObject({ password: z.string().min(1, 'Write your password.').max(256) });
-
-export const POST = plainRoute('session.hand-over', async (body) => {
-  const { password } = input.parse(body);
-  const token = await sessionToken();
-  if (!token) throw new Refusal('unauthenticated', 'Sign in first.');
-  return takeBack(token, password);
+export const POST = plainRoute({
+  act: 'session.hand-over',
+  summary: 'Take the tablet back with one’s own password',
+  input: z.strictObject({ password: z.string().min(1, 'Write your password.').max(256) }),
+  receive: async ({ password }) => takeBack(await requireToken(), password),
 });
