@@ -114,7 +114,6 @@ export const policy = {
   'people.list': read('administrator', 'data-manager', 'auditor'),
   // Unattended work.
   'job.mail': { roles: ['system'], kind: 'write', identity: 'on' },
-  'job.mail-sign-in': signIn(write('system')),
   'job.extract': write('system'),
   'job.mark-missed': write('system'),
   // The seal covers every row of the trail, identity rows too; it keeps hashes only.

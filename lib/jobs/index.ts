@@ -5,6 +5,7 @@ import { consentLink } from './handlers/consent-link';
 import { extractPrepare } from './handlers/extract-prepare';
 import { mailSend } from './handlers/mail-send';
 import { participantInvite } from './handlers/participant-invite';
+import { questionnairesMissed } from './handlers/questionnaires-missed';
 
 /** Every job, alphabetical by name. A queue for each is made when the data base is migrated. */
-export const jobs: readonly AnyJob[] = [auditSeal, consentCopy, consentLink, extractPrepare, mailSend, participantInvite];
+export const jobs: readonly AnyJob[] = [auditSeal, consentCopy, consentLink, extractPrepare, mailSend, participantInvite, questionnairesMissed];

@@ -1,6 +1,7 @@
 import { beforeAll, describe, expect, test } from 'vitest';
-import type { Actor } from '@/lib/auth/roles';
+import { systemActor, type Actor } from '@/lib/auth/roles';
 import { listQuestionnaires } from '@/lib/questionnaires/list-questionnaires';
+import { markMissed } from '@/lib/questionnaires/mark-missed';
 import { saveAnswers } from '@/lib/questionnaires/save-answers';
 import { submitAnswers } from '@/lib/questionnaires/submit-answers';
 import { viewQuestionnaire } from '@/lib/questionnaires/view-questionnaire';
@@ -133,5 +134,28 @@ describe('submitting', () => {
     const participant = await person();
     const { alerts } = await submit(participant.actor, await idOf(participant), { ...whole, warmth: 1 });
     expect(alerts).toMatchObject([{ item: 'warmth', title: 'Get medical care today' }]);
+  });
+});
+
+describe('a window that has closed', () => {
+  test('leaves what was unsent as missed, keeps its answers, and by the clock of the site', async () => {
+    const someone = await person();
+    const id = await idOf(someone);
+    await save(someone.actor, id, half);
+    const run = (moment: string) => withWork(systemActor([scene.site.id]), 'job.mark-missed', markMissed, { now: new Date(moment) });
+    // Closes on 3 February: it is open until that day ends at the site, whose clock is London's.
+    await run('2027-02-03T23:30:00Z');
+    expect((await kept(id))?.state).toBe('in progress');
+    await run('2027-02-04T00:30:00Z');
+    expect(await kept(id)).toMatchObject({ state: 'missed', answers: half });
+    expect((await run('2027-02-04T01:30:00Z')).missed).toBe(0);
+  });
+
+  test('does not touch what was sent', async () => {
+    const someone = await person();
+    const id = await idOf(someone);
+    await submit(someone.actor, id, whole);
+    await withWork(systemActor([scene.site.id]), 'job.mark-missed', markMissed, { now: new Date('2027-02-10T12:00:00Z') });
+    expect((await kept(id))?.state).toBe('submitted');
   });
 });
