@@ -56,14 +56,14 @@ test.describe('WCAG 2.2 AA as far as a program can see, and no sideways scroll a
   test('the site’s pages', async ({ as }) => {
     const page = await as('coordinator');
     const code = await codeOf(await as('participant-one'));
-    const done = await visitOf(page, code, 'Month 6');
+    const [done, toCome, underWay] = [await visitOf(page, code, 'Month 6'), await visitOf(page, code, 'Month 12'), await visitOf(page, code, 'Month 9')];
     const { rows } = await ask<{ rows: { id: string }[] }>(page, '/api/screenings?state=screening');
     const { urgent } = await ask<{ urgent: { id: string }[] }>(page, '/api/today');
     const visits = `/participants/${code}/visits`;
     for (const path of [
       ...(await offered(page)),
       '/screening', '/screening/new', `/screening/${rows[0]?.id}`, `/safety/${urgent[0]?.id}`,
-      `/participants/${code}`, `${visits}/${done.id}`,
+      `/participants/${code}`, `${visits}/${done.id}`, `${visits}/${done.id}/limb`, `${visits}/${toCome.id}`, `${visits}/${underWay.id}/limb`,
     ])
       await check(page, path, desktop);
   });
