@@ -22,6 +22,9 @@ export const SymptomReportSchema = defineEntity({
     outcome: p.enum(['no action', 'advice', 'unscheduled visit', 'adverse event']).nullable(),
     reviewNote: p.string().nullable(),
     clientKey: p.uuid(),
+    /** When letters about it were put in the queue, each kind once; by jobs only. */
+    waitingLettersAt: p.datetime().nullable(),
+    overdueLettersAt: p.datetime().nullable(),
   },
 });
 export type SymptomReport = InferEntity<typeof SymptomReportSchema>;

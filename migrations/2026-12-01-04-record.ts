@@ -54,6 +54,8 @@ export class TheRecord extends Migration {
     this.addSql(`create table training_flag (${record}, session_id uuid not null references training_session, flag_key text not null, rule text not null, exercise text, detail jsonb not null default '{}', state text not null default 'raised' check (state in ('raised', 'withdrawn', 'seen')), raised_at timestamptz not null, version integer not null default 1, unique (participant_id, flag_key))`);
     this.addSql(`create table symptom_report (${record}, reported_at timestamptz not null, noticed_on date not null, answers jsonb not null, level text not null check (level in ('S0', 'S1', 'S2', 'S3', 'R1', 'R1+', 'R2', 'R3', 'R4')), note text check (length(note) <= 1000), due_at timestamptz, hold_training boolean not null,
       state text not null default 'new' check (state in ('new', 'read', 'reviewed')), read_at timestamptz, reviewed_at timestamptz, reviewed_by uuid references account, outcome text check (outcome in ('no action', 'advice', 'unscheduled visit', 'adverse event')), review_note text, client_key uuid not null, version integer not null default 1,
+      -- When letters about it were put in the queue: each kind once.
+      waiting_letters_at timestamptz, overdue_letters_at timestamptz,
       unique (participant_id, client_key), check ((state = 'reviewed') = (outcome is not null)))`);
     this.addSql('create index symptom_report_site on symptom_report (site_id, state, due_at)');
     for (const table of ['participant', 'visit', 'limb_assessment', 'limb_trial', 'questionnaire_response', 'training_session', 'training_set', 'training_flag', 'symptom_report'])

@@ -54,7 +54,7 @@ function Held({ week: { heldUntilAnswer, site } }: { week: WeekView }) {
         <b>Please hold your training.</b>{' '}
         {due === null
           ? `Go on once ${site.name} has measured your arms and told you so.`
-          : `You told us of a change. ${site.name} answers by ${formatNearDate(due, site.timeZone)}, ${formatTime(due, site.timeZone)}.`}{' '}
+          : `You told us of a change. ${site.name} is to answer by ${formatNearDate(due, site.timeZone)}, ${formatTime(due, site.timeZone)}.`}{' '}
         Worse? <Link className="font-semibold" href="/report">Tell us again</Link>, or call {site.phone}.
       </p>
     </div>

@@ -49,6 +49,7 @@ export const didWords: Readonly<Record<string, string>> = {
   'extract.download': 'downloaded',
   'audit.export': 'saved the trail',
   'job.mark-missed': 'marked missed',
+  'job.write-team': 'wrote to the team',
   'job.extract': 'prepared',
   'demo.seed': 'loaded',
   'study.migrate': 'set up',

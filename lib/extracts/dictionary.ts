@@ -214,6 +214,8 @@ export const dictionary = {
     review_note: text('The reviewer’s words'),
     client_key: inner,
     version: counter,
+    waiting_letters_at: out('quasi', 'Moment of the letters that it waits'),
+    overdue_letters_at: out('quasi', 'Moment of the letters that it is late'),
   },
 } as const satisfies Record<string, Record<string, Entry>>;
 

@@ -4,10 +4,12 @@ import { consentLink } from './letters/consent-link';
 import { participantInvitation } from './letters/participant-invitation';
 import { passwordReset } from './letters/password-reset';
 import { queryRaised } from './letters/query-raised';
+import { reportOverdue } from './letters/report-overdue';
+import { reportWaiting } from './letters/report-waiting';
 import { staffInvitation } from './letters/staff-invitation';
 
 /** Every letter, alphabetical by name. */
-export const letters: readonly AnyLetter[] = [consentCopy, consentLink, participantInvitation, passwordReset, queryRaised, staffInvitation];
+export const letters: readonly AnyLetter[] = [consentCopy, consentLink, participantInvitation, passwordReset, queryRaised, reportOverdue, reportWaiting, staffInvitation];
 
 /** The letter of that name. Throws RangeError when there is none. */
 export function letterNamed(name: string): AnyLetter {

@@ -1,5 +1,6 @@
 import { SymptomReportSchema, type SymptomReport } from '@/entities/symptom-report';
 import { type SafetyVerdict, safetyVerdict } from '@/instruments/safety/judge-symptom-report';
+import { reportsWaiting } from '@/lib/jobs/handlers/reports-waiting';
 import type { OwnRecord } from '@/lib/people/find-own-record';
 import type { Work } from '@/lib/work/work';
 import { dueAt } from './due-at';
@@ -28,7 +29,7 @@ export function toSentReport(report: SymptomReport, { site }: OwnRecord): SentRe
 export const findSentReport = (work: Work, own: OwnRecord, clientKey: string): Promise<SymptomReport | null> =>
   work.em.findOne(SymptomReportSchema, { participantId: own.participant.id, clientKey });
 
-/** Keeps a report, starts the site's clock from the server's time, and holds training where the level asks for it. */
+/** Keeps a report, starts the site's clock from the server's time, holds training where the level asks for it, and has the team written to unless nothing presses. */
 export async function keepReport(
   work: Work,
   own: OwnRecord,
@@ -45,5 +46,6 @@ export async function keepReport(
     ...said,
   });
   await settleHold(work, own.participant.id);
+  if (verdict.urgency !== 'none') await work.later(reportsWaiting, { siteId: report.siteId, reportId: report.id });
   return report;
 }

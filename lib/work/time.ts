@@ -29,6 +29,7 @@ function clockOf(timeZone: string): Intl.DateTimeFormat {
     minute: '2-digit',
     second: '2-digit',
     hourCycle: 'h23',
+    timeZoneName: 'longOffset',
   });
   formats.set(timeZone, made);
   return made;
@@ -45,6 +46,12 @@ const partsIn = (at: Date, timeZone: string): Record<string, string> =>
 export function localDate(at: Date, timeZone: string): string {
   const { year, month, day } = partsIn(at, timeZone);
   return `${year}-${month}-${day}`;
+}
+
+/** What the clock of `timeZone` shows at a moment, and how far it stands from UTC: { time: '17:00', offset: 'UTC+01:00' }. */
+export function localClock(at: Date, timeZone: string): { time: string; offset: string } {
+  const { hour, minute, timeZoneName = 'GMT' } = partsIn(at, timeZone);
+  return { time: `${hour}:${minute}`, offset: timeZoneName === 'GMT' ? 'UTC+00:00' : timeZoneName.replace('GMT', 'UTC') };
 }
 
 /** The moment at which the clock of `timeZone` shows a local date and time ('HH:MM'). In a skipped hour, the moment after it. */

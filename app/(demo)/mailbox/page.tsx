@@ -34,7 +34,7 @@ export default async function MailboxPage({ searchParams }: { searchParams: Prom
       <PageHead title="Demo mailbox" lede="Every letter the registry would have sent, newest first. Times are UTC." />
       <div className="mt-6 grid gap-10 lg:grid-cols-2">
         <ul>
-          {letters.length === 0 ? <Empty title="No letter yet">Invitations, consent links and queries send one.</Empty> : null}
+          {letters.length === 0 ? <Empty title="No letter yet">Invitations, consent links, queries and participants’ reports send one.</Empty> : null}
           {letters.map(({ id, at, to, subject }) => (
             <li key={id} className="border-b border-rule py-2.5">
               <Link className="btn-link" href={`/mailbox?letter=${encodeURIComponent(id)}`} aria-current={letter?.id === id ? 'true' : undefined}>

@@ -51,7 +51,7 @@ export function AdviceSheet({ view, flag, onChangeTo, onKeep, onClose }: AdviceS
           <b>
             Call {view.site.name} on <a href={`tel:${view.site.phone.replace(/[^\d+]/g, '')}`}>{view.site.phone}</a> before your next session.
           </b>{' '}
-          The site is told as well.
+          The site sees what you send in its list.
         </p>
       ) : null}
     </Dialog>
