@@ -44,7 +44,7 @@ async function main(): Promise<void> {
 async function compare(chosen: readonly BenchTask[], r: RProcess | undefined, folder: string): Promise<void> {
   row('task', 'rows', 'ours ms', 'R ms', 'ours/R', 'limit', 'answer');
   for (const task of chosen) {
-    const n = task.sizes[2];
+    const n = task.comparedSize ?? task.sizes[2];
     const columns = task.data(n);
     if (r) for (const [name, column] of Object.entries(columns)) writeFileSync(join(folder, `${task.name}.${name}.f64`), Buffer.from(column.buffer));
     const { run } = task.prepare(columns);

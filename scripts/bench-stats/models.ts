@@ -5,6 +5,7 @@ import type { Refusal } from '@/stats/model/fit';
 import { mixedModel } from '@/stats/model/mixed-model';
 import { negativeBinomial } from '@/stats/model/negative-binomial';
 import { poissonRegression } from '@/stats/model/poisson-regression';
+import { theilSen } from '@/stats/progression/theil-sen';
 import { nextDouble } from '@/stats/random/source';
 import { Xoshiro128 } from '@/stats/random/xoshiro128';
 import { followUpColumns } from './generate';
@@ -33,6 +34,17 @@ function weeklyLoads(n: number): Columns {
     [id[row], week[row], y[row]] = [Math.floor(row / WEEKS), at, 1.8 + 0.35 * level + (0.02 + 0.008 * slope) * at + 0.1 * normal()];
   }
   return { id, week, y };
+}
+
+/** Loads to half a kilogram in weeks 0 to 51, a steady rise with scatter: heavy ties in both columns. */
+function loadsByWeek(n: number): Columns {
+  const { uniform, normal } = drawsFrom(51);
+  const columns = { week: new Float64Array(n), load: new Float64Array(n) };
+  for (let row = 0; row < n; row++) {
+    const week = Math.floor(WEEKS * uniform());
+    [columns.week[row], columns.load[row]] = [week, Math.max(0, Math.round(2 * (5 + 0.21 * week + 4 * normal())) / 2)];
+  }
+  return columns;
 }
 
 /** Overdispersed counts over 0.3 to 2.3 years. */
@@ -112,6 +124,26 @@ export const modelTasks: readonly BenchTask[] = [
           const replicates = runRange(task, { seed: 1, from: 0, to: day!.length > 1e4 ? 20 : REPLICATES });
           const estimate = observed(statisticOf(task), drawingOf(task));
           return [estimate, bootstrapLimits(estimate, replicates, { kind: 'percentile', n: day!.length }).se!];
+        },
+      };
+    },
+  },
+  {
+    name: 'theil-sen',
+    against: 'every pair by outer(), its median and the two order statistics',
+    limit: 0.5,
+    sizes: [1e4, 3e4, 1e5],
+    comparedSize: 2_500,
+    memorySize: 5e5,
+    runs: 5,
+    tolerance: 1e-9,
+    data: loadsByWeek,
+    prepare({ week, load }) {
+      return {
+        inputBytes: 2 * week!.byteLength,
+        run() {
+          const { estimate, lower, upper, kendallS } = theilSen(week!, load!);
+          return [estimate!, lower!, upper!, kendallS];
         },
       };
     },

@@ -9,8 +9,10 @@ export interface BenchTask {
   readonly against: string;
   /** Highest ratio of our time to R's that the project allows itself. */
   readonly limit: number;
-  /** Rows of three sizes, ascending; the last is the one that R runs too. */
+  /** Rows of three sizes, ascending; the last is compared with R. */
   readonly sizes: readonly [number, number, number];
+  /** Rows of the comparison, where R's way cannot manage the last size. */
+  readonly comparedSize?: number;
   /** Rows for the memory figure, when the last size is too small to stand out from the runtime itself. */
   readonly memorySize?: number;
   /** Paired runs; fewer for what takes R half a minute. */

@@ -1,5 +1,4 @@
-import { pickRows } from '../missing/usable-rows';
-import { orderByTwo } from './order-by-two';
+import { inOrderByTwo } from './order-by-two';
 
 /** Kendall's S with what its tests need. */
 export interface Kendall {
@@ -20,9 +19,7 @@ export interface Kendall {
  */
 export function kendall(x: Float64Array, y: Float64Array): Kendall {
   const n = x.length;
-  const order = orderByTwo(x, y);
-  const byX = pickRows(x, order);
-  const byXThenY = pickRows(y, order);
+  const { x: byX, y: byXThenY } = inOrderByTwo(x, y);
   const sortedY = y.slice().sort();
   const xTies = tieSums((i, j) => byX[i] === byX[j], n);
   const yTies = tieSums((i, j) => sortedY[i] === sortedY[j], n);

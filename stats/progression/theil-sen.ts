@@ -3,6 +3,7 @@ import { pickRows, usableRows } from '../missing/usable-rows';
 import { methodOf } from '../registry';
 import { kendall } from './kendall';
 import { quantile } from './quantile';
+import { inOrderByTwo } from './order-by-two';
 import { slopesAtRanks } from './pairwise-slopes';
 import { requireLevel, requireRange, type Estimate } from '../result';
 
@@ -35,17 +36,18 @@ const METHOD = methodOf('theilSen');
  * Theil-Sen slope: the median over all pairs of rows of (yj - yi)/(xj - xi),
  * pairs with equal x left out. Theil 1950, Proc KNAW 53; Sen 1968, JASA 63:1379;
  * limits at ranks (N - C)/2 and (N + C)/2 + 1, interpolated between ordered
- * slopes, with C = z sqrt(tie-corrected variance of Kendall's S).
+ * slopes, with C = z sqrt(tie-corrected variance of Kendall's S). O(n log n)
+ * expected beyond 2,000 rows, see slope-selection.ts.
  *
  * @param x e.g. weeks; @param y e.g. kg. Rows with a missing value are left out.
- * @throws RangeError for unequal columns, infinite values or a level outside (0, 1).
+ * @throws RangeError for unequal columns, infinite values, a level outside (0, 1), or more than 2,000 rows of
+ * which a column goes over more than 300 powers of two.
  */
 export function theilSen(x: ArrayLike<number>, y: ArrayLike<number>, level = 0.95): TheilSen {
   requireLevel(level);
   requireRange(x.length === y.length, `Columns must be equally long: ${x.length} and ${y.length} rows.`);
   const usable = usableRows({ x, y });
-  const xs = pickRows(x, usable.rows);
-  const ys = pickRows(y, usable.rows);
+  const { x: xs, y: ys } = inOrderByTwo(pickRows(x, usable.rows), pickRows(y, usable.rows));
   const n = xs.length;
   const { s, variance, tiedX, z } = kendall(xs, ys);
   const slopes = (n * (n - 1)) / 2 - tiedX;

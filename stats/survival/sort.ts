@@ -8,12 +8,24 @@ const DIGIT_BITS = 11;
 const DIGITS = 1 << DIGIT_BITS;
 const PASSES = 6;
 
+/** Working memory of one sort. */
+export interface SortRoom {
+  readonly words: Uint32Array;
+  readonly rows: Uint32Array;
+}
+
+export function roomToSort(n: number): SortRoom {
+  return { words: new Uint32Array(2 * n), rows: new Uint32Array(n) };
+}
+
 /**
  * Ascending, stable order of the keys.
  * @param keys finite numbers (no NaN)
+ * @param room working memory for callers that sort often, `roomToSort` of as many keys
+ * @param order taken for the answer
  * @returns the row numbers, smallest key first; equal keys keep their row order
  */
-export function orderOf(keys: Float64Array): Uint32Array {
+export function orderOf(keys: Float64Array, room?: SortRoom, order: Uint32Array = new Uint32Array(keys.length)): Uint32Array {
   const n = keys.length;
   let low = Infinity;
   let high = -Infinity;
@@ -26,10 +38,11 @@ export function orderOf(keys: Float64Array): Uint32Array {
     if (key > high) high = key;
     if (whole && key !== Math.floor(key)) whole = false;
   }
-  if (sorted) return identity(n);
-  if (whole && high - low <= 4 * n + 1024) return countingOrder(keys, low, high - low + 1);
-  if (n <= 256) return identity(n).sort((a, b) => keys[a]! - keys[b]! || a - b);
-  return radixOrder(keys, low < 0);
+  identity(order);
+  if (sorted) return order;
+  if (whole && high - low <= 4 * n + 1024) return countingOrder(keys, low, high - low + 1, order);
+  if (n <= 256) return order.sort((a, b) => keys[a]! - keys[b]! || a - b);
+  return radixOrder(keys, low < 0, room ?? roomToSort(n), order);
 }
 
 /** Rows in the order of a small integer code, keeping the given order within a code. */
@@ -46,17 +59,14 @@ export function regroup(order: Uint32Array, codes: ArrayLike<number>, count: num
   return { order: out, starts };
 }
 
-function identity(n: number): Uint32Array {
-  const order = new Uint32Array(n);
-  for (let i = 0; i < n; i++) order[i] = i;
-  return order;
+function identity(order: Uint32Array): void {
+  for (let i = 0; i < order.length; i++) order[i] = i;
 }
 
-function countingOrder(keys: Float64Array, low: number, range: number): Uint32Array {
+function countingOrder(keys: Float64Array, low: number, range: number, order: Uint32Array): Uint32Array {
   const next = new Uint32Array(range + 1);
   for (let i = 0; i < keys.length; i++) next[keys[i]! - low + 1]!++;
   for (let k = 0; k < range; k++) next[k + 1]! += next[k]!;
-  const order = new Uint32Array(keys.length);
   for (let i = 0; i < keys.length; i++) order[next[keys[i]! - low]!++] = i;
   return order;
 }
@@ -66,15 +76,15 @@ function countingOrder(keys: Float64Array, low: number, range: number): Uint32Ar
  * doubles already sort like unsigned integers; with negative keys present the
  * sign bit is flipped, and all bits of the negative ones.
  */
-function radixOrder(keys: Float64Array, hasNegative: boolean): Uint32Array {
+function radixOrder(keys: Float64Array, hasNegative: boolean, room: SortRoom, order: Uint32Array): Uint32Array {
   const n = keys.length;
-  const words = sortableWords(keys, hasNegative);
+  const words = sortableWords(keys, hasNegative, room.words);
   const counts = new Uint32Array(PASSES * DIGITS);
   for (let i = 0; i < n; i++) {
     for (let pass = 0; pass < PASSES; pass++) counts[pass * DIGITS + digit(words, i, pass)]!++;
   }
-  let from: Uint32Array = identity(n);
-  let to: Uint32Array = new Uint32Array(n);
+  let from = order;
+  let to = room.rows;
   for (let pass = 0; pass < PASSES; pass++) {
     const next = counts.subarray(pass * DIGITS, (pass + 1) * DIGITS);
     if (next[digit(words, 0, pass)] === n) continue; // every key has this digit in common
@@ -90,7 +100,8 @@ function radixOrder(keys: Float64Array, hasNegative: boolean): Uint32Array {
     }
     [from, to] = [to, from];
   }
-  return from;
+  if (from !== order) order.set(from);
+  return order;
 }
 
 function digit(words: Uint32Array, row: number, pass: number): number {
@@ -112,13 +123,14 @@ function digit(words: Uint32Array, row: number, pass: number): number {
   }
 }
 
-function sortableWords(keys: Float64Array, hasNegative: boolean): Uint32Array {
-  if (!hasNegative && !keys.includes(-0) /* includes() takes 0 and -0 as one */) return wordsOf(keys);
-  const words = wordsOf(keys.map((key) => key + 0)).slice(); // -0 + 0 is 0
+function sortableWords(keys: Float64Array, hasNegative: boolean, words: Uint32Array): Uint32Array {
+  const own = wordsOf(keys);
+  if (!hasNegative && !keys.includes(-0) /* includes() takes 0 and -0 as one */) return own;
   for (let i = 0; i < keys.length; i++) {
-    const negative = words[2 * i + 1]! >>> 31 === 1;
-    words[2 * i] = negative ? ~words[2 * i]! : words[2 * i]!;
-    words[2 * i + 1] = negative ? ~words[2 * i + 1]! : words[2 * i + 1]! ^ 0x80000000;
+    const high = own[2 * i + 1]!;
+    const negative = high >>> 31 === 1 && keys[i] !== 0; // -0 goes with 0
+    words[2 * i] = negative ? ~own[2 * i]! : own[2 * i]!;
+    words[2 * i + 1] = negative ? ~high : high | 0x80000000;
   }
   return words;
 }

@@ -3,7 +3,6 @@ import { describe, expect, test } from 'vitest';
 import { clusteredProportion } from '@/stats/progression/clustered-proportion';
 import { loadOnset } from '@/stats/progression/load-onset';
 import { medianLimits } from '@/stats/progression/median-limits';
-import { selectByRadix } from '@/stats/progression/pairwise-slopes';
 import { quantile } from '@/stats/progression/quantile';
 import { quantileBands } from '@/stats/progression/quantile-bands';
 import { ruleAdherence } from '@/stats/progression/rule-adherence';
@@ -195,17 +194,6 @@ describe('Theil-Sen by hand', () => {
         expect(r.z).toBe(plain.z);
       }),
     );
-  });
-
-  test('beyond two thousand rows the selected slopes are those of the sorted list', () => {
-    const x = Float64Array.from({ length: 300 }, (_, i) => (i * 37) % 52);
-    const y = Float64Array.from({ length: 300 }, (_, i) => Math.round(((i * 73) % 101) - 0.4 * x[i]!) / 2);
-    const sorted: number[] = [];
-    x.forEach((_, i) => { for (let j = i + 1; j < 300; j++) if (x[i] !== x[j]) sorted.push((y[j]! - y[i]!) / (x[j]! - x[i]!)); });
-    sorted.sort((a, b) => a - b);
-    const ranks = [1, 2, 777, Math.floor(sorted.length / 2), sorted.length - 1, sorted.length];
-    const selected = selectByRadix(x, y, ranks);
-    for (const rank of ranks) expect(selected.get(rank)).toBe(sorted[rank - 1]! + 0);
   });
 
   test('a long record is answered by the same rule', () => {
