@@ -28,6 +28,9 @@ export class TheRecord extends Migration {
     this.addSql(`create unique index visit_scheduled_once on visit (participant_id, key) where unscheduled_reason is null`);
     this.addSql('create index visit_site_due on visit (site_id, state, closes_on)');
     this.addSql('create index visit_participant on visit (participant_id, target_on)');
+    // The day's work looks for what has not ended: by its day, and by its appointment.
+    this.addSql(`create index visit_open on visit (site_id, target_on) where state in ('to come', 'in progress')`);
+    this.addSql(`create index visit_booked on visit (site_id, booked_at) where booked_at is not null and state in ('to come', 'in progress')`);
     this.addSql(`create table limb_assessment (${record}, visit_id uuid not null unique references visit, assessor_id uuid not null references account, measured_at timestamptz not null,
       position text, sleeve_worn boolean, hours_since_training integer check (hours_since_training between 0 and 999), method text not null, start_offset_mm integer not null, step_mm integer not null check (step_mm > 0),
       level_count integer not null check (level_count between 2 and 30), tolerance_mm integer not null, state text not null default 'open' check (state in ('open', 'complete')),
@@ -44,6 +47,7 @@ export class TheRecord extends Migration {
       check ((state = 'submitted') = (submitted_at is not null)), check (opens_on <= due_on and due_on <= closes_on), unique (participant_id, instrument, due_on))`);
     this.addSql('create index questionnaire_response_site on questionnaire_response (site_id, state, closes_on)');
     this.addSql('create index questionnaire_response_visit on questionnaire_response (visit_id)');
+    this.addSql(`create index questionnaire_response_open on questionnaire_response (site_id, due_on) where state in ('due', 'in progress')`);
     this.addSql(`create table training_session (${record}, local_on date not null, time_zone text not null, entered_at timestamptz not null, late boolean not null default false,
       arm_check text not null check (arm_check in ('the same', 'a little fuller', 'clearly fuller', 'not sure')), soreness text not null check (soreness in ('no', 'a little', 'a lot')), effort integer check (effort between 0 and 10), note text check (length(note) <= 500),
       client_key uuid not null, version integer not null default 1, unique (participant_id, client_key))`);
