@@ -117,7 +117,8 @@ function Latest({ data, scale }: { data: TideData; scale: TideScale }) {
   const last = data.weeks.at(-1);
   if (!last || data.latest.length === 0) return null;
   const bar = scale.x(last.starts) + scale.dayWidth * 5.5;
-  const words = Math.max(scale.today, bar) + 28;
+  // The longest name and load take about 150 units and stay inside the frame.
+  const words = Math.min(Math.max(scale.today, bar) + 28, field.width - 150);
   return data.latest.map(({ exercise, loadKg }, index) => {
     const above = last.loadsKg.slice(0, index).reduce((sum, load) => sum + load, 0);
     const middle = scale.load(above + (last.loadsKg[index] ?? 0) / 2);

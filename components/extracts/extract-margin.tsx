@@ -1,3 +1,4 @@
+import { lowerFirst } from '@/instruments/words';
 import type { ExtractView } from '@/lib/extracts/view-extract';
 import { countOf, formatMoment } from '../ui/format';
 import { Ledger, type LedgerStep } from '../ui/ledger';
@@ -36,7 +37,7 @@ export function ExtractMargin({ extract }: { extract: ExtractView }) {
       </MarginPart>
       {removed.length > 0 ? (
         <MarginPart title="Left out of every file">
-          <p className="t-small mt-1.5 text-ink-2">Name, address, phone, date of birth and signatures are never read. Also left out: {removed.map((words) => words.charAt(0).toLowerCase() + words.slice(1)).join('; ')}.</p>
+          <p className="t-small mt-1.5 text-ink-2">Name, address, phone, date of birth and signatures are never read. Also left out: {removed.map(lowerFirst).join('; ')}.</p>
         </MarginPart>
       ) : null}
     </>

@@ -1,5 +1,6 @@
 'use client';
 
+import { lowerFirst } from '@/instruments/words';
 import { useState, type FormEvent } from 'react';
 import { otherPositions } from '@/lib/measurement/input';
 import { useSend } from '../api/use-send';
@@ -63,7 +64,7 @@ export function CorrectDialog({ item, query, onClose, onDone }: CorrectDialogPro
     <Dialog
       open
       onClose={onClose}
-      title={`Correct ${item.label.charAt(0).toLowerCase()}${item.label.slice(1)}?`}
+      title={`Correct ${lowerFirst(item.label)}?`}
       actions={
         <>
           <Button type="submit" form="correct-form" kind="primary" atWork={correct.isPending ? 'Saving' : false}>

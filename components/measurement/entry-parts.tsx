@@ -1,5 +1,6 @@
 'use client';
 
+import { upperFirst } from '@/instruments/words';
 import type { OpenAssessmentView } from '@/lib/measurement/view-open';
 import { Button } from '../ui/button';
 import { Buoy } from '../ui/signs';
@@ -84,7 +85,7 @@ function toGo(girths: number, answers: number): string {
   const parts = [...(girths ? [counted(girths, 'girth', 'girths')] : []), ...(answers ? [counted(answers, 'answer', 'answers')] : [])];
   if (parts.length === 0) return 'Both trials are in. Earlier values and the change appear once they are saved.';
   const text = parts.join(' and ');
-  return `${text.charAt(0).toUpperCase()}${text.slice(1)} to go; saving takes you to the first. Earlier values and the change stay hidden until both trials are saved.`;
+  return `${upperFirst(text)} to go; saving takes you to the first. Earlier values and the change stay hidden until both trials are saved.`;
 }
 
 /** Save, leave, what is still to do, and the caution. */

@@ -12,7 +12,7 @@ import { Button } from '../ui/button';
 import { Dialog } from '../ui/dialog';
 import { ErrorSummary } from '../ui/error-summary';
 import { TextArea } from '../ui/text-area';
-import { TextField } from '../ui/text-field';
+import { DateField } from '../ui/date-field';
 
 const input = addVisitInput.omit({ code: true });
 type Typed = { on: string; why: string };
@@ -47,7 +47,7 @@ export function ExtraVisit({ code, today }: { code: string; today: string }) {
       >
         <form id="extra-visit" noValidate className="grid gap-4" onSubmit={(event) => void add(event)}>
           <ErrorSummary problems={listProblems(formState.errors, adding.error?.problem ?? null)} />
-          <TextField id="on" type="date" label="Day of the visit" error={formState.errors.on?.message} {...register('on')} />
+          <DateField id="on" label="Day of the visit" error={formState.errors.on?.message} {...register('on')} />
           <TextArea id="why" label="What it is for" hint="Such as: arm fuller since Thursday. No names." error={formState.errors.why?.message} {...register('why')} />
         </form>
       </Dialog>

@@ -1,11 +1,9 @@
+import { upperFirst } from '@/instruments/words';
 import type { ParticipantView } from '@/lib/participants/view-participant';
 import { formatDate, formatNumber, formatVolumeMl } from '../ui/format';
 import { FactStrip } from '../ui/page';
 
-const inWords = (code: string): string => {
-  const text = code.replaceAll('-', ' ');
-  return text.charAt(0).toUpperCase() + text.slice(1);
-};
+const inWords = (code: string): string => upperFirst(code.replaceAll('-', ' '));
 
 function bmi(weightG: number | null, heightMm: number | null): string | null {
   // Body mass index: kg over metres squared.

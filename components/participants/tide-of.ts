@@ -1,3 +1,4 @@
+import { lowerFirst } from '@/instruments/words';
 import type { ParticipantView, ParticipantVisit } from '@/lib/participants/view-participant';
 import { mondayOf } from '@/instruments/calendar';
 import type { TideData, TideVisit } from '../chart/tide-data';
@@ -7,6 +8,8 @@ import { daysBetween, formatChange, formatDate, formatNearDate } from '../ui/for
 /** Exercises the chart can tell apart by fill. */
 const fills = 3;
 const daysAhead = 120;
+/** Time ahead, at least, as a share of the time gone. */
+const roomShare = 0.14;
 const monthFirst = (day: string): string => `${day.slice(0, 7)}-01`;
 const later = (day: string, days: number): string => dayOf(dayNumber(day) + days);
 const other = 'Other';
@@ -73,7 +76,10 @@ export function tideOf(view: ParticipantView): TideData {
   const from = monthFirst(facts.enrolledOn);
   const lastWindow = visits.reduce((day, { closesOn }) => (closesOn > day ? closesOn : day), today);
   const wanted = later(today, daysAhead);
-  const to = monthFirst(later(wanted < lastWindow ? wanted : later(lastWindow, 14), 31));
+  const windows = wanted < lastWindow ? wanted : later(lastWindow, 14);
+  // What was lifted last is written in the time ahead, so that never shrinks to nothing.
+  const room = later(today, Math.round(daysBetween(from, today) * roomShare));
+  const to = monthFirst(later(windows > room ? windows : room, 31));
   return {
     code,
     armWords: [`${arm} against ${against},`, 'change from', 'baseline, %'],
@@ -83,7 +89,7 @@ export function tideOf(view: ParticipantView): TideData {
     visits: visits.filter(({ doneOn, targetOn }) => (doneOn ?? targetOn) < to && (doneOn ?? targetOn) >= from).map((visit) => tideVisit(visit, today)),
     errorPercent: errorPoints,
     threshold: { percent: threshold.percent, words: `a case by the definition ${threshold.name}` },
-    symptoms: symptoms.filter(({ on }) => on >= from).map(({ on, said, signCount }) => ({ on, signCount, words: twoLines(said.toLowerCase()) })),
+    symptoms: symptoms.filter(({ on }) => on >= from).map(({ on, said, signCount }) => ({ on, signCount, words: twoLines(lowerFirst(said)) })),
     ...loadsOf(view),
     pauses: pausesOf(view),
     callouts: flags.slice(-2).map(({ on, title, exercise }) => ({ week: mondayOf(on), words: exercise ? `${exercise}: ${title.toLowerCase()}` : title.toLowerCase() })),

@@ -1,3 +1,4 @@
+import { lowerFirst } from '@/instruments/words';
 import { formatCount, formatLimits, formatPercent } from '../ui/format';
 
 /** '38'; '<5' where a small count is not shown. */
@@ -11,4 +12,4 @@ export const limitWords = (lower: number | null, upper: number | null): string =
 
 /** '55 not eligible, 12 no time'. */
 export const reasonWords = (reasons: readonly { reason: string; count: number | null }[]): string =>
-  reasons.map(({ reason, count }) => `${countWords(count)} ${reason.charAt(0).toLowerCase()}${reason.slice(1)}`).join(', ');
+  reasons.map(({ reason, count }) => `${countWords(count)} ${lowerFirst(reason)}`).join(', ');
