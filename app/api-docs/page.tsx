@@ -7,14 +7,15 @@ import { ruleOf } from '@/lib/auth/policy';
 import { roleNames } from '@/lib/auth/roles';
 
 export const metadata: Metadata = { title: 'API' };
-export const dynamic = 'force-static';
+// A page made at build time has no nonce, and its scripts would be refused.
+export const dynamic = 'force-dynamic';
 
 const rows = Object.entries(routes)
   .flatMap(([address, methods]) => Object.entries(methods).map(([method, { declaration }]) => ({ address, method, declaration })))
   .sort((a, b) => a.address.localeCompare(b.address) || a.method.localeCompare(b.method));
 
 /** Headers a request of this kind must carry. */
-const needs = ({ create, change }: { create?: true; change?: true }): string => (create ? 'Idempotency-Key' : change ? 'If-Match' : '');
+const needs = ({ create, change }: { create?: true; change?: true }): string => (create ? 'Idempotency-Key' : change ? 'If-Match' : 'nothing');
 
 /** Every address of the API, from the same declarations the server answers by. */
 export default function ApiDocsPage() {

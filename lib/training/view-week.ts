@@ -60,8 +60,8 @@ const clamp = (day: string, from: string, to: string): string => (day < from ? f
 
 /** Visits on their day: done, booked, or 'to be booked' on the last day of the week on which the window is open. */
 function visitItems(visits: Rows['visits'], timeZone: string, span: { from: string; to: string; today: string }): [string, WeekItem][] {
-  return visits.flatMap(({ name, opens_on, closes_on, booked_at, done_on }): [string, WeekItem][] => {
-    if (done_on !== null) return done_on >= span.from && done_on <= span.to ? [[done_on, { kind: 'visit', name, time: null, done: true, isWindow: false }]] : [];
+  return visits.flatMap(({ name, opens_on, closes_on, booked_at, done_on, state }): [string, WeekItem][] => {
+    if (done_on !== null) return done_on >= span.from && done_on <= span.to ? [[done_on, { kind: 'visit', name, time: null, done: state !== 'in progress', isWindow: false }]] : [];
     if (booked_at !== null) {
       const at = moment(booked_at);
       const on = localDate(at, timeZone);
