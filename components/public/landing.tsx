@@ -19,7 +19,7 @@ export function Landing({ view }: { view: WelcomeView | null }) {
     <div className="shell">
       <header className="public-head">
         <Brand href="/welcome" />
-        {view ? <span className="border-l border-rule-2 pl-5">{view.studyName}</span> : null}
+        {view ? <span className="border-l border-rule-2 pl-3.5 sm:pl-5">{view.studyName}</span> : null}
         <nav aria-label="On this page">
           <a href="#ask">What it is</a>
           <a href="#join">Who can join</a>

@@ -54,6 +54,7 @@ export function EligibilityChecklist({ screeningId, version, criteria: given, ma
                 name={`criterion-${key}`}
                 label={text}
                 choices={choices}
+                as="line"
                 value={value}
                 error={unsaved[key] ?? (stops ? `This stops it: the protocol asks for ${lets}.` : undefined)}
                 onChange={(event) => void answer(key, event.target.value === 'yes' ? 'yes' : 'no')}

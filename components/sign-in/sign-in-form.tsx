@@ -106,6 +106,7 @@ function DemoSignIns({
             </span>
             <Button
               kind="link"
+              className="shrink-0"
               atWork={entering === who.email && 'Signing in'}
               onClick={() => void enter(who)}
               aria-label={`Sign in as ${who.name}, ${who.role}`}

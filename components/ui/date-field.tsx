@@ -1,5 +1,8 @@
-import type { ComponentProps } from 'react';
+'use client';
+
+import { type ComponentProps, useEffect, useRef, useState } from 'react';
 import { Field, type FieldWords } from './field';
+import { formatDate } from './format';
 
 export interface DateFieldProps extends FieldWords, Omit<ComponentProps<'input'>, 'size' | 'type' | 'disabled'> {
   /** Day only, or day and time of day (local to the site). */
@@ -7,13 +10,42 @@ export interface DateFieldProps extends FieldWords, Omit<ComponentProps<'input'>
   className?: string;
 }
 
-/** A day as `yyyy-mm-dd` (with time `yyyy-mm-ddThh:mm`); the browser shows it in the reader's own order. */
-export function DateField({ label, hint, error, optional, labelHidden, withTime, id, className, ...rest }: DateFieldProps) {
+/** '3 Dec 2026', with the time where there is one; nothing while the day is not whole. */
+const inFull = (value: string): string => (value === '' ? '' : [formatDate(value.slice(0, 10)), value.slice(11)].filter((part) => part !== '').join(', '));
+
+/**
+ * A day as `yyyy-mm-dd` (with time `yyyy-mm-ddThh:mm`). The browser shows it in the order of its own country, which may
+ * read month first or day first; so the day stands beside it with its month in letters.
+ */
+export function DateField({ label, hint, error, optional, labelHidden, withTime, id, className, ref, ...rest }: DateFieldProps) {
+  const input = useRef<HTMLInputElement | null>(null);
+  const [shown, setShown] = useState('');
+  // Without a list: whoever keeps the value (this form, a library, the browser), what the input holds is what is read.
+  useEffect(() => setShown(input.current?.value ?? ''));
   return (
     <Field {...{ label, hint, error, optional, labelHidden, id, className }}>
       {(joined) => (
         <span className={`box ${error ? 'box-error' : ''}`}>
-          <input {...rest} {...joined} type={withTime ? 'datetime-local' : 'date'} />
+          <input
+            {...rest}
+            {...joined}
+            type={withTime ? 'datetime-local' : 'date'}
+            ref={(element) => {
+              input.current = element;
+              if (typeof ref === 'function') return ref(element);
+              if (ref) ref.current = element;
+              return undefined;
+            }}
+            onChange={(event) => {
+              setShown(event.target.value);
+              void rest.onChange?.(event);
+            }}
+          />
+          {shown ? (
+            <span className="box-unit whitespace-nowrap" aria-hidden="true">
+              {inFull(shown)}
+            </span>
+          ) : null}
         </span>
       )}
     </Field>

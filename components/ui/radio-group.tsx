@@ -15,12 +15,12 @@ export interface RadioGroupProps
   value?: string | null;
   /** The value chosen at first, when the browser keeps it (react-hook-form). */
   defaultValue?: string;
-  /** Plain rounds, phone tiles one under another, or a row of two to four tiles. */
-  as?: 'rounds' | 'tiles' | 'row';
+  /** Plain rounds, the same in one line for a word or two each, phone tiles one under another, or a row of two to four tiles. */
+  as?: 'rounds' | 'line' | 'tiles' | 'row';
   className?: string;
 }
 
-const frames = { rounds: 'picks', tiles: 'picks', row: 'tiles-row' } as const;
+const frames = { rounds: 'picks', line: 'picks picks-line', tiles: 'picks', row: 'tiles-row' } as const;
 
 /** One answer out of a few that all stay in sight. */
 export function RadioGroup({
@@ -41,7 +41,7 @@ export function RadioGroup({
     <FieldSet {...{ label, hint, error, optional, labelHidden, id, className }}>
       <div className={frames[as]}>
         {choices.map((choice) => (
-          <label key={choice.value} className={as === 'rounds' ? 'pick' : 'tile'}>
+          <label key={choice.value} className={as === 'rounds' || as === 'line' ? 'pick' : 'tile'}>
             <input
               {...rest}
               type="radio"
