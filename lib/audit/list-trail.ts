@@ -50,6 +50,8 @@ interface Row {
   code: string | null;
   site_name: string | null;
   visit_name: string | null;
+  /** The account a sign-in was tried for: the system acts, because nobody is signed in yet. */
+  account: string | null;
   before: Record<string, unknown> | null;
   after: Record<string, unknown> | null;
   reason: string | null;
@@ -72,13 +74,13 @@ function conditionsOf({ who, code, act, table, field, from, to }: TrailFilter): 
 }
 
 /** What the entry is about, from the images alone and the visit beside it. */
-function subjectOf({ table_name: table, visit_name: visitName, before, after, op }: Row): string {
+function subjectOf({ table_name: table, visit_name: visitName, account, before, after, op }: Row): string {
   const image = after ?? before ?? {};
   const name = tableWords[table] ?? table.replaceAll('_', ' ');
   const text = (key: string): string[] => (typeof image[key] === 'string' || typeof image[key] === 'number' ? [String(image[key])] : []);
   const more = table === 'limb_trial' ? [...text('side'), ...text('trial').map((trial) => `trial ${trial}`)] : table === 'data_query' ? text('number').map((number) => `Q-${number.padStart(4, '0')}`) : [];
   const parts = table === 'visit' ? text('name') : [...(visitName ? [visitName] : []), op === 'EVENT' ? name : visitName ? name.toLowerCase() : name, ...more];
-  return parts.join(', ') || name;
+  return [...parts, ...(account ? [account] : [])].join(', ') || name;
 }
 
 const toEntry = (row: Row): TrailEntry => ({
@@ -106,9 +108,10 @@ export async function readEntries(work: Work, filter: TrailFilter, { before, lim
   const rows = await work.sql<Row>(
     `with found as (select e.* from audit_entry e where ${text} ${before ? 'and e.id < ?::bigint' : ''} order by e.id desc limit ?),
        named as (select *, ${leafSql} as leaf, coalesce(after, before) as image from found)
-     select n.id::text as id, n.at::text as at, a.label as who, n.role, n.act, n.op, n.table_name, p.code, s.name as site_name, v.name as visit_name, n.before, n.after, n.reason, n.request, n.leaf,
+     select n.id::text as id, n.at::text as at, a.label as who, n.role, n.act, n.op, n.table_name, p.code, s.name as site_name, v.name as visit_name, about.label as account, n.before, n.after, n.reason, n.request, n.leaf,
        coalesce(n.txid < (select below_txid from seal order by id desc limit 1), false) as sealed
      from named n left join account a on a.id = n.actor_id left join participant p on p.id = n.participant_id left join site s on s.id = n.site_id
+     left join account about on n.table_name in ('sign-in', 'sign-out') and about.id::text = n.row_id
      left join limb_assessment la on n.table_name = 'limb_trial' and la.id = (n.image ->> 'assessment_id')::uuid
      left join visit v on v.id = coalesce((n.image ->> 'visit_id')::uuid, la.visit_id)
      order by n.id desc`,

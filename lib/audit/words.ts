@@ -4,6 +4,7 @@ export const didWords: Readonly<Record<string, string>> = {
   'account.sign-in': 'signed in',
   'account.sign-out': 'signed out',
   'session.choose-role': 'chose a role',
+  'session.hand-over': 'handed the tablet over',
   'screening.open': 'opened a screening',
   'screening.answer': 'answered a criterion',
   'screening.confirm': 'confirmed eligibility',

@@ -1,6 +1,7 @@
 import { setImmediate as nextTurn } from 'node:timers/promises';
 import type { Client } from 'pg';
 import { inOrder, type DemoEvent } from './events';
+import { askForCopies } from './copies';
 import { people, studyEvents } from './generate';
 import { loadFinalRows, loadWithTrail, withoutTrail } from './load';
 import { layOut, type Plan } from './plan';
@@ -37,6 +38,7 @@ export async function seedStudy(client: Client, options: SeedOptions): Promise<P
   else await loadWithTrail(client, inOrder([...studyEvents(plan), ...[...people(plan)].flatMap(({ events }) => events)]));
   await client.query(`select set_config('app.actor', '00000000-0000-4000-8000-000000000001', false), set_config('app.act', 'demo.seed', false), set_config('app.role', 'system', false)`);
   await client.query(`select audit_event('study', $1, $2::jsonb, null, null)`, [plan.ids.study, JSON.stringify({ seeded: 'whole', participants: options.participants, trail: !options.light })]);
+  if (!options.light) await askForCopies(client);
   await client.query('analyze');
   return plan;
 }

@@ -61,6 +61,13 @@ async function checksum(client: Client): Promise<Record<string, string>> {
   return sums;
 }
 
+test('every consent signed on a screen has its copy asked for, behind the work of the day and without a letter', async () => {
+  const { asked, quiet } = await one<{ asked: number; quiet: number }>(owner, `select count(*)::int as asked, (count(*) filter (where data ->> 'letter' = 'none' and priority < 0))::int as quiet from pgboss.job where name = 'consent.copy'`);
+  const { complete } = await one<{ complete: number }>(owner, `select count(*)::int as complete from consent where state = 'complete' and mode <> 'paper'`);
+  expect(complete).toBeGreaterThan(0);
+  expect([asked, quiet]).toEqual([complete, complete]);
+});
+
 describe('the seed', () => {
   test('fills every table with what the generator tells, and says that it is whole', async () => {
     const plan = layOut({ ...options, logWeeks: 200 });

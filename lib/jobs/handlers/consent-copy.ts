@@ -8,12 +8,12 @@ import { firstName } from '@/lib/people/first-name';
 import { withWork } from '@/lib/work/with-work';
 import { defineJob } from '../define-job';
 
-/** Makes the participant's copy of a complete consent, keeps it, and mails it. A copy that is kept is not made again. */
+/** Makes the participant's copy of a complete consent, keeps it, and mails it unless no letter is wanted. A copy that is kept is not made again. */
 export const consentCopy = defineJob({
   name: 'consent.copy',
-  payload: z.strictObject({ siteId: z.uuid(), consentId: z.uuid() }),
+  payload: z.strictObject({ siteId: z.uuid(), consentId: z.uuid(), letter: z.literal('none').optional() }),
   retry: { limit: 7, delaySeconds: 60, backoff: true },
-  async run({ siteId, consentId }, { sendLetter, storage, jobId, now }) {
+  async run({ siteId, consentId, letter: wanted }, { sendLetter, storage, jobId, now }) {
     const system = systemActor([siteId]);
     const copy = await withWork(system, 'job.mail', (work) => readCopy(work, consentId), { now: now() });
     if (!copy) return;
@@ -24,7 +24,7 @@ export const consentCopy = defineJob({
       await storage.put(storageKey, content, { contentType });
       await withWork(system, 'job.mail', (work) => joinCopy(work, { consentId, storageKey, content }), { now: now() });
     }
-    if (!copy.to) return;
+    if (!copy.to || wanted === 'none') return;
     const extension = { 'application/pdf': 'pdf', 'image/jpeg': 'jpg', 'image/png': 'png' }[contentType] ?? 'bin';
     await sendLetter(letter, {
       to: copy.to,
