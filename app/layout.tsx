@@ -2,7 +2,7 @@ import type { Metadata, Viewport } from 'next';
 import { connection } from 'next/server';
 import type { ReactNode } from 'react';
 import { ToastProvider } from '@/components/ui/toast';
-import { hyperlegible, hyperlegibleMono, newsreader } from './fonts';
+import { hyperlegible, hyperlegibleExtended, hyperlegibleMono, newsreader, newsreaderExtended } from './fonts';
 import './globals.css';
 
 export const metadata: Metadata = {
@@ -24,7 +24,7 @@ export const viewport: Viewport = {
 export default async function RootLayout({ children }: Readonly<{ children: ReactNode }>) {
   await connection();
   return (
-    <html lang="en-GB" className={`${newsreader.variable} ${hyperlegible.variable} ${hyperlegibleMono.variable}`}>
+    <html lang="en-GB" className={[newsreader, newsreaderExtended, hyperlegible, hyperlegibleExtended, hyperlegibleMono].map(({ variable }) => variable).join(' ')}>
       <body>
         <a className="skip-link" href="#main">
           Skip to the main part

@@ -1,5 +1,6 @@
 import PDFDocument from 'pdfkit';
 import { formatLong } from './long-date';
+import { openFaces, splitRuns, unprintable, type Face, type Faces } from './print-words';
 import type { ConsentView } from './view-consent';
 
 /** A signature with its drawing, which views leave out. */
@@ -22,21 +23,38 @@ const page = { size: 'A4' as const, margins: { top: 64, bottom: 72, left: 64, ri
 const ink = '#16211F';
 const quiet = '#46514E';
 
-/** The document's built-in faces hold Western European letters; others lose their marks rather than turn to signs. */
-const printable = (text: string): string =>
-  [...text].map((letter) => (/[\x20-\x7e\xa0-\xff–—‘’“”•…]/.test(letter) ? letter : letter.normalize('NFD').replace(/[^\x20-\x7e]/g, '') || '?')).join('');
-
 type Doc = InstanceType<typeof PDFDocument>;
 
-function words(doc: Doc, text: string, { size = 11, font = 'Times-Roman', color = ink, gap = 6 }: { size?: number; font?: string; color?: string; gap?: number } = {}): void {
-  doc.font(font).fontSize(size).fillColor(color).text(printable(text), { lineGap: 3 });
-  doc.y += gap;
+/** A document with the faces it is set in. */
+interface Sheet {
+  readonly doc: Doc;
+  readonly faces: Faces;
 }
 
-const heading = (doc: Doc, text: string): void => {
-  if (doc.y > doc.page.height - 150) doc.addPage();
-  doc.y += 8;
-  words(doc, text, { size: 15, gap: 4 });
+interface Setting {
+  readonly size?: number;
+  readonly face?: Face;
+  readonly color?: string;
+  readonly gap?: number;
+}
+
+/** Sets a text. Where letters are missing it says so under it, with their numbers: a copy of what was signed leaves nothing out in silence. */
+function words(sheet: Sheet, text: string, { size = 11, face = 'prose', color = ink, gap = 6 }: Setting = {}): void {
+  const { doc, faces } = sheet;
+  const { runs, missing } = splitRuns(text, face, faces.covers);
+  const baseline = -faces.ascentOf(face) * size;
+  runs.forEach((run, index) => doc.font(run.face).fontSize(size).fillColor(color).text(run.text, { lineGap: 3, baseline, continued: index < runs.length - 1 }));
+  doc.y += gap;
+  if (missing.length === 0) return;
+  const numbers = missing.flatMap((piece) => [...piece]).map((letter) => `U+${(letter.codePointAt(0) ?? 0).toString(16).toUpperCase().padStart(4, '0')}`);
+  const note = `Where ${unprintable} stands, this copy cannot print what was typed (Unicode ${numbers.join(' ')}). The electronic record holds it as typed.`;
+  words(sheet, note, { size: 8.5, face: 'note', color: quiet });
+}
+
+const heading = (sheet: Sheet, text: string): void => {
+  if (sheet.doc.y > sheet.doc.page.height - 150) sheet.doc.addPage();
+  sheet.doc.y += 8;
+  words(sheet, text, { size: 15, gap: 4 });
 };
 
 function drawSignature(doc: Doc, drawing: NonNullable<PrintedSignature['drawing']>): void {
@@ -46,22 +64,27 @@ function drawSignature(doc: Doc, drawing: NonNullable<PrintedSignature['drawing'
   doc.y = top + drawing.height * scale + 4;
 }
 
-function sign(doc: Doc, signature: PrintedSignature, zone: string): void {
+function sign(sheet: Sheet, signature: PrintedSignature, zone: string): void {
+  const { doc } = sheet;
   if (doc.y > doc.page.height - 190) doc.addPage();
-  words(doc, signature.who === 'participant' ? 'Participant' : 'Person who took consent', { font: 'Helvetica-Bold', gap: 2 });
+  words(sheet, signature.who === 'participant' ? 'Participant' : 'Person who took consent', { face: 'label', gap: 2 });
   if (signature.drawing) drawSignature(doc, signature.drawing);
-  words(doc, signature.name, { size: 13, font: signature.means === 'typed' ? 'Times-Italic' : 'Times-Roman', gap: 2 });
+  words(sheet, signature.name, { size: 13, face: signature.means === 'typed' ? 'hand' : 'prose', gap: 2 });
   const how = { typed: 'Signed by typing the name', drawn: 'Signed by hand on the screen', paper: 'Signed on paper; the site keeps the form' }[signature.means] ?? signature.means;
-  words(doc, `${how}, ${formatLong(signature.signedAt, zone)}. Meaning: ${signature.who === 'participant' ? 'consent given' : 'discussion held'}.`, { size: 10, font: 'Helvetica', color: quiet });
+  words(sheet, `${how}, ${formatLong(signature.signedAt, zone)}. Meaning: ${signature.who === 'participant' ? 'consent given' : 'discussion held'}.`, { size: 10, face: 'note', color: quiet });
 }
 
-function footers(doc: Doc, foot: string): void {
+function footers({ doc, faces }: Sheet, foot: string): void {
   const { start, count } = doc.bufferedPageRange();
   for (let index = start; index < start + count; index += 1) {
     doc.switchToPage(index);
     doc.page.margins.bottom = 0;
-    doc.font('Helvetica').fontSize(8.5).fillColor(quiet);
-    doc.text(printable(`${foot}   Page ${index + 1} of ${count}`), page.margins.left, doc.page.height - 48, { width: doc.page.width - 128, lineBreak: false });
+    doc.fontSize(8.5).fillColor(quiet);
+    let x = page.margins.left;
+    for (const { face, text } of splitRuns(`${foot} Page ${index + 1} of ${count}.`, 'note', faces.covers).runs) {
+      doc.font(face).text(text, x, doc.page.height - 48, { lineBreak: false });
+      x += doc.widthOfString(text);
+    }
   }
 }
 
@@ -74,24 +97,25 @@ export function printConsent({ consent, signatures, staffStatement }: ConsentPri
     doc.on('end', () => resolve(Buffer.concat(parts)));
     doc.on('error', reject);
   });
-  words(doc, consent.form.title, { size: 22, gap: 2 });
-  words(doc, `Consent form ${consent.formNumber}. ${consent.site.name}, ${consent.site.phone}, ${consent.site.email}`, { size: 10, font: 'Helvetica', color: quiet });
+  const sheet: Sheet = { doc, faces: openFaces(doc) };
+  words(sheet, consent.form.title, { size: 22, gap: 2 });
+  words(sheet, `Consent form ${consent.formNumber}. ${consent.site.name}, ${consent.site.phone}, ${consent.site.email}`, { size: 10, face: 'note', color: quiet });
   for (const { title, paragraphs } of consent.form.sections) {
-    heading(doc, title);
-    for (const paragraph of paragraphs) words(doc, paragraph);
+    heading(sheet, title);
+    for (const paragraph of paragraphs) words(sheet, paragraph);
   }
-  heading(doc, 'What was agreed');
-  for (const { text } of consent.form.statements) words(doc, `• ${text}`);
-  if (consent.form.permissions.length > 0) heading(doc, 'What was chosen; the study goes on either way');
-  for (const { key, text } of consent.form.permissions) words(doc, `${consent.permissions[key] === 'yes' ? 'YES' : 'NO'}   ${text}`);
-  heading(doc, 'Signatures');
+  heading(sheet, 'What was agreed');
+  for (const { text } of consent.form.statements) words(sheet, `• ${text}`);
+  if (consent.form.permissions.length > 0) heading(sheet, 'What was chosen; the study goes on either way');
+  for (const { key, text } of consent.form.permissions) words(sheet, `${consent.permissions[key] === 'yes' ? 'YES' : 'NO'}: ${text}`);
+  heading(sheet, 'Signatures');
   for (const signature of signatures) {
-    sign(doc, signature, consent.site.timeZone);
-    if (signature.who === 'staff') words(doc, staffStatement, { size: 10, font: 'Helvetica', color: quiet });
+    sign(sheet, signature, consent.site.timeZone);
+    if (signature.who === 'staff') words(sheet, staffStatement, { size: 10, face: 'note', color: quiet });
   }
   const seal = signatures[0]?.contentSha256 ?? '';
-  words(doc, `The signatures bind to this content (SHA-256): ${seal}`, { size: 8.5, font: 'Helvetica', color: quiet });
-  footers(doc, `Consent form ${consent.formNumber}, copy for the participant.`);
+  words(sheet, `The signatures bind to this content (SHA-256): ${seal}`, { size: 8.5, face: 'note', color: quiet });
+  footers(sheet, `Consent form ${consent.formNumber}, copy for the participant.`);
   doc.end();
   return done;
 }
