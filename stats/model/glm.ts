@@ -7,6 +7,7 @@ import type { Family } from './glm-family';
 import { irls, type GlmData, type IrlsFit } from './irls';
 import { peopleOf } from './person-totals';
 import { sandwich } from './sandwich';
+import { tallyOf } from './tally';
 
 /** Columns of a generalised linear model; an intercept is always part of it. */
 export interface GlmInput {
@@ -85,7 +86,7 @@ export function prepare(input: GlmInput): Prepared {
     if (input.trials === undefined) continue;
     if (!(m[row]! >= y[row]! && Number.isInteger(m[row]) && m[row]! > 0)) throw new RangeError(`There are ${y[row]} events of ${m[row]} trials.`);
   }
-  const data = { design: designOf(terms, rows), y, m, offset: exposure.map(Math.log) };
+  const data = { design: designOf(terms, rows), y, m, offset: exposure.map(Math.log), tally: tallyOf(y, m) };
   return { data, rows, cluster: input.cluster === undefined ? null : peopleOf(input.cluster, rows), level, leftOut };
 }
 
@@ -156,13 +157,18 @@ function clusteredOf({ data, cluster }: Prepared, fit: IrlsFit, family: Family, 
   return { clusters, uncorrected: withSe(variance), corrected: clusters > 1 ? withSe(variance, clusters / (clusters - 1)) : null };
 }
 
-function nullDeviance({ design, y, m, offset }: GlmData, family: Family): number {
+function nullDeviance(data: GlmData, family: Family): number {
+  const { design, y, m, offset } = data;
+  const common = family.commonEta(y, m, offset);
+  let sum = 0;
+  if (family.commonIsBest) {
+    for (let row = 0; row < y.length; row++) sum += family.deviance(y[row]!, common + offset[row]!, m[row]!);
+    return sum;
+  }
   const rows = Int32Array.from({ length: design.n }, (_, row) => row);
-  const alone = designOf([], rows);
-  // The common mean is the answer for the Poisson and binomial families, and near it for the negative binomial.
-  const start = Float64Array.of(family.commonEta(y, m, offset) * Math.sqrt(design.n));
-  const { eta } = irls({ design: alone, y, m, offset }, family, start);
-  return eta.reduce((sum, value, row) => sum + family.deviance(y[row]!, value, m[row]!), 0);
+  const { eta } = irls({ ...data, design: designOf([], rows) }, family, Float64Array.of(common * Math.sqrt(design.n)));
+  for (let row = 0; row < y.length; row++) sum += family.deviance(y[row]!, eta[row]!, m[row]!);
+  return sum;
 }
 
 /** Fit, refuse or report: the way of the models whose family is known beforehand. */

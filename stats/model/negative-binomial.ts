@@ -1,8 +1,10 @@
 import { methodOf } from '../registry';
+import { dot } from './design';
 import type { Refusal } from './fit';
 import { prepare, refusal, report, type Glm, type GlmInput } from './glm';
 import { digammaRise, negativeBinomialFamily, poissonFamily, trigammaFall } from './glm-family';
 import { irls, type GlmData, type IrlsFit } from './irls';
+import { sumOver } from './tally';
 
 /** A negative binomial fit; standard errors of the coefficients hold theta. */
 export interface NegativeBinomial extends Glm {
@@ -51,60 +53,68 @@ export function negativeBinomial(input: GlmInput): NegativeBinomial | Refusal {
     alpha: 0,
     notes: ['The counts vary no more than Poisson counts: the dispersion is 0 and the fit is the Poisson one.'],
   });
-  if (scoreAtZero(data, poisson) <= 0) return edge();
+  let means = meansOf(poisson);
+  if (scoreAtZero(data, means) <= 0) return edge();
   let fit = poisson;
-  let theta = shapeFrom(data, poisson);
+  let theta = shapeFrom(data, means);
   for (let round = 0, settled = false; round < MAX_ROUNDS && !settled; round++) {
-    const next = bestTheta(data, fit, theta);
+    const next = bestTheta(data, means, theta);
     if (next > LARGEST) return edge();
     fit = irls(data, negativeBinomialFamily(next), fit.gamma);
+    means = meansOf(fit);
     settled = Math.abs(next - theta) <= 1e-11 * theta;
     theta = next;
   }
-  const { information } = thetaDerivatives(data, fit, theta);
+  const { information } = thetaDerivatives(data, means, theta);
   return {
     ...report(prepared, negativeBinomialFamily(theta), fit, METHOD, 1),
     theta,
     thetaSe: information > 0 ? 1 / Math.sqrt(information) : null,
-    thetaSeEarly: earlySe(data, fit),
+    thetaSeEarly: earlySe(data, means),
     alpha: 1 / theta,
     notes: [],
   };
 }
 
+/** Fitted means, one exponential a row a fit. */
+function meansOf({ eta }: IrlsFit): Float64Array {
+  const means = new Float64Array(eta.length);
+  for (let row = 0; row < eta.length; row++) means[row] = Math.exp(eta[row]!);
+  return means;
+}
+
 /** Derivative of the log likelihood along alpha at 0, twice over: sum (y - mu)^2 - y. */
-function scoreAtZero({ y }: GlmData, { eta }: IrlsFit): number {
+function scoreAtZero({ y }: GlmData, means: Float64Array): number {
   let sum = 0;
-  for (let row = 0; row < y.length; row++) sum += (y[row]! - Math.exp(eta[row]!)) ** 2 - y[row]!;
+  for (let row = 0; row < y.length; row++) sum += (y[row]! - means[row]!) ** 2 - y[row]!;
   return sum;
 }
 
 /** Moment start: alpha = sum((y - mu)^2 - y)/sum(mu^2). */
-function shapeFrom(data: GlmData, fit: IrlsFit): number {
-  const squares = fit.eta.reduce((sum, eta) => sum + Math.exp(2 * eta), 0);
-  return Math.min(1e6, Math.max(1e-6, squares / scoreAtZero(data, fit)));
+function shapeFrom(data: GlmData, means: Float64Array): number {
+  return Math.min(1e6, Math.max(1e-6, dot(means, means) / scoreAtZero(data, means)));
 }
 
 /** First derivative of the log likelihood in theta and the observed information, coefficients held. */
-function thetaDerivatives({ y }: GlmData, { eta }: IrlsFit, theta: number): { slope: number; information: number } {
-  let slope = 0;
-  let information = 0;
+function thetaDerivatives({ y, tally }: GlmData, means: Float64Array, theta: number): { slope: number; information: number } {
+  let slope = sumOver(tally, (count) => digammaRise(theta, count));
+  let information = sumOver(tally, (count) => trigammaFall(theta, count));
   for (let row = 0; row < y.length; row++) {
-    const mu = Math.exp(eta[row]!);
-    const count = y[row]!;
-    const sum = mu + theta;
+    const mu = means[row]!;
+    const over = 1 / (mu + theta);
+    const share = (mu - y[row]!) * over;
     // log(theta/(theta + mu)) + (mu - y)/(theta + mu): log1p keeps it when theta is large.
-    slope += digammaRise(theta, count) - Math.log1p(mu / theta) + (mu - count) / sum;
-    information += trigammaFall(theta, count) - mu / (theta * sum) + (mu - count) / sum ** 2;
+    slope += share - Math.log1p(mu / theta);
+    information += (share - mu / theta) * over;
   }
   return { slope, information };
 }
 
 /** Newton on log theta, kept inside a factor of 5 a step. */
-function bestTheta(data: GlmData, fit: IrlsFit, start: number): number {
+function bestTheta(data: GlmData, means: Float64Array, start: number): number {
   let theta = start;
   for (let step = 0; step < 100; step++) {
-    const { slope, information } = thetaDerivatives(data, fit, theta);
+    const { slope, information } = thetaDerivatives(data, means, theta);
     // d/dlog theta and its curvature; where that is not negative, go uphill by a fixed factor.
     const first = theta * slope;
     const second = first - theta * theta * information;
@@ -117,13 +127,13 @@ function bestTheta(data: GlmData, fit: IrlsFit, start: number): number {
 }
 
 /** Newton on theta itself from n / sum (y/mu - 1)^2, stopped early; the information is that of the step before the last. */
-function earlySe(data: GlmData, fit: IrlsFit): number | null {
-  const spread = fit.eta.reduce((sum, eta, row) => sum + (data.y[row]! / Math.exp(eta) - 1) ** 2, 0);
+function earlySe(data: GlmData, means: Float64Array): number | null {
+  const spread = means.reduce((sum, mean, row) => sum + (data.y[row]! / mean - 1) ** 2, 0);
   let theta = data.y.length / spread;
   let last = NaN;
   let move = 1;
   for (let step = 1; step < 10 && Math.abs(move) > Number.EPSILON ** 0.25; step++) {
-    const { slope, information } = thetaDerivatives(data, fit, Math.abs(theta));
+    const { slope, information } = thetaDerivatives(data, means, Math.abs(theta));
     last = information;
     move = slope / information;
     theta = Math.abs(theta) + move;

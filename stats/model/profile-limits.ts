@@ -50,7 +50,7 @@ export function profileLimits(input: GlmInput, { kind, interpolated = false }: P
 }
 
 function profilesOf(input: GlmInput, data: GlmData, rows: Int32Array, family: Family): CoefficientProfile[] {
-  const { design, y, m, offset } = data;
+  const { design, offset } = data;
   const full = irls(data, family);
   requireRange(full.escape === null && full.converged, 'Profile limits need a model with a finite estimate.');
   const { names, p, n } = design;
@@ -64,7 +64,7 @@ function profilesOf(input: GlmInput, data: GlmData, rows: Int32Array, family: Fa
     let warm: Float64Array | undefined;
     const signedRoot = (value: number): number => {
       const held = Float64Array.from({ length: n }, (__, row) => offset[row]! + value * column[row]!);
-      const fit = irls({ design: others, y, m, offset: held }, family, warm);
+      const fit = irls({ ...data, design: others, offset: held }, family, warm);
       warm = fit.converged ? fit.gamma : undefined;
       return Math.sign(value - beta[k]!) * Math.sqrt(Math.max(0, 2 * (full.logLikelihood - fit.logLikelihood)));
     };
