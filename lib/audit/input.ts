@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { calendarDay } from '@/lib/work/calendar-day';
 
 /** What of the trail is asked for: the sentence over the table, as data. */
 export const trailFilter = z.strictObject({
@@ -10,8 +11,8 @@ export const trailFilter = z.strictObject({
   table: z.string().max(60).default(''),
   field: z.string().max(60).default(''),
   /** Days, in UTC, both inside. */
-  from: z.union([z.iso.date('Give the day as 2027-03-01.'), z.literal('')]).default(''),
-  to: z.union([z.iso.date('Give the day as 2027-03-01.'), z.literal('')]).default(''),
+  from: z.union([calendarDay('Give the day as 2027-03-01.'), z.literal('')]).default(''),
+  to: z.union([calendarDay('Give the day as 2027-03-01.'), z.literal('')]).default(''),
 });
 export const listTrailInput = trailFilter.extend({
   /** Only entries before this one: the way to the next page. */

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { calendarDay } from '@/lib/work/calendar-day';
 
 /** What consent takes from people: the same schema in the browser and on the server. */
 export const consentModes = ['tablet', 'home', 'paper'] as const;
@@ -40,7 +41,7 @@ export type SignConsentInput = z.infer<typeof signConsentInput>;
 
 export const paperSignatureInput = z.strictObject({
   id: z.uuid(),
-  signedOn: z.iso.date('Give the day that stands beside the signature.'),
+  signedOn: calendarDay('Give the day that stands beside the signature.'),
   statements: z.array(z.string().max(60)).max(40),
   permissions: answers,
 });

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { calendarDay } from '@/lib/work/calendar-day';
 
 /** What screening and enrolment take from people: the same schema in the browser and on the server. */
 
@@ -24,7 +25,7 @@ const optionalText = (most: number) =>
     .nullable()
     .optional();
 
-const date = (sentence: string) => z.iso.date(sentence);
+const date = (sentence: string) => calendarDay(sentence);
 const optionalDate = (sentence: string) =>
   z
     .union([z.literal(''), date(sentence)])

@@ -1,16 +1,22 @@
 import { LimbAssessmentSchema } from '@/entities/limb-assessment';
 import { LimbTrialSchema } from '@/entities/limb-trial';
+import { ParticipantSchema } from '@/entities/participant';
 import { VisitSchema } from '@/entities/visit';
 import { answerQuery } from '@/lib/queries/answer-query';
-import { findTarget } from '@/lib/queries/targets';
+import { findQuery } from '@/lib/queries/find-query';
+import { findTarget, type FieldTarget } from '@/lib/queries/targets';
 import { Refusal } from '@/lib/work/refusal';
 import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import { timeZoneOf } from '@/lib/schedule/view-visit';
 import { z } from 'zod';
+import { calendarDay } from '@/lib/work/calendar-day';
+import { findAssessment } from './find-assessment';
+import { findDoubts } from './find-doubts';
 import type { CorrectValueInput } from './input';
 import { saveCircumstancesInput } from './input';
 import { recompute } from './recompute';
+import { settleDoubts } from './settle-doubts';
 
 const circumstance = saveCircumstancesInput.shape;
 /** Columns of a saved assessment that may be corrected, with the entity's property and the rule for its value. */
@@ -28,45 +34,71 @@ const girth = z.int('A girth is given in whole millimetres.').min(100, 'A girth 
 
 const notHere = () => new Refusal('invalid', 'This value is not corrected here.', 'value');
 
-async function correctTrial(work: Work, id: string, field: string, value: unknown): Promise<void> {
+/** Only what was saved is corrected; an open form is simply typed again. */
+async function requireSaved(work: Work, id: string): Promise<string> {
+  const { state } = await findAssessment(work, id);
+  if (state !== 'complete') throw new Refusal('conflict', 'This assessment is still being taken. Type the value in its form.', 'value');
+  return id;
+}
+
+/** Each answers with the assessment whose doubts change, where there is one. */
+async function correctTrial(work: Work, id: string, field: string, value: unknown): Promise<string | null> {
   const row = await work.em.findOneOrFail(LimbTrialSchema, { id });
   work.expect(row);
   const level = Number(/^circumferences_mm\.(\d+)$/.exec(field)?.[1]);
   if (!(level < row.circumferencesMm.length)) throw notHere();
   row.circumferencesMm = row.circumferencesMm.with(level, girth.parse(value));
+  return requireSaved(work, row.assessmentId);
 }
 
-async function correctAssessment(work: Work, id: string, field: string, value: unknown): Promise<void> {
+async function correctAssessment(work: Work, id: string, field: string, value: unknown): Promise<string | null> {
   const row = await work.em.findOneOrFail(LimbAssessmentSchema, { id });
   work.expect(row);
-  const column = correctable[field];
+  const column = Object.hasOwn(correctable, field) ? correctable[field] : undefined;
   if (!column) throw notHere();
   Object.assign(row, { [column.property]: column.rule.parse(value) });
+  return requireSaved(work, id);
 }
 
-async function correctVisit(work: Work, id: string, field: string, value: unknown): Promise<void> {
+async function correctVisit(work: Work, id: string, field: string, value: unknown): Promise<string | null> {
   const row = await work.em.findOneOrFail(VisitSchema, { id });
   work.expect(row);
   if (field !== 'done_on') throw notHere();
   const on = z.iso.date('Give the day as in 2027-03-03.').parse(value);
+  const { enrolledOn } = await work.em.findOneOrFail(ParticipantSchema, { id: row.participantId });
   const today = localDate(work.now, await timeZoneOf(work, row.siteId));
-  if (on > today) throw new Refusal('invalid', `${on} is in the future; today is ${today}.`, 'value');
+  if (row.state !== 'in progress' && row.state !== 'complete') throw new Refusal('conflict', `${row.name} has not taken place, so it has no day to correct.`, 'value');
+  if (on > today) throw new Refusal('invalid', `${on} is in the future; today is ${today}. Give the day it took place.`, 'value');
+  if (on < enrolledOn) throw new Refusal('invalid', `${on} is before the enrolment on ${enrolledOn}. Give the day it took place.`, 'value');
   row.doneOn = on;
+  return (await work.em.findOne(LimbAssessmentSchema, { visitId: id, state: 'complete' }))?.id ?? null;
+}
+
+/** @throws Refusal 'invalid' unless the query asks about the value that is corrected, 'stale' when it moved on since it was read. */
+async function answerWith(work: Work, target: FieldTarget, { id, version }: { id: string; version: number }, answer: string): Promise<void> {
+  const query = await findQuery({ ...work, expect: () => undefined }, id);
+  if (query.targetTable !== target.table || query.targetId !== target.id || query.field !== target.field)
+    throw new Refusal('invalid', 'That query asks about another value. Correct this one without it, then answer the query at its own value.', 'query');
+  if (query.version !== version) throw new Refusal('stale', 'The query changed in the meantime. Your correction is still here: read the query again, then save.', 'query');
+  await answerQuery({ ...work, expect: () => undefined }, { id, answer });
 }
 
 /**
- * Corrects a saved value with a reason: the old one stays in the trail, the mark on it falls, results are computed
- * anew, and the query that asked may be answered in the same breath. If-Match names the version of the row.
+ * Corrects a saved value with a reason: the old one stays in the trail, the mark on it falls, the edit checks run anew, results
+ * are computed anew, and the query that asked may be answered in the same breath. If-Match names the version of the row.
+ * @throws Refusal 'invalid' for a value that cannot be right, or with the doubts that need a reason.
  */
-export async function correctValue(work: Work, { target, value, reason, queryId }: CorrectValueInput): Promise<{ corrected: true }> {
+export async function correctValue(work: Work, { target, value, reason, kept = [], query }: CorrectValueInput): Promise<{ corrected: true }> {
   const found = await findTarget(work, target);
   if (JSON.stringify(found.value) === JSON.stringify(value)) throw new Refusal('invalid', 'That is the value already there.', 'value');
-  if (target.table === 'limb_trial') await correctTrial(work, target.id, target.field, value);
-  else if (target.table === 'limb_assessment') await correctAssessment(work, target.id, target.field, value);
-  else if (target.table === 'visit') await correctVisit(work, target.id, target.field, value);
-  else throw notHere();
-  await recompute(work, found.participantId);
+  const { participantId } = found;
+  const before = await findDoubts(work, participantId);
+  const correct = { visit: correctVisit, limb_assessment: correctAssessment, limb_trial: correctTrial, questionnaire_response: null, participant: null }[target.table];
+  if (!correct) throw notHere();
+  const correctedId = await correct(work, target.id, target.field, value);
+  await settleDoubts(work, correctedId, { participantId, before, kept });
+  await recompute(work, participantId);
   await work.em.flush();
-  if (queryId !== undefined) await answerQuery({ ...work, expect: () => undefined }, { id: queryId, answer: `Corrected: ${reason}` });
+  if (query) await answerWith(work, target, query, `Corrected: ${reason}`);
   return { corrected: true };
 }

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { calendarDay } from '@/lib/work/calendar-day';
 import { equipmentKinds, loadBases, sides } from '@/instruments/training/exercises';
 import type { ExerciseEntry } from '@/instruments/training/session';
 import { massToKg, roundKg } from '@/instruments/units';
@@ -25,7 +26,7 @@ export type LoggedSetInput = z.infer<typeof loggedSetInput>;
 export const logSessionInput = z.strictObject({
   /** Made once per session on the device: sent twice, it is one session. */
   clientKey: z.uuid(),
-  on: z.iso.date('Give the day on which you trained.'),
+  on: calendarDay('Give the day on which you trained.'),
   armCheck: z.enum(['the same', 'a little fuller', 'clearly fuller', 'not sure'], { error: 'Answer the arm check first.' }),
   soreness: z.enum(['no', 'a little', 'a lot'], { error: 'Say whether you are sore since last time.' }),
   effort,

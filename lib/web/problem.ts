@@ -1,5 +1,7 @@
 import { log } from '@/lib/log';
 import { Refusal, type RefusalCode } from '@/lib/work/refusal';
+import { unkeepable } from '@/lib/work/unkeepable';
+import '@/lib/work/zod-words';
 import { z } from 'zod';
 
 /** The one map from refusals to HTTP. */
@@ -60,7 +62,7 @@ export const problemSchema = z.object({
 
 function problemOf(error: unknown, reference: string): Problem {
   if (error instanceof Refusal) {
-    const fields = error.field === undefined ? {} : { fields: [{ field: error.field, sentence: error.sentence }] };
+    const fields = error.field === undefined ? {} : { fields: [{ field: error.field, sentence: error.sentence }, ...error.beside] };
     return { type: `/problems/${error.code}`, title: titleOf[error.code], status: statusOf[error.code], detail: error.sentence, code: error.code, ...fields };
   }
   if (error instanceof z.ZodError) {
@@ -68,6 +70,8 @@ function problemOf(error: unknown, reference: string): Problem {
     const detail = fields.length === 1 && fields[0] ? fields[0].sentence : `${fields.length} things to correct.`;
     return { type: '/problems/invalid', title: titleOf.invalid, status: 422, detail, code: 'invalid', fields };
   }
+  const refused = unkeepable(error);
+  if (refused) return { type: '/problems/invalid', title: titleOf.invalid, status: 422, detail: refused, code: 'invalid' };
   return {
     type: '/problems/fault',
     title: 'Something went wrong on our side',

@@ -20,6 +20,13 @@ export function requireOwnOrigin(request: Request): void {
   if (!own) throw new Refusal('forbidden', 'This request did not come from a page of Tidemark.');
 }
 
+/** A null character ends the data base's own messages, half a surrogate pair is no text: neither is taken in. */
+function keepable(name: string, value: unknown): unknown {
+  if (typeof value === 'string' && (value.includes('\u0000') || !value.isWellFormed()))
+    throw new Refusal('invalid', 'A text holds a character that cannot be kept. It is often invisible and comes with pasting: type the text again and save.', name);
+  return value;
+}
+
 /** The JSON body, counted while it is read. */
 export async function readJson(request: Request): Promise<unknown> {
   if (request.method === 'GET' || request.method === 'HEAD') return {};
@@ -33,8 +40,9 @@ export async function readJson(request: Request): Promise<unknown> {
   }
   if (bytes === 0) return {};
   try {
-    return JSON.parse(Buffer.concat(chunks).toString('utf8'));
-  } catch {
+    return JSON.parse(Buffer.concat(chunks).toString('utf8'), keepable);
+  } catch (error) {
+    if (error instanceof Refusal) throw error;
     throw new Refusal('invalid', 'The request is not valid JSON.');
   }
 }
@@ -42,6 +50,7 @@ export async function readJson(request: Request): Promise<unknown> {
 /** What the request asks for: path parameters, the query of a GET, the body of a write. */
 export async function readInput(request: Request, params: Record<string, string | string[]>): Promise<Record<string, unknown>> {
   const query = Object.fromEntries(new URL(request.url).searchParams);
+  for (const [name, value] of [...Object.entries(query), ...Object.entries(params)]) keepable(name, value);
   const body = await readJson(request);
   if (typeof body !== 'object' || body === null || Array.isArray(body)) throw new Refusal('invalid', 'The request holds no fields.');
   return request.method === 'GET' || request.method === 'HEAD' ? { ...query, ...params } : { ...body, ...params };

@@ -9,6 +9,7 @@ import type { Actor } from '@/lib/auth/roles';
 import { liveSession, type LiveSession } from '@/lib/auth/session';
 import { env } from '@/lib/env';
 import { Refusal } from '@/lib/work/refusal';
+import { unkeepable } from '@/lib/work/unkeepable';
 import { withWork } from '@/lib/work/with-work';
 import type { Work } from '@/lib/work/work';
 
@@ -59,7 +60,8 @@ export async function loadPage<T>(act: Act, run: (work: Work) => Promise<T>): Pr
   try {
     return await withWork(actor, act, run);
   } catch (error) {
-    if (error instanceof Refusal && error.code === 'not-found') notFound();
+    // An address with an id that is none, or a character no text can hold, leads nowhere.
+    if ((error instanceof Refusal && error.code === 'not-found') || unkeepable(error)) notFound();
     if (error instanceof Refusal && error.code === 'forbidden') forbidden();
     throw error;
   }

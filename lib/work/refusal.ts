@@ -20,6 +20,8 @@ export class Refusal extends Error {
     readonly sentence: string,
     /** The field it is about, where there is one. */
     readonly field?: string,
+    /** Further things to answer at once, each at its field. */
+    readonly beside: readonly { readonly field: string; readonly sentence: string }[] = [],
   ) {
     super(sentence);
     this.name = 'Refusal';

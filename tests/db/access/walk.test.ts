@@ -1,10 +1,10 @@
-import { randomUUID } from 'node:crypto';
 import { beforeAll, describe, expect, test, vi } from 'vitest';
 import { routes } from '@/app/api/routes';
 import { may } from '@/lib/auth/policy';
 import { grantedRoles, type Actor, type GrantedRole } from '@/lib/auth/roles';
 import type { RouteHandler } from '@/lib/web/route';
 import { givenScene, givenStaff, type GivenScene } from '../../given';
+import { requestOf } from './request-of';
 import { samples, type Sample } from './samples';
 import { subjectAt, type Subject } from './subjects';
 
@@ -41,12 +41,7 @@ beforeAll(async () => {
 
 async function ask(actor: Actor | null, { address, method, handler }: { address: string; method: string; handler: RouteHandler }, sample: Sample): Promise<{ status: number; text: string }> {
   asking.actor = actor;
-  const path = address.replace(/\{(\w+)\}/g, (_, name: string) => encodeURIComponent(sample.params?.[name] ?? ''));
-  const url = new URL(path, 'http://127.0.0.1:3000');
-  for (const [name, value] of Object.entries(sample.query ?? {})) url.searchParams.set(name, value);
-  const headers = { origin: 'http://127.0.0.1:3000', 'idempotency-key': randomUUID(), 'if-match': '"v1"', 'content-type': 'application/json' };
-  const body = method === 'GET' ? {} : { body: JSON.stringify(sample.body ?? {}) };
-  const response = await handler(new Request(url, { method, headers, ...body }), { params: Promise.resolve(sample.params ?? {}) });
+  const response = await handler(...requestOf({ address, method }, sample));
   return { status: response.status, text: await response.text() };
 }
 
