@@ -2,8 +2,11 @@ import { crc32 } from 'node:zlib';
 import { Refusal } from '@/lib/work/refusal';
 
 /** What a signed form may be. */
+export const formTypes = ['application/pdf', 'image/jpeg', 'image/png'] as const;
+
+/** A form as it was recognised. */
 export interface FormFile {
-  readonly contentType: 'application/pdf' | 'image/jpeg' | 'image/png';
+  readonly contentType: (typeof formTypes)[number];
   readonly extension: 'pdf' | 'jpg' | 'png';
 }
 

@@ -6,11 +6,39 @@ import type { Declaration, RouteHandler } from './route';
 /** Route modules by address: `{ '/api/queries': { POST } }`. */
 export type RouteTable = Readonly<Record<string, Readonly<Record<string, RouteHandler>>>>;
 
-const json = (schema: z.ZodType) => ({ 'application/json': { schema: z.toJSONSchema(schema, { io: 'input', unrepresentable: 'any', target: 'openapi-3.0' }) } });
+interface JsonSchema {
+  properties?: Record<string, unknown>;
+  required?: string[];
+}
+
+/** JSON Schema 2020-12, which OpenAPI 3.1 speaks; the document names the dialect for all of them. */
+function schemaOf(shape: z.ZodType): JsonSchema {
+  const { $schema: _dialect, ...schema } = z.toJSONSchema(shape, { io: 'input', unrepresentable: 'any' });
+  return schema as JsonSchema;
+}
+
+const json = (schema: JsonSchema) => ({ 'application/json': { schema } });
+
+const pathNames = (address: string): string[] => [...address.matchAll(/\{(\w+)\}/g)].map(([, name]) => name as string);
+
+/** What a write takes besides what stands in its address: fields as JSON, or a file as the whole body. */
+function bodyOf(address: string, { input, upload }: Declaration): Record<string, unknown> {
+  if (upload) {
+    // Raw bytes have no JSON type: OpenAPI 3.1.1, 'Working with Binary Data', which lets maxLength bound them.
+    const content = Object.fromEntries(upload.types.map((type) => [type, { schema: { maxLength: upload.bytesMost } }]));
+    return { required: true, description: `The file as the whole body, at most ${upload.bytesMost} bytes. What it is is told by its content.`, content };
+  }
+  const { properties, required, ...schema } = schemaOf(input);
+  if (!properties) return { required: true, content: json(schema) };
+  const inBody = (name: string): boolean => !pathNames(address).includes(name);
+  const fields = Object.fromEntries(Object.entries(properties).filter(([name]) => inBody(name)));
+  const needed = required?.filter(inBody) ?? [];
+  return { required: needed.length > 0, content: json({ ...schema, properties: fields, ...(needed.length > 0 ? { required: needed } : {}) }) };
+}
 
 function parametersOf(address: string, method: string, declaration: Declaration): unknown[] {
-  const inPath = [...address.matchAll(/\{(\w+)\}/g)].map(([, name]) => name);
-  const schema = z.toJSONSchema(declaration.input, { io: 'input', unrepresentable: 'any' }) as { properties?: Record<string, unknown>; required?: string[] };
+  const inPath = pathNames(address);
+  const schema = schemaOf(declaration.input);
   const named = Object.entries(schema.properties ?? {});
   const path = inPath.map((name) => ({ name, in: 'path', required: true, schema: named.find(([key]) => key === name)?.[1] ?? { type: 'string' } }));
   const query =
@@ -29,16 +57,16 @@ function parametersOf(address: string, method: string, declaration: Declaration)
 }
 
 function operationOf(address: string, method: string, declaration: Declaration): Record<string, unknown> {
-  const problem = { description: 'Problem details (RFC 9457).', content: { 'application/problem+json': { schema: z.toJSONSchema(problemSchema) } } };
-  const done = declaration.output ? { description: 'Done.', content: json(declaration.output) } : { description: 'Done.' };
+  const problem = { description: 'Problem details (RFC 9457).', content: { 'application/problem+json': { schema: schemaOf(problemSchema) } } };
+  const done = declaration.output ? { description: 'Done.', content: json(schemaOf(declaration.output)) } : { description: 'Done.' };
   return {
     summary: declaration.summary,
     operationId: `${method.toLowerCase()} ${address}`,
     'x-act': declaration.act,
     'x-roles': declaration.open ? ['anyone'] : ruleOf(declaration.act).roles,
     parameters: parametersOf(address, method, declaration),
-    ...(method === 'GET' ? {} : { requestBody: { required: true, content: json(declaration.input) } }),
-    responses: { [declaration.create ? '201' : '200']: done, default: problem },
+    ...(method === 'GET' ? {} : { requestBody: bodyOf(address, declaration) }),
+    responses: { [declaration.create || declaration.upload ? '201' : '200']: done, default: problem },
   };
 }
 

@@ -28,6 +28,8 @@ export interface Declaration<I extends Input = Input, R = unknown> {
   readonly change?: true;
   /** A signature: needs the signer's password once more, in `password`. */
   readonly confirms?: true;
+  /** The body is a file, whole: what kinds, and how large. */
+  readonly upload?: { readonly types: readonly string[]; readonly bytesMost: number };
   /** Nobody need be signed in: the system acts (joining, for one). The service itself must prove who asks. */
   readonly open?: true;
   run(work: Work, input: z.output<I>): Promise<R>;

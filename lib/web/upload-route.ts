@@ -15,6 +15,8 @@ export interface UploadDeclaration<I extends z.ZodType<object>, R> {
   readonly summary: string;
   /** Path parameters. */
   readonly input: I;
+  /** Media types that are taken, for whoever reads the API's description: what a file is, `receive` judges by its content. */
+  readonly types: readonly string[];
   readonly bytesMost: number;
   /** Judges and keeps the content; opens its own work, because files are not touched inside a transaction. */
   receive(actor: Actor, input: z.output<I>, content: Buffer, options: { request: string }): Promise<R>;
@@ -38,7 +40,7 @@ async function readCounted(request: Request, bytesMost: number): Promise<Buffer>
 
 /** The wrapper for uploads: origin, session, policy before a byte is read, then the counted body. Answers 201. */
 export function uploadRoute<I extends z.ZodType<object>, R>(declaration: UploadDeclaration<I, R>): RouteHandler {
-  const { act, summary, input, bytesMost } = declaration;
+  const { act, summary, input, types, bytesMost } = declaration;
   const handle = async (request: Request, context: { params: Promise<Record<string, string | string[]>> }): Promise<Response> => {
     const reference = newReference();
     try {
@@ -55,6 +57,6 @@ export function uploadRoute<I extends z.ZodType<object>, R>(declaration: UploadD
       return problemResponse(error, { reference, act });
     }
   };
-  const shown: Declaration = { act, summary, input, run: () => Promise.reject(new Error('An upload is received, not run.')) };
+  const shown: Declaration = { act, summary, input, upload: { types, bytesMost }, run: () => Promise.reject(new Error('An upload is received, not run.')) };
   return Object.assign(handle, { declaration: shown });
 }
