@@ -60,7 +60,9 @@ export class TheRecord extends Migration {
       state text not null default 'new' check (state in ('new', 'read', 'reviewed')), read_at timestamptz, reviewed_at timestamptz, reviewed_by uuid references account, outcome text check (outcome in ('no action', 'advice', 'unscheduled visit', 'adverse event')), review_note text, client_key uuid not null, version integer not null default 1,
       -- When letters about it were put in the queue: each kind once.
       waiting_letters_at timestamptz, overdue_letters_at timestamptz,
-      unique (participant_id, client_key), check ((state = 'reviewed') = (outcome is not null)))`);
+      check ((state = 'reviewed') = (outcome is not null)))`);
+    // The same words sent twice are one report; other words under a key that was used before are another.
+    this.addSql(`create unique index symptom_report_once on symptom_report (participant_id, client_key, md5(answers::text), noticed_on, md5(coalesce(note, '')))`);
     this.addSql('create index symptom_report_site on symptom_report (site_id, state, due_at)');
     for (const table of ['participant', 'visit', 'limb_assessment', 'limb_trial', 'questionnaire_response', 'training_session', 'training_set', 'training_flag', 'symptom_report'])
       for (const line of guard({ table, reach: 'record', grants: table === 'training_set' ? ['select', 'insert'] : ['select', 'insert', 'update'], audit: {} })) this.addSql(line);

@@ -24,7 +24,6 @@ export async function reportArmCheck(
 ): Promise<SentReport | null> {
   const verdict = judgeArmCheck(armCheckCode(armCheck));
   if (!verdict) return null;
-  const sent = await findSentReport(work, own, clientKey);
-  const answers = { signs: [], lastedOverADay: null, soreness: null, armCheck };
-  return toSentReport(sent ?? (await keepReport(work, own, { verdict, answers, noticedOn: on, note: null, clientKey })), own);
+  const said = { answers: { signs: [], lastedOverADay: null, soreness: null, armCheck }, noticedOn: on, note: null, clientKey };
+  return toSentReport((await findSentReport(work, own, said)) ?? (await keepReport(work, own, { verdict, ...said })), own);
 }

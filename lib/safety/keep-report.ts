@@ -25,15 +25,32 @@ export function toSentReport(report: SymptomReport, { site }: OwnRecord): SentRe
   return { id: report.id, level: report.level, title: participantTitle, text: participantText, urgency, dueAt: report.dueAt?.toISOString() ?? null, holdTraining: report.holdTraining, site };
 }
 
-/** The report that was already sent under this key, if any: sent twice it is one. */
-export const findSentReport = (work: Work, own: OwnRecord, clientKey: string): Promise<SymptomReport | null> =>
-  work.em.findOne(SymptomReportSchema, { participantId: own.participant.id, clientKey });
+/** What somebody said, and the key their device made for saying it. */
+export interface Said {
+  readonly answers: Record<string, unknown>;
+  readonly noticedOn: string;
+  readonly note: string | null;
+  readonly clientKey: string;
+}
+
+/**
+ * The report that already says this under this key, if any: sent twice it is one. Other words under the same key are
+ * another report: an answer of ours that got lost must never swallow a graver sign that was added since.
+ */
+export async function findSentReport(work: Work, own: OwnRecord, { answers, noticedOn, note, clientKey }: Said): Promise<SymptomReport | null> {
+  const [found] = await work.sql<{ id: string }>(
+    // An arm check is told on the day it is made and again with its session, which may be of the day before.
+    `select id from symptom_report where participant_id = ? and client_key = ? and answers = ?::jsonb and (noticed_on = ? or answers ->> 'armCheck' is not null) and note is not distinct from ?`,
+    [own.participant.id, clientKey, JSON.stringify(answers), noticedOn, note],
+  );
+  return found ? work.em.findOne(SymptomReportSchema, { id: found.id }) : null;
+}
 
 /** Keeps a report, starts the site's clock from the server's time, holds training where the level asks for it, and has the team written to unless nothing presses. */
 export async function keepReport(
   work: Work,
   own: OwnRecord,
-  { verdict, ...said }: { verdict: SafetyVerdict; answers: Record<string, unknown>; noticedOn: string; note: string | null; clientKey: string },
+  { verdict, ...said }: Said & { verdict: SafetyVerdict },
 ): Promise<SymptomReport> {
   const report = work.em.create(SymptomReportSchema, {
     siteId: own.participant.siteId,

@@ -27,9 +27,11 @@ const loadLimitKg = 150;
 /** A session is kept once. @throws Refusal 'conflict' when its key was used for other figures. */
 async function findSaved(work: Work, own: OwnRecord, input: LogSessionInput): Promise<string | null> {
   const [saved] = await work.sql<{ id: string; same: boolean }>(
-    `select s.id, s.local_on = ?::date and (select coalesce(jsonb_agg(jsonb_build_array(t.exercise, t.load_typed::float8, t.unit, t.repetitions, t.set_count) order by t.sequence), '[]') from training_set t where t.session_id = s.id) = ?::jsonb as same
+    `select s.id, jsonb_build_array(s.local_on, s.arm_check, s.soreness, s.effort, coalesce(s.note, ''), (
+         select coalesce(jsonb_agg(jsonb_build_array(t.exercise, t.equipment, t.basis, t.side, t.load_typed::float8, t.unit, t.repetitions, t.set_count, t.effort) order by t.sequence), '[]')
+         from training_set t where t.session_id = s.id)) = ?::jsonb as same
      from training_session s where s.participant_id = ? and s.client_key = ?`,
-    [input.on, JSON.stringify(input.sets.map(({ exercise, typed, unit, repetitions, setCount }) => [exercise, typed, unit, repetitions, setCount])), own.participant.id, input.clientKey],
+    [JSON.stringify([input.on, input.armCheck, input.soreness, input.effort, input.note ?? '', input.sets.map(({ exercise, equipment, basis, side, typed, unit, repetitions, setCount, effort }) => [exercise, equipment, basis, side, typed, unit, repetitions, setCount, effort])]), own.participant.id, input.clientKey],
   );
   if (saved && !saved.same) throw new Refusal('conflict', 'This session was already saved with other figures. Ask your site to correct it, or log another session.');
   return saved?.id ?? null;

@@ -22,7 +22,7 @@ export function requireOwnOrigin(request: Request): void {
 
 /** A null character ends the data base's own messages, half a surrogate pair is no text: neither is taken in. */
 function keepable(name: string, value: unknown): unknown {
-  if (typeof value === 'string' && (value.includes('\u0000') || !value.isWellFormed()))
+  if (typeof value === 'string' && /\0|\p{Surrogate}/u.test(value))
     throw new Refusal('invalid', 'A text holds a character that cannot be kept. It is often invisible and comes with pasting: type the text again and save.', name);
   return value;
 }

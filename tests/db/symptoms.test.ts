@@ -82,10 +82,20 @@ describe('a report', () => {
     expect(await asOwner('select id from symptom_report where participant_id = $1', [participant.id])).toHaveLength(1);
   });
 
+  test('a graver sign under a key that was used is another report, and its words come at once', async () => {
+    const participant = await person();
+    const mild = said();
+    await report(participant.actor, mild);
+    const grave = await report(participant.actor, { ...mild, signs: ['heavy', 'hot', 'red', 'fever'] }, '2027-03-03T10:05:00Z');
+    expect(grave).toMatchObject({ level: 'R1', urgency: 'same-day care', holdTraining: true });
+    expect(await asOwner('select level from symptom_report where participant_id = $1 order by reported_at', [participant.id])).toEqual([{ level: 'S1' }, { level: 'R1' }]);
+  });
+
   test('of nothing, or of a day to come, is refused', async () => {
     const { actor } = await person();
     await expect(report(actor, said({ signs: [] }))).rejects.toMatchObject({ code: 'invalid', field: 'signs' });
     await expect(report(actor, said({ noticedOn: '2027-03-04' }))).rejects.toMatchObject({ code: 'invalid', field: 'noticedOn' });
+    await expect(report(actor, said({ noticedOn: '1950-03-04' }))).rejects.toMatchObject({ code: 'invalid', field: 'noticedOn' });
   });
 
   test('comes from a participant only', async () => {

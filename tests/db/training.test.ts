@@ -68,6 +68,8 @@ describe('a session', () => {
     const input = session('2027-01-13', [press(2)]);
     await log(participant.actor, input);
     await expect(log(participant.actor, { ...input, sets: [press(3)] })).rejects.toMatchObject({ code: 'conflict' });
+    for (const change of [{ armCheck: 'clearly fuller' }, { soreness: 'a lot' }, { note: 'The left felt tight.' }, { effort: 7 }] as const)
+      await expect(log(participant.actor, { ...input, ...change })).rejects.toMatchObject({ code: 'conflict' });
     expect(await setsOf(participant)).toEqual([{ typed: 2, unit: 'kg', g: 2000 }]);
   });
 
@@ -195,6 +197,15 @@ describe('the arm check', () => {
     expect(logged.report?.id).toBe(checked.report?.id);
     expect(logged.advice).toMatchObject([{ rule: 'ASSESSMENT_REQUIRED', contactSite: true }]);
     expect((await withWork(participant.actor, 'week.view', viewWeek, at('2027-01-13'))).trainingHeld).toBe(true);
+  });
+
+  test('that turns out worse is told again', async () => {
+    const { actor } = await givenMeasured();
+    const clientKey = randomUUID();
+    const tell = (armCheck: 'a little fuller' | 'clearly fuller') => withWork(actor, 'symptom.report', (work) => checkArm(work, { clientKey, armCheck }), at('2027-01-13'));
+    const first = await tell('a little fuller');
+    expect((await tell('clearly fuller')).report?.id).not.toBe(first.report?.id);
+    expect((await tell('a little fuller')).report?.id).toBe(first.report?.id);
   });
 
   test('that finds nothing, or is not sure, reports nothing', async () => {
