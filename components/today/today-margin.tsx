@@ -33,7 +33,7 @@ export function TodayMargin({ view }: { view: TodayView }) {
       <MarginPart title="Chair time">
         {chair.length === 0 ? <p className="t-small text-ink-2">No visit is booked.</p> : null}
         <ul>
-          {chair.slice(0, 8).map(({ on, visits, first, timeZone }) => (
+          {chair.map(({ on, visits, first, timeZone }) => (
             <li key={on} className="flex justify-between gap-3 border-b border-rule py-1.5">
               <span>{formatNearDate(on)}</span>
               <span>{countOf(visits, 'visit')}</span>

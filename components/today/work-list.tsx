@@ -1,12 +1,15 @@
 import Link from 'next/link';
-import type { TodayView } from '@/lib/today/view-today';
+import { Fragment } from 'react';
+import type { TodayGroup, TodayView } from '@/lib/today/view-today';
 import { ButtonLink } from '../ui/button';
-import { formatDate, formatNearDate } from '../ui/format';
+import { formatCount, formatDate, formatNearDate } from '../ui/format';
 import { Gauge } from '../ui/gauge';
 import { Bracket, Flag, Notch, PastLimit } from '../ui/signs';
 import { Empty } from '../ui/waiting';
 import { WorkGroup, WorkRow } from '../ui/work-list';
 import { WorkKeys } from './work-keys';
+import { addressOfToday } from './today-address';
+import { WorkPager } from './work-pager';
 import { workWords, type WorkMay } from './work-words';
 
 const weekdays = { Mon: 'Monday', Tue: 'Tuesday', Wed: 'Wednesday', Thu: 'Thursday', Fri: 'Friday', Sat: 'Saturday', Sun: 'Sunday' } as const;
@@ -18,47 +21,69 @@ export function longDay(day: string): string {
   return `${weekdays[weekday as keyof typeof weekdays]} ${Number(day.slice(8))} ${months[Number(day.slice(5, 7)) - 1]}`;
 }
 
-function titleOf(key: TodayView['groups'][number]['key'], today: string, lastDay: string): string {
+function titleOf(key: TodayGroup['key'], today: string, lastDay: string): string {
   if (key === 'late') return 'Past due';
   if (key === 'today') return `Today, ${longDay(today)}`;
   return key === 'week' ? 'The next seven days' : `Later, to ${formatDate(lastDay).replace(/ \d{4}$/, '')}`;
 }
 
+const seeAll = { late: 'See all that are past due', today: 'See all for today', week: 'See all of the next seven days', later: 'See all that come later' } as const;
+
+function Row({ item, view, may }: { item: TodayGroup['items'][number]; view: TodayView; may: WorkMay }) {
+  const { when, whenDetail, late, kind, codeHref, title, detail, window, state, verb, href, primary } = workWords(item, may, view.now);
+  return (
+    <WorkRow
+      {...{ when, whenDetail, late, kind, title, detail, window }}
+      axis={view.axis}
+      code={
+        <Link className="code-link" href={codeHref}>
+          {item.code}
+        </Link>
+      }
+      state={<Gauge {...state} stacked />}
+      action={
+        <ButtonLink kind={primary ? 'primary' : 'link'} size="small" href={href} aria-label={`${verb}: ${item.code}, ${title}`}>
+          {verb}
+        </ButtonLink>
+      }
+    />
+  );
+}
+
+/** Under a group: its other pages when it is shown alone, else the way to all of it where more wait. */
+function More({ group: { key, count, items }, shown: { kind, group, page, pageSize } }: { group: TodayGroup; shown: TodayView['shown'] }) {
+  if (group !== null) return <WorkPager {...{ kind, group, pageSize }} pageIndex={page} rowCount={count} />;
+  if (count <= items.length) return null;
+  return (
+    <p className="t-small py-3 text-ink-2">
+      First {formatCount(items.length)} of {formatCount(count)}. <Link href={addressOfToday({ kind, group: key })}>{seeAll[key]}</Link>
+    </p>
+  );
+}
+
 /** The day's work, every row on the same eight weeks; j and k move through it. */
 export function WorkList({ view, may, lastDay }: { view: TodayView; may: WorkMay; lastDay: string }) {
+  const { shown } = view;
   const groups = view.groups.filter(({ items }) => items.length > 0);
+  const back = shown.group === null ? null : <Link href={addressOfToday({ kind: shown.kind })}>Back to the whole day</Link>;
   if (groups.length === 0)
     return (
-      <Empty title="Nothing waits" action={<Link href="/participants">See the participants</Link>}>
-        No visit, query, report, consent or questionnaire of this kind is due up to {formatDate(lastDay)}.
+      <Empty title="Nothing waits" action={back ?? <Link href="/participants">See the participants</Link>}>
+        {back ? 'Nothing of this kind is left in this group.' : `No visit, query, report, consent or questionnaire of this kind is due up to ${formatDate(lastDay)}.`}
       </Empty>
     );
   return (
     <WorkKeys>
-      {groups.map(({ key, items }, index) => (
-        <WorkGroup key={key} title={titleOf(key, view.today, lastDay)} count={items.length} axis={view.axis} first={index === 0}>
-          {items.map((item) => {
-            const { when, whenDetail, late, kind, codeHref, title, detail, window, state, verb, href, primary } = workWords(item, may, view.now);
-            return (
-              <WorkRow
-                key={`${item.kind}-${item.id}`}
-                {...{ when, whenDetail, late, kind, title, detail, window }}
-                axis={view.axis}
-                code={
-                  <Link className="code-link" href={codeHref}>
-                    {item.code}
-                  </Link>
-                }
-                state={<Gauge {...state} stacked />}
-                action={
-                  <ButtonLink kind={primary ? 'primary' : 'link'} size="small" href={href} aria-label={`${verb}: ${item.code}, ${title}`}>
-                    {verb}
-                  </ButtonLink>
-                }
-              />
-            );
-          })}
-        </WorkGroup>
+      {back ? <p className="t-small pt-3">{back}</p> : null}
+      {groups.map((group, index) => (
+        <Fragment key={group.key}>
+          <WorkGroup title={titleOf(group.key, view.today, lastDay)} count={group.count} axis={view.axis} first={index === 0}>
+            {group.items.map((item) => (
+              <Row key={`${item.kind}-${item.id}`} {...{ item, view, may }} />
+            ))}
+          </WorkGroup>
+          <More {...{ group, shown }} />
+        </Fragment>
       ))}
       <p className="work-key">
         <span>

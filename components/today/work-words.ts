@@ -1,4 +1,10 @@
-import type { ConsentWork, QueryWork, QuestionWork, ReportWork, VisitWork, WorkItem } from '@/lib/today/work-item';
+import type { TodayKind } from '@/lib/today/input';
+import type { WorkItem } from '@/lib/today/kinds';
+import type { ConsentWork } from '@/lib/today/kinds/consent';
+import type { QueryWork } from '@/lib/today/kinds/query';
+import type { QuestionWork } from '@/lib/today/kinds/questionnaire';
+import type { ReportWork } from '@/lib/today/kinds/report';
+import type { VisitWork } from '@/lib/today/kinds/visit';
 import type { WeekWindow } from '../chart/week-axis';
 import { countOf, daysBetween, formatAge, formatDate, formatDue, formatNearDate, formatTime } from '../ui/format';
 import type { GaugeState } from '../ui/gauge';
@@ -26,6 +32,9 @@ export interface WorkMay {
   readonly review: boolean;
   readonly countersign: boolean;
 }
+
+/** The kinds of work as the tabs name them, in their order. */
+export const kindLabels: Readonly<Record<TodayKind, string>> = { all: 'All', visit: 'Visits', report: 'Reports', query: 'Queries', consent: 'Consents', questionnaire: 'Questions' };
 
 const shortDay = (day: string): string => formatDate(day).replace(/ \d{4}$/, '');
 const sayDay = (item: WorkItem): string => (item.group === 'late' ? shortDay(item.dueOn) : formatNearDate(item.dueOn));
@@ -95,20 +104,20 @@ function queryWords(item: QueryWork): WorkWords {
 }
 
 function reportWords(item: ReportWork, may: WorkMay): WorkWords {
-  const { code, report, today, dueOn, group, reportedOn, timeZone } = item;
-  const due = report.dueAt === null ? '' : formatTime(new Date(report.dueAt), timeZone);
+  const { id, code, said, state, holdTraining, today, dueOn, group, reportedOn, timeZone } = item;
+  const due = formatTime(new Date(item.dueAt), timeZone);
   return {
     when: dueOn === today ? `by ${due}` : sayDay(item),
     whenDetail: group === 'late' ? (dueOn === today ? 'time has run out' : formatDue(dueOn, today)) : `by ${due}`,
     late: group === 'late',
     kind: 'Report',
     codeHref: participantHref(code),
-    title: report.said,
-    detail: `Said ${shortDay(reportedOn)}.${report.holdTraining ? ' Training held until reviewed.' : ''}`,
+    title: said,
+    detail: `Said ${shortDay(reportedOn)}.${holdTraining ? ' Training held until reviewed.' : ''}`,
     window: { opens: reportedOn, closes: dueOn },
-    state: report.state === 'new' ? { state: 'needs', level: 0.1, word: 'Not yet read' } : { state: 'needs', level: 0.5, word: 'Read, not reviewed' },
+    state: state === 'new' ? { state: 'needs', level: 0.1, word: 'Not yet read' } : { state: 'needs', level: 0.5, word: 'Read, not reviewed' },
     verb: may.review ? 'Review' : 'Open',
-    href: `/safety/${report.id}`,
+    href: `/safety/${id}`,
   };
 }
 

@@ -1,8 +1,7 @@
 import { addDays } from '@/instruments/calendar';
 import { currentConsentForm } from '@/lib/protocol/find-protocol';
-import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
-import type { TodaySite } from './work-item';
+import type { TodaySite } from './site-day';
 
 /** Recruitment at the sites in reach. */
 export interface RecruitmentView {
@@ -33,9 +32,8 @@ interface Row {
 }
 
 /** Recruitment and consent: one statement, after the one that finds the form in force. */
-export async function viewRecruitment(work: Work, sites: readonly TodaySite[]): Promise<{ recruitment: RecruitmentView; consent: ConsentStanding }> {
+export async function viewRecruitment(work: Work, { sites, today }: { sites: readonly TodaySite[]; today: string }): Promise<{ recruitment: RecruitmentView; consent: ConsentStanding }> {
   const form = await currentConsentForm(work);
-  const today = sites[0]?.today ?? localDate(work.now, 'UTC');
   const [row] = await work.sql<Row>(
     `select st.starts_on::text, st.ends_on::text,
        (select jsonb_agg(jsonb_build_object('on', m.month, 'count', m.count) order by m.month) from (select date_trunc('month', p.enrolled_on)::date as month, count(*)::int as count from participant p group by 1) m) as months,

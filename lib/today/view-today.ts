@@ -1,16 +1,20 @@
 import { addDays, daysBetween, mondayOf } from '@/instruments/calendar';
-import { listOpenReports, type ReportRow } from '@/lib/safety/list-open-reports';
-import { localDate, moment } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
-import type { z } from 'zod';
-import { groupOf } from './group-of';
-import type { TodayKind, viewTodayInput } from './input';
-import { listConsentsWaiting } from './list-consents-waiting';
-import { listQueriesWaiting } from './list-queries-waiting';
-import { listQuestionsOverdue } from './list-questions-overdue';
-import { listVisitsDue } from './list-visits-due';
+import { todayKinds, type TodayKind, type ViewTodayInput } from './input';
+import type { WorkItem } from './kinds';
+import type { ReportWork } from './kinds/report';
+import { listWork, type WorkTotal } from './list-work';
+import { findSites } from './site-day';
+import { viewChair, type ChairDay } from './view-chair';
 import { viewRecruitment, type ConsentStanding, type RecruitmentView } from './view-recruitment';
-import { workGroups, type ReportWork, type TodaySite, type WorkGroupKey, type WorkItem } from './work-item';
+import { groupRows, workGroups, type WorkGroupKey } from './work-groups';
+
+/** One group: how many there are of the kind asked for, and the rows of this page; none when another group is asked for. */
+export interface TodayGroup {
+  readonly key: WorkGroupKey;
+  readonly count: number;
+  readonly items: readonly WorkItem[];
+}
 
 /** The site's day. */
 export interface TodayView {
@@ -20,89 +24,58 @@ export interface TodayView {
   /** Eight weeks from a Monday, three of them gone. */
   readonly axis: { readonly from: string; readonly weeks: number; readonly today: string };
   /** Urgent reports stand above the list until they are read, whatever is asked for. */
-  readonly urgent: readonly ReportRow[];
-  readonly groups: readonly { readonly key: WorkGroupKey; readonly items: readonly WorkItem[] }[];
+  readonly urgent: readonly ReportWork[];
+  readonly urgentCount: number;
+  /** What is shown: a kind, and one group of it (then page by page) or all (then the first rows of each). */
+  readonly shown: { readonly kind: TodayKind; readonly group: WorkGroupKey | null; readonly page: number; readonly pageSize: number };
+  readonly groups: readonly TodayGroup[];
   readonly counts: Readonly<Record<TodayKind, number>>;
   readonly recruitment: RecruitmentView;
   readonly consent: ConsentStanding;
-  /** Booked visits by day, today and the days to come. */
-  readonly chair: readonly { readonly on: string; readonly visits: number; readonly first: string; readonly timeZone: string }[];
+  readonly chair: readonly ChairDay[];
 }
 
 const weeks = 8;
 const weeksGone = 3;
 
-async function sitesOf(work: Work): Promise<TodaySite[]> {
-  const rows = await work.sql<Omit<TodaySite, 'today'>>(
-    `select id, name, time_zone as "timeZone", recruitment_target as "recruitmentTarget" from site where id = any (?::uuid[]) order by name`,
-    [`{${work.actor.reach.join(',')}}`],
-  );
-  return rows.map((site) => ({ ...site, today: localDate(work.now, site.timeZone) }));
-}
-
-function reportWork(report: ReportRow, sites: readonly TodaySite[]): ReportWork[] {
-  const site = sites.find(({ name }) => name === report.siteName);
-  if (!site || report.dueAt === null) return [];
-  const { today, timeZone, name: siteName } = site;
-  const dueOn = localDate(moment(report.dueAt), timeZone);
-  // A clock that ran out earlier today is late, not due.
-  const group = report.isOverdue ? 'late' : groupOf({ dueOn, today });
-  return [{ id: report.id, kind: 'report', code: report.participantCode, report, reportedOn: localDate(moment(report.reportedAt), timeZone), dueOn, today, timeZone, siteName, group }];
-}
-
-const isUrgent = (report: ReportRow): boolean => report.state === 'new' && (report.urgency === 'emergency now' || report.urgency === 'same-day care');
-
-const order = (a: WorkItem, b: WorkItem): number => a.dueOn.localeCompare(b.dueOn) || timeOf(a).localeCompare(timeOf(b)) || a.code.localeCompare(b.code);
-const timeOf = (item: WorkItem): string => (item.kind === 'visit' ? (item.bookedAt ?? '~') : item.kind === 'report' ? (item.report.dueAt ?? '~') : '~');
-
-function chairOf(items: readonly WorkItem[]): TodayView['chair'] {
-  const days = new Map<string, { on: string; visits: number; first: string; timeZone: string }>();
-  for (const item of items) {
-    if (item.kind !== 'visit' || item.bookedOn === null || item.bookedAt === null || item.bookedOn < item.today) continue;
-    const day = days.get(item.bookedOn);
-    days.set(item.bookedOn, { on: item.bookedOn, visits: (day?.visits ?? 0) + 1, first: day && day.first < item.bookedAt ? day.first : item.bookedAt, timeZone: item.timeZone });
+function countsOf(totals: readonly WorkTotal[]): TodayView['counts'] {
+  const counts = Object.fromEntries(todayKinds.map((kind) => [kind, 0])) as Record<TodayKind, number>;
+  for (const { kind, count } of totals) {
+    counts[kind] += count;
+    counts.all += count;
   }
-  return [...days.values()].sort((a, b) => a.on.localeCompare(b.on));
+  return counts;
 }
+
+const sum = (totals: readonly WorkTotal[]): number => totals.reduce((total, { count }) => total + count, 0);
+const lastPage = (count: number): number => Math.max(0, Math.ceil(count / groupRows) - 1);
 
 /**
- * Everything the site's team must do, grouped by time in the site's own zone. The number of statements is the same
- * however many participants there are.
+ * What the site's team must do, grouped by time in the site's own zone. The number of statements is the same however
+ * many participants there are, and so is the most that is answered.
  */
-export async function viewToday(work: Work, { kind }: z.output<typeof viewTodayInput>): Promise<TodayView> {
-  const sites = await sitesOf(work);
-  const [first] = sites;
-  const today = first?.today ?? localDate(work.now, 'UTC');
+export async function viewToday(work: Work, input: ViewTodayInput): Promise<TodayView> {
+  const { kind, group = null, page } = input;
+  const { sites, today } = await findSites(work);
   const from = addDays(mondayOf(today), -7 * weeksGone);
   const ahead = daysBetween({ from: today, to: addDays(from, 7 * weeks - 1) });
-  const byId = new Map(sites.map((site) => [site.id, site]));
-  const reports = await listOpenReports(work);
-  const urgent = reports.filter(isUrgent);
-  const all: WorkItem[] = [
-    ...(await listVisitsDue(work, byId, ahead)),
-    ...(await listQueriesWaiting(work, byId)),
-    ...reports.filter((report) => !isUrgent(report)).flatMap((report) => reportWork(report, sites)),
-    ...(await listConsentsWaiting(work, byId)),
-    ...(await listQuestionsOverdue(work, byId)),
-  ];
-  const shown = all.filter((item) => kind === 'all' || item.kind === kind).sort(order);
-  const count = (of: WorkItem['kind']): number => all.filter((item) => item.kind === of).length;
+  const { totals, items } = await listWork(work, input, ahead);
+  const groups = workGroups.map((key) => ({
+    key,
+    count: sum(totals.filter((total) => total.group === key && (kind === 'all' || total.kind === kind))),
+    items: items.filter((item) => item.group === key),
+  }));
   return {
     now: work.now.toISOString(),
     today,
     siteNames: sites.map(({ name }) => name),
     axis: { from, weeks, today },
-    urgent,
-    groups: workGroups.map((key) => ({ key, items: shown.filter(({ group }) => group === key) })),
-    counts: {
-      all: all.length + urgent.length,
-      visit: count('visit'),
-      report: count('report') + urgent.length,
-      query: count('query'),
-      consent: count('consent'),
-      questionnaire: count('questionnaire'),
-    },
-    ...(await viewRecruitment(work, sites)),
-    chair: chairOf(all),
+    urgent: items.filter((item): item is ReportWork => item.group === 'urgent'),
+    urgentCount: sum(totals.filter((total) => total.group === 'urgent')),
+    shown: { kind, group, page: Math.min(page, lastPage(groups.find(({ key }) => key === group)?.count ?? 0)), pageSize: groupRows },
+    groups,
+    counts: countsOf(totals),
+    ...(await viewRecruitment(work, { sites, today })),
+    chair: await viewChair(work),
   };
 }

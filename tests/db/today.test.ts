@@ -1,20 +1,16 @@
 import { expect, test } from 'vitest';
-import { groupOf } from '@/lib/today/group-of';
+import type { z } from 'zod';
 import { viewTodayInput } from '@/lib/today/input';
 import { viewToday, type TodayView } from '@/lib/today/view-today';
 import { withWork } from '@/lib/work/with-work';
 import type { Actor } from '@/lib/auth/roles';
 import { countStatements } from '../count-statements';
-import { givenConsent, givenParticipant, givenProtocol, givenScene, givenScreening, givenSite, givenStaff, givenStudy, setScene } from '../given';
+import { givenConsent, givenParticipant, givenProtocol, givenQueries, givenReports, givenScene, givenScreening, givenSite, givenStaff, givenStudy, givenVisit, setScene } from '../given';
 
 const all = viewTodayInput.parse({});
-const todayAt = (actor: Actor, now: string, kind = all): Promise<TodayView> => withWork(actor, 'today.view', (work) => viewToday(work, kind), { now: new Date(now) });
+const todayAt = (actor: Actor, now: string, input: z.input<typeof viewTodayInput> = {}): Promise<TodayView> =>
+  withWork(actor, 'today.view', (work) => viewToday(work, viewTodayInput.parse(input)), { now: new Date(now) });
 const items = (view: TodayView, key: string) => view.groups.find((group) => group.key === key)?.items ?? [];
-
-test('a due day falls in its group by whole days', () => {
-  const today = '2027-03-03';
-  expect(['2027-03-02', '2027-03-03', '2027-03-04', '2027-03-10', '2027-03-11'].map((dueOn) => groupOf({ dueOn, today }))).toEqual(['late', 'today', 'week', 'week', 'later']);
-});
 
 test('the day turns at midnight of the site, not of UTC', async () => {
   const study = await givenStudy();
@@ -33,44 +29,85 @@ test('the day turns at midnight of the site, not of UTC', async () => {
   expect(items(after, 'late').map(({ kind, dueOn }) => [kind, dueOn])).toEqual([['visit', '2027-02-03']]);
 });
 
-test('another site’s work never appears, and the statements do not grow with the participants', async () => {
+test('another site’s work never appears, and the statements do not grow with the work', async () => {
   const { site, otherSite, protocol, coordinator, otherCoordinator } = await givenScene();
   const own = await givenParticipant(site, protocol, coordinator);
   const other = await givenParticipant(otherSite, protocol, otherCoordinator);
   const screening = await givenScreening(site, protocol, { confirmedBy: coordinator });
   await givenConsent(screening, protocol, coordinator, 'signed by participant');
-  await setScene([site.id, otherSite.id], async (work) => {
-    for (const participant of [own, other])
-      await work.sql(
-        `insert into data_query (site_id, participant_id, visit_id, target_table, target_id, field, field_label, origin, raised_by, raised_at, due_on)
-         values (?, ?, ?, 'visit', ?, 'done_on', 'date of visit', 'manual', ?, '2027-01-10T09:00:00Z', '2027-01-24')`,
-        [participant.siteId, participant.id, participant.visits['baseline'], participant.visits['baseline'], coordinator.accountId],
-      );
-  });
+  for (const participant of [own, other]) await givenQueries(participant, coordinator, { count: 1, dueOn: '2027-01-24' });
   const now = new Date('2027-01-20T10:00:00Z');
   const one = await withWork(coordinator, 'today.view', (work) => countStatements(work, (counted) => viewToday(counted, all)), { now });
   const codes = new Set(one.result.groups.flatMap((group) => group.items.map(({ code }) => code)));
   expect(codes).toContain(own.code);
   expect(codes).not.toContain(other.code);
   expect(one.result.counts).toMatchObject({ query: 1, consent: 1 });
-  for (let count = 0; count < 12; count += 1) await givenParticipant(site, protocol, coordinator);
+  await givenQueries(own, coordinator, { count: 300, dueOn: '2027-01-24' });
   const many = await withWork(coordinator, 'today.view', (work) => countStatements(work, (counted) => viewToday(counted, all)), { now });
-  expect(many.result.counts.visit).toBe(one.result.counts.visit + 12);
+  expect(many.result.counts.query).toBe(301);
   expect(many.statements).toBe(one.statements);
+});
+
+test('two sites on two sides of midnight each have their own today', async () => {
+  const study = await givenStudy();
+  const auckland = await givenSite(study, { name: 'Auckland', timeZone: 'Pacific/Auckland' });
+  const london = await givenSite(study, { name: 'London', timeZone: 'Europe/London' });
+  const protocol = await givenProtocol(study);
+  const both = await givenStaff('site-coordinator', [auckland, london]);
+  for (const site of [auckland, london]) {
+    const participant = await givenParticipant(site, protocol, both, { enrolledOn: '2029-01-01' });
+    await givenQueries(participant, both, { count: 1, dueOn: '2027-07-01' });
+    await givenVisit(participant, protocol, { key: 'extra', targetOn: '2027-07-01', closesOn: '2027-07-20', bookedAt: '2027-07-01T22:30:00Z' });
+  }
+  const at = async (now: string) =>
+    (await todayAt(both, now)).groups.flatMap(({ key, items: rows }) => rows.map(({ kind, siteName, today, dueOn }) => [key, siteName, kind, today, dueOn])).sort((a, b) => String(a).localeCompare(String(b)));
+  // Auckland stands 12 hours ahead in its winter, London one in its summer. 11:59 UTC is 23:59 of 1 July in Auckland.
+  expect(await at('2027-07-01T11:59:00Z')).toEqual([
+    ['today', 'Auckland', 'query', '2027-07-01', '2027-07-01'],
+    ['today', 'London', 'query', '2027-07-01', '2027-07-01'],
+    ['today', 'London', 'visit', '2027-07-01', '2027-07-01'],
+    ['week', 'Auckland', 'visit', '2027-07-01', '2027-07-02'],
+  ]);
+  expect(await at('2027-07-01T12:00:00Z')).toEqual([
+    ['late', 'Auckland', 'query', '2027-07-02', '2027-07-01'],
+    ['today', 'Auckland', 'visit', '2027-07-02', '2027-07-02'],
+    ['today', 'London', 'query', '2027-07-01', '2027-07-01'],
+    ['today', 'London', 'visit', '2027-07-01', '2027-07-01'],
+  ]);
+  // 22:59 UTC is 23:59 in London, and the appointment of 23:30 there has just passed without the visit having begun.
+  expect((await at('2027-07-01T22:59:00Z')).filter(([, site]) => site === 'London').map(([group]) => group)).toEqual(['today', 'today']);
+  expect((await at('2027-07-01T23:00:00Z')).filter(([, site]) => site === 'London').map(([group, , kind]) => [group, kind])).toEqual([
+    ['late', 'query'],
+    ['today', 'visit'],
+  ]);
+  const { chair } = await todayAt(both, '2027-07-01T12:00:00Z');
+  expect(chair).toEqual([
+    { on: '2027-07-01', visits: 1, first: '2027-07-01T22:30:00.000Z', timeZone: 'Europe/London' },
+    { on: '2027-07-02', visits: 1, first: '2027-07-01T22:30:00.000Z', timeZone: 'Pacific/Auckland' },
+  ]);
+});
+
+test('who left has no visits and no questionnaires due, unless only the training was stopped; queries stay', async () => {
+  const { site, protocol, coordinator } = await givenScene();
+  const grades = ['stops training', 'no visits', 'no further data'] as const;
+  const left = new Map<string, string>();
+  for (const grade of grades) {
+    const participant = await givenParticipant(site, protocol, coordinator);
+    await givenQueries(participant, coordinator, { count: 1, dueOn: '2027-01-24' });
+    await setScene([site.id], (work) => work.sql(`update participant set state = 'withdrawn', left_on = '2027-01-10', left_grade = ? where id = ?`, [grade, participant.id]));
+    left.set(participant.code, grade);
+  }
+  const view = await todayAt(coordinator, '2027-01-20T10:00:00Z');
+  const gradesOf = (kind: string) => [...new Set(view.groups.flatMap((group) => group.items.filter((item) => item.kind === kind).map(({ code }) => left.get(code))))].sort();
+  expect(gradesOf('visit')).toEqual(['stops training']);
+  expect(gradesOf('questionnaire')).toEqual(['stops training']);
+  expect(gradesOf('query')).toEqual([...grades].sort());
 });
 
 test('a red-flag report stands above the list until it is read, then in it with its clock', async () => {
   const { site, protocol, coordinator } = await givenScene();
   const participant = await givenParticipant(site, protocol, coordinator);
-  const report = async (state: 'new' | 'read') =>
-    setScene([site.id], async (work) => {
-      const [row] = await work.sql<{ id: string }>(
-        `insert into symptom_report (site_id, participant_id, reported_at, noticed_on, answers, level, due_at, hold_training, state, client_key)
-         values (?, ?, '2027-01-20T07:52:00Z', '2027-01-20', '{"signs":["fever"],"lastedOverADay":null,"soreness":null}'::jsonb, 'R1', '2027-01-20T11:52:00Z', true, ?, gen_random_uuid()) returning id`,
-        [site.id, participant.id, state],
-      );
-      return row?.id;
-    });
+  const report = async (state: 'new' | 'read') => (await givenReports(participant, { count: 1, level: 'R1', dueAt: '2027-01-20T11:52:00Z', state }))[0];
   const unread = await report('new');
   const read = await report('read');
   const view = await todayAt(coordinator, '2027-01-20T10:40:00Z', { kind: 'query' });

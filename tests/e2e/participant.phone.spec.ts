@@ -164,7 +164,7 @@ test('a change in the arm with a red flag says what to do before anything is sen
     await coordinator.goto('/today');
     const report = coordinator.getByRole('main').getByText(code).first();
     await expect(report).toBeVisible();
-    const { urgent } = await ask<{ urgent: readonly { participantCode: string }[] }>(coordinator, '/api/today');
-    expect(urgent.map(({ participantCode }) => participantCode)).toContain(code);
+    const { urgent } = await ask<{ urgent: readonly { code: string }[] }>(coordinator, '/api/today');
+    expect(urgent.map((each) => each.code)).toContain(code);
   });
 });
