@@ -47,14 +47,40 @@ export class ReviewRelease extends Migration {
     this.addSql(`create table extract (
       id uuid primary key default gen_random_uuid(), study_id uuid not null references study, number bigint generated always as identity unique, profile text not null check (profile in ('open', 'controlled')), purpose text not null check (length(purpose) between 1 and 500), recipient text not null, as_of timestamptz not null,
       state text not null default 'waiting' check (state in ('waiting', 'preparing', 'ready', 'failed')), progress integer not null default 0 check (progress between 0 and 100), files jsonb not null default '[]', removed jsonb not null default '[]', counts jsonb not null default '{}', failure text, requested_by uuid not null references account, requested_label text not null, requested_at timestamptz not null, ready_at timestamptz, version integer not null default 1)`);
-    this.addSql(`create table seal (id bigint generated always as identity primary key, tree_size bigint not null unique, last_entry_id bigint not null, below_txid xid8 not null, root_hash text not null, peaks text[] not null, sealed_at timestamptz not null)`);
+    this.addSql(`create table seal (id bigint generated always as identity primary key, tree_size bigint not null unique, last_entry_id bigint not null, below_txid xid8 not null, root_hash text not null, peaks text[] not null, sealed_at timestamptz not null default app_now(), check (root_hash ~ '^[0-9a-f]{64}$'))`);
     for (const line of [
       ...guard({ table: 'extract', reach: 'known', grants: ['select', 'insert', 'update'], audit: {} }),
       // A seal is itself the proof over the trail; it is append-only and never part of it.
-      ...guard({ table: 'seal', reach: 'known', grants: ['select', 'insert'], audit: false }),
+      ...guard({ table: 'seal', reach: 'known', grants: ['select'], audit: false }),
     ])
       this.addSql(line);
     this.addSql('create policy extract_staff on extract as restrictive using ((select app_participant()) is null)');
+    this.seals();
+  }
+
+  /**
+   * A seal follows the one before and covers exactly the final entries below its transaction, or it is refused: one that claims
+   * more would keep every later one out. The number and the moment are the data base's own.
+   */
+  private seals(): void {
+    this.addSql('grant insert (tree_size, last_entry_id, below_txid, root_hash, peaks) on seal to app_rw');
     this.addSql('create trigger seal_closed before update or delete on seal for each row execute function audit_closed()');
+    this.addSql('create trigger seal_kept before truncate on seal for each statement execute function audit_closed()');
+    this.addSql(`create function seal_grows() returns trigger language plpgsql security definer set search_path = public as $$
+    declare last seal; added bigint; newest bigint;
+    begin
+      perform pg_advisory_xact_lock(hashtext('seal'));
+      select * into last from seal order by tree_size desc limit 1;
+      if new.below_txid > pg_snapshot_xmin(pg_current_snapshot()) then
+        raise exception 'A seal covers only what is final.' using errcode = '42501';
+      end if;
+      select count(*), max(id) into added, newest from audit_entry where txid >= coalesce(last.below_txid, '0'::xid8) and txid < new.below_txid;
+      if added = 0 or new.tree_size <> coalesce(last.tree_size, 0) + added or new.last_entry_id <> greatest(last.last_entry_id, newest) then
+        raise exception 'A seal covers every final entry, and more than the seal before it.' using errcode = '42501';
+      end if;
+      new.sealed_at := app_now();
+      return new;
+    end $$`);
+    this.addSql('create trigger seal_grows before insert on seal for each row execute function seal_grows()');
   }
 }

@@ -42,7 +42,7 @@ export function Proof({ proof }: { proof: ProofView }) {
             <dd className="t-num text-right">{seal ? formatCount(seal.treeSize) : '0'}</dd>
           </dl>
           <p className="t-small mt-2 text-ink-2">
-            A seal is the root of a hash tree over every entry (RFC 6962). An altered or missing entry gives another root. scripts/verify-audit works it out again from all entries, without this application.
+            A seal is the root of a hash tree over every entry (RFC 6962). An altered or missing entry gives another root. Each root is also kept as a head outside the data base. scripts/verify-audit works the root out again from all entries, without this application, and compares it with those heads; this page has not done so.
           </p>
         </section>
       </aside>

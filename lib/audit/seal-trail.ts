@@ -1,3 +1,4 @@
+import { moment } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import { append, emptyTree, leafHash, rootOf, type Tree } from './merkle';
 
@@ -11,6 +12,7 @@ const batch = 5000;
 
 interface SealRow {
   tree_size: string;
+  last_entry_id: string;
   below_txid: string;
   peaks: string[];
 }
@@ -19,6 +21,8 @@ interface SealRow {
 export interface Seal {
   readonly treeSize: number;
   readonly rootHash: string;
+  /** ISO text. */
+  readonly sealedAt: string;
 }
 
 const readTree = (row: SealRow | undefined): Tree =>
@@ -31,12 +35,13 @@ const readTree = (row: SealRow | undefined): Tree =>
  */
 export async function sealTrail(work: Work): Promise<Seal | null> {
   await work.sql(`select pg_advisory_xact_lock(hashtext('seal'))`);
-  const [last] = await work.sql<SealRow>('select tree_size::text, below_txid::text, peaks from seal order by id desc limit 1');
+  const [last] = await work.sql<SealRow>('select tree_size::text, last_entry_id::text, below_txid::text, peaks from seal order by seal.tree_size desc limit 1');
   const [horizon] = await work.sql<{ xmin: string }>('select pg_snapshot_xmin(pg_current_snapshot())::text as xmin');
   const below = horizon?.xmin ?? '0';
   let tree = readTree(last);
   let from = { txid: last?.below_txid ?? '0', id: '0' };
-  let lastId = 0;
+  // Entries of a later transaction may have lower ids: the highest under the seal never falls.
+  let lastId = Number(last?.last_entry_id ?? 0);
   for (;;) {
     // The order names the table's columns: by the bare names it would take the selected texts, and '10' before '9'.
     const rows = await work.sql<{ id: string; txid: string; leaf: string }>(
@@ -54,13 +59,12 @@ export async function sealTrail(work: Work): Promise<Seal | null> {
   }
   if (tree.size === Number(last?.tree_size ?? 0)) return null;
   const rootHash = rootOf(tree).toString('hex');
-  await work.sql('insert into seal (tree_size, last_entry_id, below_txid, root_hash, peaks, sealed_at) values (?, ?, ?::xid8, ?, ?::text[], ?)', [
+  const [kept] = await work.sql<{ sealed_at: string }>('insert into seal (tree_size, last_entry_id, below_txid, root_hash, peaks) values (?, ?, ?::xid8, ?, ?::text[]) returning sealed_at::text', [
     tree.size,
     lastId,
     below,
     rootHash,
     `{${tree.peaks.map((peak) => peak.toString('hex')).join(',')}}`,
-    work.now,
   ]);
-  return { treeSize: tree.size, rootHash };
+  return { treeSize: tree.size, rootHash, sealedAt: moment(kept?.sealed_at ?? '').toISOString() };
 }
