@@ -23,7 +23,7 @@ export interface BeforeYouSaveProps {
 /** Id of a doubt in the list, so that saving too early leads to it. */
 export const doubtId = ({ check, place }: Pick<Doubt, 'check' | 'place'>): string => `doubt-${check}-${place}`.replaceAll(/[ .]/g, '-');
 
-/** What is doubtful, in words, each with its two ways out: measure it again, or keep it and say why. */
+/** What is doubtful, in words, each with its ways out: measure it again, or, where it can be so, keep it and say why. */
 export function BeforeYouSave({ doubts, map, onMeasureAgain, onKeep }: BeforeYouSaveProps) {
   if (doubts.length === 0) return null;
   const pressing = doubts.filter((doubt) => isPressing(doubt));
@@ -57,7 +57,8 @@ function DoubtLine({ doubt, map, onMeasureAgain, onKeep }: Omit<BeforeYouSavePro
   const isHot = doubt.severity !== 'hint' && doubt.reason === null;
   const where = cell ? placeWords(cell, map) : (elsewhere[doubt.place] ?? doubt.place);
   // A third reading answers trials that differ; nothing need be written about it, nor about a mere hint.
-  const needsReason = doubt.severity !== 'hint';
+  // What cannot be right is not kept, whatever the reason.
+  const mayKeep = doubt.severity === 'soft';
   return (
     <li id={doubtId(doubt)} tabIndex={-1} className={isHot ? 'before-hot' : undefined}>
       <b className={isHot ? 'is-needs' : undefined}>{where}</b>
@@ -83,7 +84,7 @@ function DoubtLine({ doubt, map, onMeasureAgain, onKeep }: Omit<BeforeYouSavePro
                 Measure again
               </Button>
             )}
-            {needsReason && !doubt.reason ? (
+            {mayKeep && !doubt.reason ? (
               <Button kind="link" onClick={() => setWriting(true)}>
                 {doubt.figure ? `Keep ${doubt.figure}, give a reason` : 'Keep it, give a reason'}
               </Button>

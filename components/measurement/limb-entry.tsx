@@ -4,6 +4,7 @@ import { useCallback, useMemo, useState } from 'react';
 import type { CompleteAssessmentView } from '@/lib/measurement/view-complete';
 import type { LimbPageView } from '@/lib/measurement/view-limb-page';
 import type { OpenAssessmentView } from '@/lib/measurement/view-open';
+import { askedDoubts } from '../api/asked-doubts';
 import { ProblemError, send } from '../api/send';
 import { useToast } from '../ui/toast';
 import { ArmDrawing } from './arm-drawing';
@@ -34,7 +35,7 @@ function goTo(id: string): void {
 }
 
 /** Everything that can be worked out from what is typed. */
-function useForm(view: OpenAssessmentView, typed: Typed, circumstances: TypedCircumstances, kept: Kept, typing: string | null, firstCovered: boolean) {
+function useForm(view: OpenAssessmentView, typed: Typed, circumstances: TypedCircumstances, kept: Kept, typing: string | null, firstCovered: boolean, asked: readonly Doubt[]) {
   return useMemo(() => {
     const sitting = sittingOf(typed, view);
     const columns = columnsOf(view.map.levelCount, { left: thirdLevels(sitting, 'left'), right: thirdLevels(sitting, 'right') });
@@ -45,7 +46,8 @@ function useForm(view: OpenAssessmentView, typed: Typed, circumstances: TypedCir
       return problem ? [{ check: 'entry.read', severity: 'hint' as const, message: problem, place: cellName(cell) }] : [];
     });
     const { values, problems } = readCircumstances(circumstances);
-    const found = [...unread, ...doubtsOf(sitting, missing.length === 0), ...doubtsBeside(values)]
+    const own = [...unread, ...doubtsOf(sitting, missing.length === 0), ...doubtsBeside(values)];
+    const found = [...own, ...asked.filter((one) => !own.some((known) => keyOf(known) === keyOf(one)))]
       // While trial 1 is covered nothing compares with it.
       .filter(({ check, place }) => !(firstCovered && (check.startsWith('trials.') || cellOf(place)?.trial === 1)))
       .filter(({ place }) => place !== typing || (typed[place] ?? '').length > 3);
@@ -54,7 +56,7 @@ function useForm(view: OpenAssessmentView, typed: Typed, circumstances: TypedCir
       return { ...doubt, figure: typed[doubt.place] ?? '', reason: reason?.message === doubt.message ? reason.reason : null };
     });
     return { sitting, columns, missing, doubts, values, problems };
-  }, [view, typed, circumstances, kept, typing, firstCovered]);
+  }, [view, typed, circumstances, kept, typing, firstCovered, asked]);
 }
 
 /** The sitting while it is taken: grid, drawing, what stands beside the tape, doubts, and one way to save. */
@@ -63,12 +65,14 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
   const [typed, setTyped] = useState<Typed>(() => typedFrom(view.trials));
   const [circumstances, setCircumstances] = useState<TypedCircumstances>(() => typedCircumstances(view.circumstances));
   const [kept, setKept] = useState<Kept>({});
+  // What earlier visits make doubtful is known to the server alone, and said only when both trials are saved.
+  const [asked, setAsked] = useState<readonly Doubt[]>([]);
   const [typing, setTyping] = useState<string | null>(null);
   const [firstCovered, setFirstCovered] = useState(false);
   const [arm, setArm] = useState<'left' | 'right'>('left');
   const [refusal, setRefusal] = useState<{ place: string; sentence: string } | null>(null);
   const [atWork, setAtWork] = useState(false);
-  const form = useForm(view, typed, circumstances, kept, typing, firstCovered);
+  const form = useForm(view, typed, circumstances, kept, typing, firstCovered, asked);
   const { sitting, columns, missing, doubts, values } = form;
   const parts = useMemo(() => partsOfForm(view, typed, values), [view, typed, values]);
   const { state, flush, settle, complete } = useKeptSitting({ view, parts, partsOf: partsOfView, onComplete });
@@ -89,7 +93,7 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
     if (first) return lead(cellName(first), first.trial === 3 ? 'The two trials differ here: take a third reading.' : 'This girth is still to be read.');
     const [problem] = Object.entries(form.problems);
     if (problem) return lead(problem[0], problem[1]);
-    const hot = doubts.find(({ severity, reason }) => severity === 'hard' && reason === null);
+    const hot = doubts.find(({ severity, reason }) => severity !== 'hint' && reason === null);
     if (hot) return lead(doubtId(hot), hot.message);
     setAtWork(true);
     setRefusal(null);
@@ -113,6 +117,12 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
       const theirs = await send<CompleteAssessmentView | OpenAssessmentView>('GET', `/api/visits/${view.visitId}/assessment`).catch(() => null);
       if (theirs?.state === 'complete') return onComplete(theirs);
     }
+    const fresh = askedDoubts(error.problem).map(({ check, place, sentence }) => ({ check, place, message: sentence, severity: 'soft' as const }));
+    const [first] = fresh;
+    if (first) {
+      setAsked(fresh);
+      return lead(doubtId(first), first.message);
+    }
     const at = error.problem.fields?.[0];
     if (at && (cellOf(at.field) || at.field === 'position' || at.field === 'sleeveWorn')) lead(at.field, at.sentence);
     else say({ kind: 'needs', word: 'Not saved.', text: error.problem.detail });
@@ -125,7 +135,7 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
   const dents = doubts.flatMap(({ place, reason, severity, check }) => {
     const cell = cellOf(place);
     const { mm } = readCell(typed[place]);
-    return cell && mm !== null && reason === null && (severity === 'hard' || check === 'trials.differ') ? [{ side: cell.side, level: cell.level, girthMm: mm }] : [];
+    return cell && mm !== null && reason === null && (severity !== 'hint' || check === 'trials.differ') ? [{ side: cell.side, level: cell.level, girthMm: mm }] : [];
   });
 
   return (
@@ -153,6 +163,7 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
             onType={(name, text) => {
               setTyped((before) => ({ ...before, [name]: text }));
               setTyping(name);
+              setAsked([]);
               setRefusal((before) => (before?.place === name ? null : before));
             }}
             onLeaveColumn={() => {
@@ -173,6 +184,7 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
             problems={{ ...form.problems, ...(refusal && !cellOf(refusal.place) ? { [refusal.place]: refusal.sentence } : {}) }}
             onType={(change) => {
               setCircumstances((before) => ({ ...before, ...change }));
+              setAsked([]);
               setRefusal(null);
             }}
             onLeave={() => void flush()}

@@ -1,4 +1,7 @@
-/** `hint` guides while typing; `soft` is saved and asks for a reason or raises a data query; `hard` is not saved without an override. */
+/**
+ * `hint` guides while typing; `soft` can be so and is saved with a reason; `hard` cannot be right and is not saved, whatever
+ * the reason. A change since an earlier visit is never hard: the earlier figure may be the wrong one.
+ */
 export type Severity = 'hint' | 'soft' | 'hard';
 
 /** What a check may look at. While trials are open nothing from earlier visits may guide the hand, so only `this-sitting` checks run. */

@@ -1,5 +1,5 @@
 import { areComparable, type MethodIdentity } from '../measurement/comparable';
-import { printChange, printNumber } from '../numbers';
+import { printNumber } from '../numbers';
 import { isAbove } from '../threshold';
 import { defineEditCheck, type EditCheck } from './define-edit-check';
 
@@ -26,14 +26,15 @@ interface Subject {
 }
 
 function changeChecks({ stem, title, what, since, unit, softPct, hardPct, source }: Subject): { limit: EditCheck<BeforeAndNow>; range: EditCheck<BeforeAndNow> } {
+  // The sentence is shown before the sitting is saved, so it names the figure of today and the limit, and none from before.
   const say = (pair: BeforeAndNow, over: number): { message: string; value: number } => ({
-    message: `${what} went from ${printNumber(pair.before, 0)} to ${printNumber(pair.now, 0)} ${unit} since ${since}, ${printChange(changePct(pair))} %; more than ${over} % is unusual. Check both, or keep it and say why.`,
+    message: `${what} is ${printNumber(pair.now, Number.isInteger(pair.now) || unit === 'mL' ? 0 : 1)} ${unit} today, more than ${over} % away from ${since}. Look at it again, or keep it and say why.`,
     value: pair.now,
   });
   const size = (pair: BeforeAndNow): number => Math.abs(changePct(pair));
   return {
     limit: defineEditCheck({
-      id: `${stem}.limit`, version: 1, severity: 'hard', uses: 'history', title: `${title}: limit`, source,
+      id: `${stem}.limit`, version: 2, severity: 'soft', uses: 'history', title: `${title}: a great change`, source,
       run: (pair) => (isAbove(size(pair), hardPct) ? say(pair, hardPct) : null),
       examplePass: { before: 100, now: 100 + hardPct }, exampleFires: { before: 100, now: 101 + hardPct },
     }),

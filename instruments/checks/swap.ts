@@ -40,8 +40,7 @@ export const armsSwapped = defineEditCheck<ArmsThenAndNow>({
   title: 'Left and right may be swapped',
   source: 'common practice, no source; checks DQ-01, DQ-02',
   run(arms) {
-    const { isSuspect, rmsCm } = leftRightSwap(arms);
-    return isSuspect ? { message: `The arms differ from the last visit by ${rmsCm.toFixed(1)} cm on average, and fit it if left and right are exchanged. Exchange them, or keep them and say why.` } : null;
+    return leftRightSwap(arms).isSuspect ? { message: 'Left and right may be swapped: the arms fit the last visit much better the other way round. Look which arm was read, or keep them and say why.' } : null;
   },
   examplePass: { previousLeftMm: left, previousRightMm: right, leftMm: left, rightMm: right },
   exampleFires: { previousLeftMm: left, previousRightMm: right, leftMm: right, rightMm: left },

@@ -48,8 +48,8 @@ function describe({ level, changeMm }: TaperViolation, { girthsMm, stepMm }: Gir
 
 export const taperImpossible = defineEditCheck<GirthColumn>({
   id: 'taper.limit',
-  version: 1,
-  severity: 'hard',
+  version: 2,
+  severity: 'soft',
   uses: 'this-sitting',
   title: 'Neighbouring levels: more than an arm can change',
   source: 'common practice, no source',

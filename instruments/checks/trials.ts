@@ -35,8 +35,8 @@ export const trialsDiffer = defineEditCheck<TrialPair>({
 
 export const trialsFarApart = defineEditCheck<TrialPair>({
   id: 'trials.far-apart',
-  version: 1,
-  severity: 'hard',
+  version: 2,
+  severity: 'soft',
   uses: 'this-sitting',
   title: 'Two trials more than 2.0 cm apart',
   source: SOURCE,

@@ -16,6 +16,9 @@ export interface KeptFinding {
   readonly reason: string | null;
 }
 
+/** A finding before anybody has said why it stands. */
+export type Found = Omit<KeptFinding, 'reason'>;
+
 const trialNumbers = { first: 1, second: 2, third: 3 } as const;
 
 /** Names a place on the grid in the words that both screen and record use. */
@@ -23,7 +26,7 @@ export const placeName = ({ side, trial, level }: SittingFinding['at']): string 
   [side, trial && trialNumbers[trial], level].filter((part) => part !== undefined).join(' ') || 'whole';
 
 /** Everything doubtful about a sitting by itself, with its place. */
-export function findingsOf(assessment: LimbAssessment, trials: readonly LimbTrial[]): Omit<KeptFinding, 'reason'>[] {
+export function findingsOf(assessment: LimbAssessment, trials: readonly LimbTrial[]): Found[] {
   const kg = assessment.bodyWeightG == null ? null : assessment.bodyWeightG / 1000;
   const ratio = assessment.impedanceRatio ?? null;
   const beside = [

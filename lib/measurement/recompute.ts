@@ -1,35 +1,10 @@
 import { isDeepStrictEqual } from 'node:util';
-import { LimbAssessmentSchema, type LimbAssessment } from '@/entities/limb-assessment';
-import { LimbTrialSchema, type LimbTrial } from '@/entities/limb-trial';
 import { ParticipantSchema } from '@/entities/participant';
-import { VisitSchema, type Visit } from '@/entities/visit';
 import { findProtocol } from '@/lib/protocol/find-protocol';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
-import { computeAssessment, type MeasuredSitting } from './compute-assessment';
-import { measuredSitting } from './sitting';
-
-interface Taken {
-  readonly assessment: LimbAssessment;
-  readonly visit: Visit;
-  readonly sitting: MeasuredSitting;
-}
-
-/** Every assessment of a participant with its rows, by date; the open one too while it is being completed. */
-async function takenBy(work: Work, participantId: string): Promise<Taken[]> {
-  const [assessments, trials, visits] = [
-    await work.em.find(LimbAssessmentSchema, { participantId }),
-    await work.em.find(LimbTrialSchema, { participantId }),
-    await work.em.find(VisitSchema, { participantId }),
-  ];
-  const passesOf = (id: string): LimbTrial[] => trials.filter(({ assessmentId }) => assessmentId === id);
-  return assessments
-    .flatMap((assessment) => {
-      const visit = visits.find(({ id }) => id === assessment.visitId);
-      return visit?.doneOn ? [{ assessment, visit, sitting: measuredSitting(assessment, passesOf(assessment.id), visit.doneOn) }] : [];
-    })
-    .sort((a, b) => (a.sitting.on < b.sitting.on ? -1 : 1));
-}
+import { computeAssessment } from './compute-assessment';
+import { takenBy } from './taken-by';
 
 /**
  * Computes results anew for the assessments that are complete, or for one that is about to be. A corrected baseline
@@ -39,8 +14,7 @@ async function takenBy(work: Work, participantId: string): Promise<Taken[]> {
 export async function recompute(work: Work, participantId: string, completingId?: string): Promise<void> {
   const participant = await work.em.findOne(ParticipantSchema, { id: participantId });
   if (!participant) throw new Refusal('not-found', 'There is no such participant in your reach.');
-  await work.em.flush();
-  const taken = (await takenBy(work, participantId)).filter(({ assessment: { id, state } }) => state === 'complete' || id === completingId);
+  const taken = await takenBy(work, participantId, completingId);
   const baseline = taken.find(({ visit }) => visit.key === 'baseline') ?? null;
   for (const { assessment, visit, sitting } of taken) {
     const { swelling } = (await findProtocol(work, visit.protocolVersionId)).document;

@@ -175,6 +175,48 @@ test('two people measure at once: the second is asked before anything is written
   });
 });
 
+interface Measured {
+  readonly leftGirthsMm: readonly number[];
+  readonly rightGirthsMm: readonly number[];
+  readonly map: { readonly startOffsetMm: number; readonly stepMm: number };
+}
+
+/** A participant whose arms differ at the last visit by more than the 0.5 cm from which exchanged arms can be told. */
+async function unequalArms(page: Page, except: readonly string[]): Promise<{ code: string; last: Measured }> {
+  const { rows } = await ask<{ rows: { code: string; siteName: string; state: string; change: number | null }[] }>(page, '/api/participants?pageSize=100&sort=change&direction=desc&state=enrolled');
+  for (const { code } of rows.filter(({ code: one, change }) => change !== null && !except.includes(one))) {
+    const { visits } = await ask<{ visits: { id: string; state: string; doneOn: string | null; leftVolumeMl: number | null }[] }>(page, `/api/participants/${code}`);
+    const done = visits.filter(({ state, leftVolumeMl }) => state === 'complete' && leftVolumeMl !== null).at(-1);
+    if (!done || visits.some(({ state }) => state === 'in progress')) continue;
+    const last = await ask<Measured>(page, `/api/visits/${done.id}/assessment`);
+    const squares = last.leftGirthsMm.map((left, level) => (left - (last.rightGirthsMm[level] ?? left)) ** 2);
+    if (Math.sqrt(squares.reduce((sum, one) => sum + one, 0) / squares.length) > 6) return { code, last };
+  }
+  throw new Error('The demonstration has nobody with unequal arms.');
+}
+
+test('left and right exchanged are asked about once both trials are in, without a figure from before', async ({ as }) => {
+  const page = await as('coordinator');
+  const { code, last } = await unequalArms(page, [await codeOf(await as('participant-one')), await codeOf(await as('participant-two'))]);
+  await open(page, `/participants/${code}`);
+  const added = await sendTo(page, '/api/visits', { code, on: dayFromToday(0), why: 'The arm feels fuller' }, { 'idempotency-key': crypto.randomUUID() });
+  const { id } = (await added.json()) as { id: string };
+  await open(page, `/participants/${code}/visits/${id}/limb`);
+  await page.getByRole('button', { name: 'Begin measuring' }).click();
+  const exchanged = [['Left', last.rightGirthsMm], ['Right', last.leftGirthsMm]] as const;
+  for (const [side, girths] of exchanged)
+    for (const [level, girthMm] of girths.entries())
+      for (const trial of [1, 2]) await page.getByRole('textbox', { name: `${side} arm, ${(last.map.startOffsetMm + level * last.map.stepMm) / 10} cm, trial ${trial}, in cm` }).fill((Math.round(girthMm) / 10).toFixed(1));
+  await expect(page.getByText(/may be swapped/)).toHaveCount(0);
+  await page.getByLabel('Position of the arms').selectOption({ index: 1 });
+  await page.getByRole('radio', { name: 'Not worn' }).check();
+  await page.getByRole('button', { name: 'Save and see the result' }).click();
+  const asked = page.getByRole('listitem').filter({ hasText: 'Left and right may be swapped' });
+  await expect(asked.getByRole('button', { name: 'Keep it, give a reason' })).toBeVisible();
+  await expect(asked).not.toContainText(/\d/);
+  await expect(page.getByRole('heading', { name: 'Result' })).toHaveCount(0);
+});
+
 test('a day to come is refused, and the form stays as typed', async ({ as }) => {
   const page = await as('coordinator');
   await fillScreening(page, 'Day Ahead');
