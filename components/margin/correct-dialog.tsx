@@ -3,6 +3,7 @@
 import { lowerFirst } from '@/instruments/words';
 import { useState, type FormEvent } from 'react';
 import { otherPositions } from '@/lib/measurement/input';
+import { askedDoubts, keptOf } from '../api/asked-doubts';
 import { useSend } from '../api/use-send';
 import { Button } from '../ui/button';
 import { DateField } from '../ui/date-field';
@@ -16,7 +17,7 @@ import { printValue, unitOfKind, type ReviewItem, type ValueKind } from './revie
 export interface CorrectDialogProps {
   item: ReviewItem;
   /** The query that the correction answers in the same breath. */
-  query: { readonly id: string; readonly number: string } | null;
+  query: { readonly id: string; readonly number: string; readonly version: number } | null;
   onClose: () => void;
   onDone: () => void;
 }
@@ -48,9 +49,11 @@ export function CorrectDialog({ item, query, onClose, onDone }: CorrectDialogPro
   const [typed, setTyped] = useState(() => typedFrom(item));
   const [reason, setReason] = useState('');
   const [missing, setMissing] = useState<{ value?: string; reason?: string }>({});
+  const [keeping, setKeeping] = useState<Readonly<Record<string, string>>>({});
   const correct = useSend<{ corrected: true }>('POST', '/api/corrections', { version: item.version });
   const refused = correct.error?.problem;
   const at = (field: string) => refused?.fields?.find((one) => one.field === field)?.sentence;
+  const doubts = askedDoubts(refused);
   const submit = (event: FormEvent) => {
     event.preventDefault();
     if (correct.isPending) return;
@@ -58,7 +61,7 @@ export function CorrectDialog({ item, query, onClose, onDone }: CorrectDialogPro
     const why = reason.trim().length < 5 ? 'Say why the value changes; it is kept with the old one.' : undefined;
     setMissing({ ...('sentence' in found ? { value: found.sentence } : {}), ...(why ? { reason: why } : {}) });
     if ('sentence' in found || why) return;
-    correct.mutate({ target: item.target, value: found.value, reason: reason.trim(), ...(query ? { queryId: query.id } : {}) }, { onSuccess: onDone });
+    correct.mutate({ target: item.target, value: found.value, reason: reason.trim(), kept: keptOf(keeping), ...(query ? { query: { id: query.id, version: query.version } } : {}) }, { onSuccess: onDone });
   };
   return (
     <Dialog
@@ -76,9 +79,21 @@ export function CorrectDialog({ item, query, onClose, onDone }: CorrectDialogPro
     >
       <p>The old value stays in the form, struck, with your reason. Results are computed anew, and a mark on the value falls.</p>
       <form id="correct-form" noValidate onSubmit={submit} className="mt-3 grid gap-3.5">
-        <NewValue item={item} typed={typed} onType={setTyped} error={missing.value ?? at('value')} />
+        <NewValue item={item} typed={typed} onType={(text) => { setTyped(text); setKeeping({}); }} error={missing.value ?? at('value')} />
         <TextArea label="Reason" hint="What went wrong, in your words" rows={2} maxLength={500} value={reason} error={missing.reason ?? at('reason')} onChange={(event) => setReason(event.target.value)} />
-        {refused && !at('value') && !at('reason') ? (
+        {doubts.map(({ field, sentence }) => (
+          <TextArea
+            key={field}
+            label="Why it is kept"
+            hint={sentence}
+            rows={2}
+            maxLength={300}
+            value={keeping[field] ?? ''}
+            error={(keeping[field] ?? '').trim().length < 3 ? 'Look at the value again, or say why it is kept.' : undefined}
+            onChange={(event) => setKeeping((before) => ({ ...before, [field]: event.target.value }))}
+          />
+        ))}
+        {refused && !at('value') && !at('reason') && doubts.length === 0 ? (
           <p role="alert" className="is-needs">
             {refused.detail}
           </p>

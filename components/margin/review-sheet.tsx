@@ -214,9 +214,9 @@ export function ReviewSheet({ view, rights }: ReviewSheetProps) {
   );
 }
 
-function numbered({ queries }: ReviewView, id: string | null): { id: string; number: string } | null {
+function numbered({ queries }: ReviewView, id: string | null): { id: string; number: string; version: number } | null {
   const query = queries.find((one) => one.id === id);
-  return query ? { id: query.id, number: queryNumber(query.number) } : null;
+  return query ? { id: query.id, number: queryNumber(query.number), version: query.version } : null;
 }
 
 function Value({ item }: { item: ReviewItem }) {

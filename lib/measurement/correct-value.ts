@@ -64,7 +64,7 @@ async function correctVisit(work: Work, id: string, field: string, value: unknow
   const row = await work.em.findOneOrFail(VisitSchema, { id });
   work.expect(row);
   if (field !== 'done_on') throw notHere();
-  const on = z.iso.date('Give the day as in 2027-03-03.').parse(value);
+  const on = calendarDay('Give the day as in 2027-03-03.').parse(value);
   const { enrolledOn } = await work.em.findOneOrFail(ParticipantSchema, { id: row.participantId });
   const today = localDate(work.now, await timeZoneOf(work, row.siteId));
   if (row.state !== 'in progress' && row.state !== 'complete') throw new Refusal('conflict', `${row.name} has not taken place, so it has no day to correct.`, 'value');

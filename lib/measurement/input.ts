@@ -43,7 +43,9 @@ export const correctValueInput = z.strictObject({
   target: fieldTargetInput,
   value: z.union([z.string().max(500), z.number(), z.boolean(), z.null()]),
   reason: z.string().trim().min(5, 'Say why the value changes.').max(500, 'Use at most 500 characters.'),
-  /** The query that the correction answers. */
-  queryId: z.uuid().optional(),
+  /** Doubts that the new value raises, each with the reason for which it stands. */
+  kept: z.array(keptFindingSchema).max(20).optional(),
+  /** The query that the correction answers, in the version that was read. */
+  query: z.strictObject({ id: z.uuid(), version: z.int() }).optional(),
 });
 export type CorrectValueInput = z.output<typeof correctValueInput>;

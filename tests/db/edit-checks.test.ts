@@ -2,20 +2,29 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import type { Actor } from '@/lib/auth/roles';
 import { beginAssessment } from '@/lib/measurement/begin-assessment';
 import { completeAssessment } from '@/lib/measurement/complete-assessment';
+import { correctValue } from '@/lib/measurement/correct-value';
+import type { CorrectValueInput } from '@/lib/measurement/input';
 import { saveCircumstances } from '@/lib/measurement/save-circumstances';
 import { saveTrial } from '@/lib/measurement/save-trial';
 import { viewAssessment } from '@/lib/measurement/view-assessment';
 import type { CompleteAssessmentView } from '@/lib/measurement/view-complete';
 import type { OpenAssessmentView } from '@/lib/measurement/view-open';
+import { listQueriesInput } from '@/lib/queries/input';
+import { listQueries } from '@/lib/queries/list-queries';
+import { raiseQuery } from '@/lib/queries/raise-query';
+import { viewQuery, type QueryView } from '@/lib/queries/view-query';
 import { Refusal } from '@/lib/work/refusal';
 import { withWork } from '@/lib/work/with-work';
+import type { FieldTarget } from '@/lib/queries/targets';
 import { givenParticipant, givenScene, givenStaff, type GivenParticipant, type GivenScene } from '../given';
 
 let scene: GivenScene;
 let assessor: Actor;
+let monitor: Actor;
 beforeAll(async () => {
   scene = await givenScene();
   assessor = await givenStaff('assessor', scene.site);
+  monitor = await givenStaff('monitor', scene.site);
 });
 
 /** The arm of the worked example VOL-03 (clinical checks), and one that is 1.5 cm fuller at every level: plainly the other arm. */
@@ -142,5 +151,78 @@ describe('what cannot be right', () => {
     expect((await complete(open, [{ check: 'weight.range', place: 'weight', reason: 'Weighed twice.' }])).findings).toEqual([
       expect.objectContaining({ check: 'weight.range', reason: 'Weighed twice.' }),
     ]);
+  });
+});
+
+describe('a correction', () => {
+  let who: GivenParticipant;
+  let first: CompleteAssessmentView;
+  let second: CompleteAssessmentView;
+  beforeAll(async () => {
+    who = await enrolled();
+    first = await complete(await measure(who, 'baseline'));
+    second = await complete(await measure(who, 'week-12', { left: little(full), right: little(slim) }));
+  });
+
+  const correct = (correction: Omit<CorrectValueInput, 'reason'>, expectedVersion?: number) => {
+    const reason = 'Read again from the sheet.';
+    return withWork(assessor, 'assessment.correct', (work) => correctValue(work, { ...correction, reason }), { reason, now, ...(expectedVersion === undefined ? {} : { expectedVersion }) });
+  };
+  const weightOf = ({ id }: { id: string }): FieldTarget => ({ table: 'limb_assessment', id, field: 'body_weight_g' });
+  const girthOf = (view: CompleteAssessmentView, level: number): FieldTarget => ({ table: 'limb_trial', id: view.trialIds.find(({ side, trial }) => side === 'left' && trial === 1)?.id ?? '', field: `circumferences_mm.${level}` });
+  const again = (view: CompleteAssessmentView) => withWork(assessor, 'assessment.view', (work) => viewAssessment(work, { visitId: view.visitId })) as Promise<CompleteAssessmentView>;
+
+  test('to what cannot be right is refused', async () => {
+    await expect(correct({ target: girthOf(second, 5), value: 521 })).rejects.toMatchObject({ code: 'invalid', field: 'value' });
+    await expect(correct({ target: weightOf(second), value: 260_000 })).rejects.toThrow(/over 250 kg/);
+  });
+
+  test('to what is doubtful needs its reason, which stands on the form', async () => {
+    const { doubts } = asked(await refusalOf(correct({ target: weightOf(second), value: 249_000 })));
+    expect(doubts).toEqual(['weight.range weight', 'weight-change.limit weight']);
+    const kept = doubts.map((name) => ({ check: name.split(' ')[0] ?? '', place: name.split(' ')[1] ?? '', reason: 'The scale was read by two.' }));
+    await correct({ target: weightOf(second), value: 249_000, kept });
+    expect((await again(second)).findings.map(({ check, reason }) => [check, reason])).toEqual(kept.map(({ check, reason }) => [check, reason]));
+    await correct({ target: weightOf(second), value: 72_000 });
+    expect((await again(second)).findings).toEqual([]);
+  });
+
+  test('that casts doubt on another visit raises a query there', async () => {
+    // 60 kg at the first visit is nothing by itself; 72 kg at the second is then 20 % more.
+    await correct({ target: weightOf(first), value: 60_000 });
+    expect((await again(second)).findings.map(({ check, reason }) => [check, reason])).toEqual([['weight-change.range', null]]);
+    const { rows } = await withWork(monitor, 'query.list', (work) => listQueries(work, listQueriesInput.parse({ pageSize: 100 })), { now });
+    const raised = rows.filter(({ participantCode }) => participantCode === who.code);
+    expect(raised.map(({ fieldLabel, origin, visitId }) => [fieldLabel, origin, visitId])).toEqual([['Body weight', 'check', second.visitId]]);
+  });
+
+  test('of the day keeps to the study: begun visits only, from the enrolment to today', async () => {
+    const day = (id: string): FieldTarget => ({ table: 'visit', id, field: 'done_on' });
+    await expect(correct({ target: day(who.visits['month-6'] ?? ''), value: '2027-07-01' })).rejects.toMatchObject({ code: 'conflict', field: 'value' });
+    await expect(correct({ target: day(second.visitId), value: '1900-01-01' })).rejects.toMatchObject({ code: 'invalid', field: 'value' });
+    await expect(correct({ target: day(second.visitId), value: '2027-09-02' })).rejects.toMatchObject({ code: 'invalid', field: 'value' });
+    await correct({ target: day(second.visitId), value: '2027-03-30' });
+  });
+
+  describe('that answers a query', () => {
+    const ask = (target: FieldTarget): Promise<QueryView> => withWork(monitor, 'query.raise', (work) => raiseQuery(work, { target, question: 'What does the sheet say?' }), { now });
+    const stateOf = async ({ id }: QueryView): Promise<string> => (await withWork(monitor, 'query.list', (work) => viewQuery(work, id))).state;
+
+    test('answers one about the same value only', async () => {
+      const stranger = await enrolled();
+      const theirs = await ask(girthOf(await complete(await measure(stranger, 'baseline')), 3));
+      const beside = await ask(girthOf(second, 4));
+      for (const { id, version } of [theirs, beside]) await expect(correct({ target: girthOf(second, 3), value: 229, query: { id, version } })).rejects.toMatchObject({ code: 'invalid', field: 'query' });
+      expect([await stateOf(theirs), await stateOf(beside)]).toEqual(['open', 'open']);
+      await correct({ target: girthOf(second, 4), value: 251, query: { id: beside.id, version: beside.version } });
+      expect(await stateOf(beside)).toBe('answered');
+      await expect(correct({ target: girthOf(second, 4), value: 250, query: { id: beside.id, version: beside.version + 1 } })).rejects.toMatchObject({ code: 'conflict' });
+    });
+
+    test('answers it in the version that was read', async () => {
+      const query = await ask(girthOf(second, 6));
+      await expect(correct({ target: girthOf(second, 6), value: 276, query: { id: query.id, version: query.version + 1 } })).rejects.toMatchObject({ code: 'stale' });
+      expect(await stateOf(query)).toBe('open');
+    });
   });
 });
