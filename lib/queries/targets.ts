@@ -63,10 +63,12 @@ async function labelOf(work: Work, { table, field }: FieldTarget, image: Record<
   }
   if (table === 'questionnaire_response') {
     const item = /^answers\.([\w-]{1,60})$/.exec(field)?.[1];
-    return item && item in (image['answers'] as Record<string, unknown>) ? `Answer to ${item}` : null;
+    return item && Object.hasOwn(image['answers'] as Record<string, unknown>, item) ? `Answer to ${item}` : null;
   }
-  return labels[table][field] ?? null;
+  return Object.hasOwn(labels[table], field) ? (labels[table][field] ?? null) : null;
 }
+
+const isDictionary = (part: unknown): part is Record<string, unknown> => typeof part === 'object' && part !== null;
 
 /**
  * The value behind a target, within reach.
@@ -82,7 +84,7 @@ export async function findTarget(work: Work, target: FieldTarget): Promise<Found
   const label = row && (await labelOf(work, target, row.image));
   if (!row || !label) throw absent;
   const { image, visit_id: visitId } = row;
-  const value = target.field.split('.').reduce<unknown>((part, key) => (part as Record<string, unknown> | null | undefined)?.[key], image);
+  const value = target.field.split('.').reduce<unknown>((part, key) => (isDictionary(part) && Object.hasOwn(part, key) ? part[key] : null), image);
   return { ...target, siteId: String(image['site_id']), participantId: String(image['participant_id'] ?? image['id']), visitId, label, value: value ?? null };
 }
 

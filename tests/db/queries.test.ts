@@ -99,6 +99,19 @@ describe('a data query', () => {
     await expect(withWork(monitor, 'query.raise', (work) => raiseQuery(work, { target: { ...target(), field: 'site_id' }, question: 'What is this?' }))).rejects.toMatchObject({ code: 'not-found' });
   });
 
+  test('asks about a column of the record, never about what every object has', async () => {
+    const about = (table: 'participant' | 'visit', id: string, field: string) =>
+      withWork(monitor, 'query.raise', (work) => raiseQuery(work, { target: { table, id, field }, question: 'What does the chart say?' }));
+    for (const field of ['constructor', 'to_string', '__proto__', 'hasOwnProperty', 'valueOf']) {
+      await expect(about('participant', who.id, field)).rejects.toMatchObject({ code: 'not-found' });
+      await expect(about('visit', visitId, field)).rejects.toMatchObject({ code: 'not-found' });
+    }
+    const [response] = await asOwner<{ id: string }>('select id from questionnaire_response where participant_id = $1 limit 1', [who.id]);
+    for (const field of ['answers.constructor', 'answers.toString'])
+      await expect(withWork(monitor, 'query.raise', (work) => raiseQuery(work, { target: { table: 'questionnaire_response', id: response?.id ?? '', field }, question: 'Why?' }))).rejects.toMatchObject({ code: 'not-found' });
+    expect((await about('participant', who.id, 'surgery_on')).target.label).toBe('Date of surgery');
+  });
+
   test('asks, and never names the value it expects', () => {
     const parse = (question: string) => raiseQueryInput.safeParse({ target: { table: 'visit', id: randomUUID(), field: 'done_on' }, question });
     expect(parse('Should this be corrected to 71.4?').success).toBe(false);
