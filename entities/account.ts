@@ -9,6 +9,8 @@ export const AccountSchema = defineEntity({
     ...base(),
     kind: p.enum(['staff', 'participant', 'system']),
     label: p.string(),
+    /** What a person of the staff signs with; null for everybody else. */
+    name: p.string().nullable(),
     state: p.enum(['invited', 'active', 'closed']),
     createdAt: p.datetime(),
   },

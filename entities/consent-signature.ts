@@ -13,6 +13,8 @@ export const ConsentSignatureSchema = defineEntity({
     who: p.enum(['participant', 'staff']),
     means: p.enum(['typed', 'drawn', 'paper']),
     name: p.string(),
+    /** Whose account signed second; null for the participant's own. */
+    accountId: p.uuid().nullable(),
     drawing: p.text().nullable(),
     signedAt: p.datetime(),
     contentSha256: p.string(),

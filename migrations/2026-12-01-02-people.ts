@@ -15,7 +15,9 @@ export class People extends Migration {
       version integer not null default 1)`);
     this.addSql(`create table account (
       id uuid primary key default gen_random_uuid(), account_id uuid generated always as (id) stored, kind text not null check (kind in ('staff', 'participant', 'system')),
-      label text not null, state text not null default 'active' check (state in ('invited', 'active', 'closed')), created_at timestamptz not null default now(), version integer not null default 1)`);
+      label text not null, state text not null default 'active' check (state in ('invited', 'active', 'closed')), created_at timestamptz not null default now(), version integer not null default 1,
+      -- The name that a person of the staff signs with. A participant's name is identity data and stands in its own table.
+      name text check (name is null or kind = 'staff'))`);
     this.addSql(`create table credential (
       account_id uuid primary key references account, email text not null check (email = lower(email)), password_hash text,
       changed_at timestamptz not null default now(), version integer not null default 1)`);

@@ -33,7 +33,7 @@ export class ProtocolConsent extends Migration {
       sections_read text[] not null default '{}', permissions jsonb not null default '{}', paper_file_id uuid references stored_file, paper_signed_on date,
       participant_signed_at timestamptz, staff_signed_at timestamptz, staff_signed_by uuid references account, copy_file_id uuid references stored_file,
       created_at timestamptz not null default now(), version integer not null default 1,
-      check (state <> 'complete' or (participant_signed_at is not null and staff_signed_at is not null)),
+      check (state <> 'complete' or (participant_signed_at is not null and staff_signed_at is not null and staff_signed_by is not null)),
       check (mode <> 'paper' or state in ('reading', 'set aside') or paper_file_id is not null))`);
     this.addSql(`create unique index consent_one_open on consent (screening_id) where state in ('reading', 'signed by participant')`);
     this.addSql('create index consent_participant on consent (participant_id)');
@@ -41,7 +41,9 @@ export class ProtocolConsent extends Migration {
     this.addSql(`create table consent_signature (
       id uuid primary key default gen_random_uuid(), consent_id uuid not null references consent, screening_id uuid not null references screening, site_id uuid not null references site,
       participant_id uuid, who text not null check (who in ('participant', 'staff')), means text not null check (means in ('typed', 'drawn', 'paper')),
-      name text not null, drawing text check (length(drawing) < 60000), signed_at timestamptz not null, content_sha256 text not null, unique (consent_id, who))`);
+      name text not null, drawing text check (length(drawing) < 60000), signed_at timestamptz not null, content_sha256 text not null, unique (consent_id, who),
+      -- Whose account signed second. A participant signs without one.
+      account_id uuid references account, check ((who = 'staff') = (account_id is not null)))`);
     this.addSql(`create table participant_identity (
       id uuid primary key default gen_random_uuid(), screening_id uuid not null unique references screening, site_id uuid not null references site, participant_id uuid unique,
       name text not null, email text, phone text, born_on date, version integer not null default 1)`);
@@ -63,7 +65,23 @@ export class ProtocolConsent extends Migration {
       ...guard({ table: 'invitation', reach: 'sign-in', grants: change, audit: { without: ['token_hash'], identity: true } }),
     ])
       this.addSql(line);
+    this.signatures();
     this.links();
+  }
+
+  /** Nobody signs for another: the participant's own signature comes from an invited person, the second from the account that acts, under its name. */
+  private signatures(): void {
+    this.addSql(`create function sign_for_oneself() returns trigger language plpgsql as $$ begin
+      -- A scene that is laid out has no hands.
+      if app_act() = 'demo.seed' then return new; end if;
+      if new.who = 'participant' and new.means <> 'paper' and app_role() is distinct from 'invitee' then
+        raise exception 'The participant signs in person.' using errcode = '42501';
+      end if;
+      if new.who = 'staff' and (new.account_id is distinct from app_actor() or not exists (select from account where id = new.account_id and name = new.name)) then
+        raise exception 'Each account signs for itself.' using errcode = '42501';
+      end if;
+      return new; end $$`);
+    this.addSql('create trigger consent_signature_own before insert on consent_signature for each row execute function sign_for_oneself()');
   }
 
   /** A site issues and ends its own links; the holder of a consent link ends it by signing; everything else needs a sign-in act. */

@@ -171,6 +171,9 @@ export async function givenProtocol(study: GivenStudy, change: Partial<ProtocolD
 /** Roles whose reach is the whole study. */
 const studyWide: readonly GrantedRole[] = ['investigator', 'data-manager', 'administrator', 'auditor'];
 
+/** The name that an account of `givenStaff` signs with. */
+export const staffName = ({ label }: { label: string }): string => `Robin Example ${label}`;
+
 /** Somebody with one role: at the given sites, or over the whole study for the roles that work so. */
 export async function givenStaff(role: Exclude<GrantedRole, 'participant'>, sites: GivenSite | readonly GivenSite[], label?: string): Promise<Actor> {
   const list: readonly GivenSite[] = 'id' in sites ? [sites] : sites;
@@ -179,7 +182,7 @@ export async function givenStaff(role: Exclude<GrantedRole, 'participant'>, site
   const whole = studyWide.includes(role);
   const by = label ?? `${role.charAt(0).toUpperCase()}-${String(next()).padStart(2, '0')}`;
   const accountId = await setScene([], async (work) => {
-    const account = only(await work.sql<{ id: string }>(`insert into account (kind, label, state) values ('staff', ?, 'active') returning id`, [by]));
+    const account = only(await work.sql<{ id: string }>(`insert into account (kind, label, name, state) values ('staff', ?, ?, 'active') returning id`, [by, staffName({ label: by })]));
     await work.sql(
       `insert into role_grant (account_id, study_id, role, label, whole_study, site_ids, starts_at) values (?, ?, ?, ?, ?, ?::uuid[], '2026-01-01')`,
       [account.id, first.studyId, role, by, whole, whole ? '{}' : `{${list.map(({ id }) => id).join(',')}}`],
@@ -196,6 +199,8 @@ export interface GivenScreening {
   readonly name: string;
   /** The holder of this screening's consent link. */
   readonly invitee: Actor;
+  /** Whoever holds the tablet that was handed over for this screening. */
+  readonly atTablet: Actor;
 }
 
 /** Somebody being screened, with identity; eligibility answered and confirmed when a confirmer is given. */
@@ -237,7 +242,7 @@ export async function givenScreening(
     return screening.id;
   });
   const invitee: Actor = { accountId: inviteeAccountId, role: 'invitee', label: 'invited person', studyId: null, reach: [site.id], participantId: nobody, screeningId: id };
-  return { id, siteId: site.id, email, name, invitee };
+  return { id, siteId: site.id, email, name, invitee, atTablet: { ...invitee, label: 'at the tablet', atTablet: true } };
 }
 
 /** A consent in the given state, on the protocol's form, with the signatures that state needs. */
@@ -270,12 +275,12 @@ export async function givenConsent(
     );
     for (const [who, name, needed] of [
       ['participant', screening.name, signed],
-      ['staff', staff.label, complete],
+      ['staff', staffName(staff), complete],
     ] as const)
       if (needed)
         await work.sql(
-          `insert into consent_signature (consent_id, screening_id, site_id, who, means, name, signed_at, content_sha256) values (?, ?, ?, ?, 'typed', ?, '2027-01-05T11:00:00Z', ?)`,
-          [consent.id, screening.id, screening.siteId, who, name, '0'.repeat(64)],
+          `insert into consent_signature (consent_id, screening_id, site_id, who, means, name, account_id, signed_at, content_sha256) values (?, ?, ?, ?, 'typed', ?, ?, '2027-01-05T11:00:00Z', ?)`,
+          [consent.id, screening.id, screening.siteId, who, name, who === 'staff' ? staff.accountId : null, '0'.repeat(64)],
         );
     return consent;
   });

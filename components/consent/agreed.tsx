@@ -2,19 +2,22 @@ import type { ConsentView } from '@/lib/consent/view-consent';
 import { formatMoment } from '../ui/format';
 
 export interface AgreedProps {
-  consent: Pick<ConsentView, 'formNumber' | 'form' | 'permissions' | 'participantSignedAt' | 'staffSignedAt' | 'site'>;
+  consent: Pick<ConsentView, 'formNumber' | 'form' | 'permissions' | 'participantSignedAt' | 'staffSignedAt' | 'signatures' | 'site'>;
 }
 
 /** What was agreed and chosen, in the form's own words. */
 export function Agreed({ consent }: AgreedProps) {
-  const { form, permissions, site } = consent;
-  const at = (moment: Date | null) => (moment ? formatMoment(moment, site.timeZone) : 'not yet');
+  const { form, permissions, signatures, site } = consent;
+  const by = (who: 'participant' | 'staff', moment: Date | null) => {
+    const name = signatures.find((signature) => signature.who === who)?.name;
+    return moment ? `${name ? `${name}, ` : ''}${formatMoment(moment, site.timeZone)}` : 'not yet';
+  };
   return (
     <div className="grid gap-4">
       <dl className="grid gap-2">
         <Line term="Form" value={`${form.title}, version ${consent.formNumber}`} />
-        <Line term="Signed by the participant" value={at(consent.participantSignedAt)} />
-        <Line term={`Signed by ${site.name}`} value={at(consent.staffSignedAt)} />
+        <Line term="Signed by the participant" value={by('participant', consent.participantSignedAt)} />
+        <Line term={`Signed by ${site.name}`} value={by('staff', consent.staffSignedAt)} />
       </dl>
       <ul>
         {form.statements.map(({ key, text }) => (

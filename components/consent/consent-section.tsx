@@ -1,3 +1,4 @@
+import type { Signer } from '@/lib/consent/find-signer';
 import type { ConsentView } from '@/lib/consent/view-consent';
 import { ButtonLink } from '../ui/button';
 import { formatMoment } from '../ui/format';
@@ -10,11 +11,13 @@ import { SendAgain } from './send-again';
 export interface ConsentSectionProps {
   screeningId: string;
   consent: ConsentView | null;
+  /** Whose name the second signature carries. */
+  signer: Signer;
   today: string;
 }
 
 /** Consent as the staff lead it: begin, follow, sign second, keep the copy. */
-export function ConsentSection({ screeningId, consent, today }: ConsentSectionProps) {
+export function ConsentSection({ screeningId, consent, signer, today }: ConsentSectionProps) {
   if (!consent) return <ChooseWay screeningId={screeningId} current={null} />;
   if (consent.state === 'reading')
     return (
@@ -30,7 +33,7 @@ export function ConsentSection({ screeningId, consent, today }: ConsentSectionPr
       {consent.state === 'signed by participant' ? (
         <>
           <h3 className="mt-6">Second signature</h3>
-          <CountersignForm consentId={consent.id} version={consent.version} />
+          <CountersignForm consentId={consent.id} version={consent.version} signer={signer} />
         </>
       ) : (
         <p className="mt-4 flex flex-wrap gap-3">

@@ -2,6 +2,7 @@
 
 import { useRouter } from 'next/navigation';
 import { useForm } from 'react-hook-form';
+import type { Signer } from '@/lib/consent/find-signer';
 import { countersignInput, staffStatement } from '@/lib/consent/input';
 import { listProblems, placeRefusal } from '../api/form-problems';
 import { rawResolver } from '../api/raw-resolver';
@@ -15,8 +16,8 @@ import { useToast } from '../ui/toast';
 
 const input = countersignInput.omit({ id: true });
 
-/** The second signature, by the person who took consent. */
-export function CountersignForm({ consentId, version }: { consentId: string; version: number }) {
+/** The second signature, by the person who took consent, under the name of the account in use. */
+export function CountersignForm({ consentId, version, signer }: { consentId: string; version: number; signer: Signer }) {
   const router = useRouter();
   const { say } = useToast();
   const { register, handleSubmit, setError, formState } = useForm<{ agreed: boolean; name: string; password: string }>({ resolver: rawResolver(input), defaultValues: { agreed: false, name: '', password: '' } });
@@ -34,7 +35,7 @@ export function CountersignForm({ consentId, version }: { consentId: string; ver
     <form noValidate className="mt-4 grid max-w-xl gap-4" onSubmit={(event) => void sign(event)}>
       <ErrorSummary problems={listProblems(formState.errors, signing.error?.problem ?? null)} />
       <Checkbox id="agreed" label={staffStatement} error={formState.errors.agreed?.message} {...register('agreed')} />
-      <TextField id="name" label="Type your full name as your signature" autoComplete="name" error={formState.errors.name?.message} {...register('name')} />
+      <TextField id="name" label="Type your full name as your signature" hint={signer.name ? `You are signed in as ${signer.name}, ${signer.label}.` : undefined} autoComplete="name" error={formState.errors.name?.message} {...register('name')} />
       <PasswordField
         id="password"
         label="Your password"

@@ -48,8 +48,9 @@ export const policy = {
   'identity.correct': withIdentity(write(...consenting)),
   'consent.start': withIdentity(write(...consenting)),
   'consent.view': withIdentity(read(...consenting, 'invitee', 'participant')),
-  'consent.read-part': withIdentity(write(...consenting, 'invitee')),
-  'consent.sign': withIdentity(write(...consenting, 'invitee')),
+  // The participant's own acts: at home through the link, at the site with the tablet in hand. Staff never read or sign for them.
+  'consent.read-part': withIdentity(write('invitee')),
+  'consent.sign': withIdentity(write('invitee')),
   'consent.countersign': withIdentity(write(...consenting)),
   'consent.upload': withIdentity(write(...consenting)),
   'consent.file': withIdentity(write(...consenting, 'participant')),

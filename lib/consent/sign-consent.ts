@@ -8,12 +8,15 @@ import type { SignConsentInput } from './input';
 import { stepOf, type ConsentStep } from './view-consent';
 
 /**
- * The participant signs, on the clinic's tablet or at home. Uses up every link of this screening.
+ * The participant signs, on the clinic's tablet once it was handed over, or at home. Uses up every link of this screening.
+ *
+ * The typed name is kept as it was typed and is not compared with the name on record: that one may be misspelt or a
+ * maiden name, and a refusal would tell it to whoever holds the link. Who signs second sees both names side by side.
  * @throws Refusal 'invalid' for an unread part, an unticked statement or an open permission; 'conflict' when signed already.
  */
 export async function signConsent(work: Work, { id, statements, permissions, signature }: SignConsentInput): Promise<ConsentStep> {
   const { consent, form } = await findConsent(work, id);
-  const expectedMode = work.actor.role === 'invitee' && !work.actor.atTablet ? 'home' : 'tablet';
+  const expectedMode = work.actor.atTablet ? 'tablet' : 'home';
   if (consent.mode !== expectedMode) throw new Refusal('conflict', 'This consent is now read and signed in another way. Ask your site.');
   checkStatements(form, statements);
   checkPermissions(form, permissions);

@@ -21,7 +21,7 @@ export function studyEvents(plan: Plan): DemoEvent[] {
     eventBy(system, at, 'demo.seed', [
       inserted('study', { id: plan.ids.study, name: 'Steady Lift', starts_on: plan.startsOn, ends_on: plan.endsOn, recruitment_target: plan.sites.reduce((sum, { target }) => sum + target, 0) }),
       inserted('site', ...plan.sites.map((site) => siteRow(plan, site))),
-      inserted('account', ...plan.staff.map(({ accountId, label }) => ({ id: accountId, kind: 'staff', label, state: 'active', created_at: at.toISOString() }))),
+      inserted('account', ...plan.staff.map(({ accountId, label, name }) => ({ id: accountId, kind: 'staff', label, name, state: 'active', created_at: at.toISOString() }))),
       inserted('credential', ...plan.staff.map(({ accountId, email, password }) => ({ account_id: accountId, email, password_hash: password && `demo:${password}`, changed_at: at.toISOString() }))),
       inserted('role_grant', ...plan.staff.map((one) => grant(one, one.role, one.label, one.siteCodes)), ...second),
       inserted('protocol_version', { id: plan.ids.protocol, study_id: plan.ids.study, number: '1.0', document: plan.protocol, reason: 'First version', effective_on: plan.startsOn }),

@@ -53,7 +53,6 @@ function consentEvents(candidate: Candidate, { consentId, participantSignature, 
   const { plan, site, draw, screeningId, identity } = candidate;
   const mode = draw.chance(0.72) ? 'tablet' : 'home';
   const permissions = permissionsOf(draw);
-  const reader = mode === 'home' ? invitee : site.coordinator;
   const signedAt = minutesAfter(at, draw.whole(11, 30));
   const counteredAt = minutesAfter(signedAt, mode === 'home' ? draw.whole(40, 150) : 3);
   const signature = (id: string, who: 'participant' | 'staff', name: string, when: Date): Row => ({
@@ -61,10 +60,10 @@ function consentEvents(candidate: Candidate, { consentId, participantSignature, 
   });
   const start = { id: consentId, screening_id: screeningId, site_id: site.id, form_version_id: plan.ids.consentForm, mode, state: 'reading', created_at: at.toISOString() };
   const events = [eventBy(site.coordinator, at, 'consent.start', [inserted('consent', start)])];
-  if (steps === 'reading') return [...events, eventBy(reader, minutesAfter(at, 4), 'consent.read-part', [updated('consent', { id: consentId, sections_read: sectionKeys.slice(0, 3) })])];
+  if (steps === 'reading') return [...events, eventBy(invitee, minutesAfter(at, 4), 'consent.read-part', [updated('consent', { id: consentId, sections_read: sectionKeys.slice(0, 3) })])];
   events.push(
-    eventBy(reader, minutesAfter(signedAt, -1), 'consent.read-part', [updated('consent', { id: consentId, sections_read: sectionKeys, permissions })]),
-    eventBy(reader, signedAt, 'consent.sign', [
+    eventBy(invitee, minutesAfter(signedAt, -1), 'consent.read-part', [updated('consent', { id: consentId, sections_read: sectionKeys, permissions })]),
+    eventBy(invitee, signedAt, 'consent.sign', [
       updated('consent', { id: consentId, state: 'signed by participant', participant_signed_at: signedAt.toISOString() }),
       inserted('consent_signature', signature(participantSignature, 'participant', identity.name, signedAt)),
     ]),
@@ -72,7 +71,7 @@ function consentEvents(candidate: Candidate, { consentId, participantSignature, 
   if (steps === 'signed') return events;
   return [...events, eventBy(site.coordinator, counteredAt, 'consent.countersign', [
     updated('consent', { id: consentId, state: 'complete', staff_signed_at: counteredAt.toISOString(), staff_signed_by: site.coordinator.accountId }),
-    inserted('consent_signature', signature(staffSignature, 'staff', site.coordinator.name, counteredAt)),
+    inserted('consent_signature', { ...signature(staffSignature, 'staff', site.coordinator.name, counteredAt), account_id: site.coordinator.accountId }),
   ])];
 }
 

@@ -10,7 +10,7 @@ import type { Posting } from '@/lib/mail/send-letter';
 import { storage } from '@/lib/storage';
 import { withWork } from '@/lib/work/with-work';
 import { onePagePdf, onePixelPng } from '../forms';
-import { asOwner, givenScene, givenScreening, givenStaff, jobDeps, type GivenScene } from '../given';
+import { asOwner, givenScene, givenScreening, givenStaff, jobDeps, staffName, type GivenScene } from '../given';
 
 // Who is signed in is the edge that a test may replace; the route, the policy and the data base are the real ones.
 let signedIn: Actor | null = null;
@@ -49,7 +49,7 @@ test('a paper form is received, recorded, signed second, and served back to its 
   // What the browser said of it did not count.
   expect(await received.json()).toMatchObject({ contentType: 'image/png', byteCount: onePixelPng.length });
   expect(await record(scene.coordinator, id)).toMatchObject({ state: 'signed by participant' });
-  expect(await withWork(scene.coordinator, 'consent.countersign', (work) => countersignConsent(work, { id, name: 'Robin Coordinator' }))).toMatchObject({ state: 'complete' });
+  expect(await withWork(scene.coordinator, 'consent.countersign', (work) => countersignConsent(work, { id, name: staffName(scene.coordinator) }))).toMatchObject({ state: 'complete' });
 
   const served = await fetchFile(id, 'form');
   expect(served.status).toBe(200);
@@ -70,7 +70,7 @@ test('the copy of a paper form is the form itself', async () => {
   const { id, screening } = await startPaper();
   await receivePaperForm(scene.coordinator, { id }, onePagePdf);
   await record(scene.coordinator, id);
-  await withWork(scene.coordinator, 'consent.countersign', (work) => countersignConsent(work, { id, name: 'Robin Coordinator' }));
+  await withWork(scene.coordinator, 'consent.countersign', (work) => countersignConsent(work, { id, name: staffName(scene.coordinator) }));
   const sent: Posting[] = [];
   await consentCopy.run({ siteId: scene.site.id, consentId: id }, jobDeps((_letter, posting) => Promise.resolve(void sent.push(posting))));
   expect(sent).toMatchObject([{ to: screening.email, attachments: [{ filename: 'your-copy.pdf', contentType: 'application/pdf' }] }]);

@@ -13,7 +13,7 @@ import { consentLink } from '@/lib/jobs/handlers/consent-link';
 import type { Posting } from '@/lib/mail/send-letter';
 import { secondsAfter } from '@/lib/work/time';
 import { withWork } from '@/lib/work/with-work';
-import { asOwner, givenConsent, givenScene, givenScreening, givenStaff, jobDeps, type GivenScene } from '../given';
+import { asOwner, givenConsent, givenScene, givenScreening, givenStaff, jobDeps, staffName, type GivenScene } from '../given';
 
 let scene: GivenScene;
 beforeAll(async () => {
@@ -36,7 +36,7 @@ const readAll = async (actor: Actor, id: string) => {
 };
 const sign = (actor: Actor, id: string, change: Partial<Parameters<typeof signConsent>[1]> = {}) =>
   withWork(actor, 'consent.sign', (work) => signConsent(work, { id, statements, permissions, signature: typed, ...change }));
-const countersign = (actor: Actor, id: string) => withWork(actor, 'consent.countersign', (work) => countersignConsent(work, { id, name: 'Robin Coordinator' }));
+const countersign = (actor: Actor, id: string) => withWork(actor, 'consent.countersign', (work) => countersignConsent(work, { id, name: staffName(actor) }));
 
 /** Runs the job that mails a link, and returns the token in the letter. */
 async function mailedToken(screeningId: string, now?: Date): Promise<string> {
@@ -48,52 +48,51 @@ async function mailedToken(screeningId: string, now?: Date): Promise<string> {
 
 describe('on the clinic’s tablet', () => {
   test('a consent is read, signed by the participant, then by the staff, and both signatures bind to one content', async () => {
-    const { id } = await start('tablet');
-    await readAll(scene.coordinator, id);
-    expect(await sign(scene.coordinator, id)).toMatchObject({ state: 'signed by participant' });
+    const { id, screening } = await start('tablet');
+    await readAll(screening.atTablet, id);
+    expect(await sign(screening.atTablet, id)).toMatchObject({ state: 'signed by participant' });
     expect(await countersign(scene.coordinator, id)).toMatchObject({ state: 'complete' });
     const view = await withWork(scene.coordinator, 'consent.view', (work) => viewConsent(work, { id }));
     expect(view.signatures.map(({ who, name }) => [who, name])).toEqual([
       ['participant', 'Ada Example'],
-      ['staff', 'Robin Coordinator'],
+      ['staff', staffName(scene.coordinator)],
     ]);
     expect(new Set(view.signatures.map(({ contentSha256 }) => contentSha256)).size).toBe(1);
   });
 
   test('a drawn signature carries the printed name of the record', async () => {
     const { id, screening } = await start('tablet');
-    await readAll(scene.coordinator, id);
-    await sign(scene.coordinator, id, { signature: { kind: 'drawn', path: 'M1.0 1.0L20.0 20.0', width: 300, height: 120 } });
+    await readAll(screening.atTablet, id);
+    await sign(screening.atTablet, id, { signature: { kind: 'drawn', path: 'M1.0 1.0L20.0 20.0', width: 300, height: 120 } });
     const view = await withWork(scene.coordinator, 'consent.view', (work) => viewConsent(work, { id }));
     expect(view.signatures).toMatchObject([{ means: 'drawn', name: screening.name }]);
   });
 
   test('an unread part stops the signature', async () => {
-    const { id } = await start('tablet');
-    await read(scene.coordinator, id, 'key-facts');
-    await expect(sign(scene.coordinator, id)).rejects.toMatchObject({ code: 'invalid', message: 'Read every part before signing: 1 still to read.' });
+    const { id, screening } = await start('tablet');
+    await read(screening.atTablet, id, 'key-facts');
+    await expect(sign(screening.atTablet, id)).rejects.toMatchObject({ code: 'invalid', message: 'Read every part before signing: 1 still to read.' });
   });
 
   test('an unanswered permission, an unknown one and an unticked statement stop it too', async () => {
-    const { id } = await start('tablet');
-    await readAll(scene.coordinator, id);
-    await expect(sign(scene.coordinator, id, { permissions: { 'data-sharing': 'no' } })).rejects.toMatchObject({ code: 'invalid', message: expect.stringContaining('1 still open') as string });
-    await expect(sign(scene.coordinator, id, { permissions: { ...permissions, more: 'yes' } })).rejects.toMatchObject({ code: 'invalid', field: 'permissions' });
-    await expect(sign(scene.coordinator, id, { statements: ['read'] })).rejects.toMatchObject({ code: 'invalid', field: 'statements' });
+    const { id, screening } = await start('tablet');
+    await readAll(screening.atTablet, id);
+    await expect(sign(screening.atTablet, id, { permissions: { 'data-sharing': 'no' } })).rejects.toMatchObject({ code: 'invalid', message: expect.stringContaining('1 still open') as string });
+    await expect(sign(screening.atTablet, id, { permissions: { ...permissions, more: 'yes' } })).rejects.toMatchObject({ code: 'invalid', field: 'permissions' });
+    await expect(sign(screening.atTablet, id, { statements: ['read'] })).rejects.toMatchObject({ code: 'invalid', field: 'statements' });
   });
 
   test('the staff cannot sign first, and nobody signs twice', async () => {
-    const { id } = await start('tablet');
+    const { id, screening } = await start('tablet');
     await expect(countersign(scene.coordinator, id)).rejects.toMatchObject({ code: 'conflict', message: 'The participant signs first.' });
-    await readAll(scene.coordinator, id);
-    await sign(scene.coordinator, id);
-    await expect(sign(scene.coordinator, id)).rejects.toMatchObject({ code: 'conflict', message: 'This consent is already signed.' });
-    await expect(read(scene.coordinator, id, 'key-facts')).rejects.toMatchObject({ code: 'conflict' });
+    await readAll(screening.atTablet, id);
+    await sign(screening.atTablet, id);
+    await expect(sign(screening.atTablet, id)).rejects.toMatchObject({ code: 'conflict', message: 'This consent is already signed.' });
+    await expect(read(screening.atTablet, id, 'key-facts')).rejects.toMatchObject({ code: 'conflict' });
   });
 
   test('another site’s coordinator finds nothing; a monitor, an assessor and an investigator may not', async () => {
     const { id } = await start('tablet');
-    await expect(sign(scene.otherCoordinator, id)).rejects.toMatchObject({ code: 'not-found' });
     await expect(countersign(scene.otherCoordinator, id)).rejects.toMatchObject({ code: 'not-found' });
     for (const role of ['monitor', 'assessor', 'investigator', 'data-manager'] as const) {
       const staff = await givenStaff(role, scene.site);
@@ -102,10 +101,50 @@ describe('on the clinic’s tablet', () => {
     }
   });
 
+  test('staff read and sign nothing as the participant, by no role and in no way', async () => {
+    for (const mode of ['tablet', 'home'] as const) {
+      const { id } = await start(mode);
+      for (const staff of [scene.coordinator, await givenStaff('site-investigator', scene.site)]) {
+        await expect(read(staff, id, 'key-facts')).rejects.toMatchObject({ code: 'forbidden' });
+        await expect(sign(staff, id)).rejects.toMatchObject({ code: 'forbidden' });
+      }
+    }
+  });
+
+  test('a tablet that was handed over for somebody else signs nothing here, and a link signs nothing that is read on the tablet', async () => {
+    const { id, screening } = await start('tablet');
+    const other = await start('tablet');
+    await expect(sign(other.screening.atTablet, id)).rejects.toMatchObject({ code: 'not-found' });
+    await readAll(screening.atTablet, id);
+    await expect(sign(screening.invitee, id)).rejects.toMatchObject({ code: 'conflict' });
+  });
+
+  test('the second signature carries the name of the account that signs, and no other', async () => {
+    const { id, screening } = await start('tablet');
+    await readAll(screening.atTablet, id);
+    await sign(screening.atTablet, id);
+    const investigator = await givenStaff('site-investigator', scene.site);
+    const second = (name: string) => withWork(scene.coordinator, 'consent.countersign', (work) => countersignConsent(work, { id, name }));
+    for (const name of ['Ada Example', staffName(investigator), staffName(scene.coordinator).slice(0, -1)])
+      await expect(second(name)).rejects.toMatchObject({ code: 'invalid', field: 'name' });
+    // Capitals, spaces and accents are one hand's writing.
+    await second(`  ${staffName(scene.coordinator).toUpperCase().replace('ROBIN', 'RÖBIN ')} `);
+    const kept = await asOwner(`select name, account_id from consent_signature where consent_id = $1 and who = 'staff'`, [id]);
+    expect(kept).toEqual([{ name: staffName(scene.coordinator), account_id: scene.coordinator.accountId }]);
+  });
+
+  test('an account without a name signs nothing', async () => {
+    const { site, protocol, coordinator } = await givenScene();
+    const screening = await givenScreening(site, protocol);
+    const { id } = await givenConsent(screening, protocol, coordinator, 'signed by participant');
+    await asOwner('update account set name = null where id = $1', [coordinator.accountId]);
+    await expect(countersign(coordinator, id)).rejects.toMatchObject({ code: 'conflict', field: 'name' });
+  });
+
   test('content that changed under the first signature is not signed a second time', async () => {
-    const { id } = await start('tablet');
-    await readAll(scene.coordinator, id);
-    await sign(scene.coordinator, id);
+    const { id, screening } = await start('tablet');
+    await readAll(screening.atTablet, id);
+    await sign(screening.atTablet, id);
     await asOwner(`update consent set permissions = '{"data-sharing": "no", "future-contact": "no"}' where id = $1`, [id]);
     await expect(countersign(scene.coordinator, id)).rejects.toMatchObject({ code: 'locked' });
   });
@@ -153,7 +192,7 @@ describe('at home, through a link', () => {
     expect(moved.id).toBe(id);
     await expect(sign(invitee, id)).rejects.toMatchObject({ code: 'conflict' });
     // What was read stays read: nothing is asked twice.
-    expect(await sign(scene.coordinator, id)).toMatchObject({ state: 'signed by participant' });
+    expect(await sign(screening.atTablet, id)).toMatchObject({ state: 'signed by participant' });
   });
 
   test('guessing links is throttled', async () => {
@@ -174,8 +213,8 @@ describe('at home, through a link', () => {
 describe('the participant’s copy', () => {
   test('is made once, kept, and mailed as a whole PDF; only the own site and the trail know of it', async () => {
     const { id, screening } = await start('tablet');
-    await readAll(scene.coordinator, id);
-    await sign(scene.coordinator, id, { signature: { kind: 'drawn', path: 'M1.0 1.0L20.0 20.0', width: 300, height: 120 } });
+    await readAll(screening.atTablet, id);
+    await sign(screening.atTablet, id, { signature: { kind: 'drawn', path: 'M1.0 1.0L20.0 20.0', width: 300, height: 120 } });
     await expect(withWork(scene.coordinator, 'consent.file', (work) => fetchConsentFile(work, { id, which: 'copy' }))).rejects.toMatchObject({ code: 'not-found' });
     await countersign(scene.coordinator, id);
     const sent: Posting[] = [];
@@ -199,6 +238,21 @@ describe('the data base', () => {
     const screening = await givenScreening(scene.site, scene.protocol);
     const { id } = await givenConsent(screening, scene.protocol, scene.coordinator, 'signed by participant');
     await expect(asOwner(`update consent set state = 'complete' where id = $1`, [id])).rejects.toMatchObject({ code: '23514' });
+  });
+
+  test('takes no signature for somebody else, whichever service writes it', async () => {
+    const screening = await givenScreening(scene.site, scene.protocol);
+    const { id } = await givenConsent(screening, scene.protocol, scene.coordinator, 'reading');
+    const investigator = await givenStaff('site-investigator', scene.site);
+    const write = (who: 'participant' | 'staff', name: string, accountId: string | null) =>
+      withWork(scene.coordinator, 'consent.countersign', (work) =>
+        work.sql(`insert into consent_signature (consent_id, screening_id, site_id, who, means, name, account_id, signed_at, content_sha256) values (?, ?, ?, ?, 'typed', ?, ?, ?, '0')`, [id, screening.id, scene.site.id, who, name, accountId, work.now]),
+      );
+    await expect(write('participant', screening.name, null)).rejects.toMatchObject({ code: '42501' });
+    await expect(write('staff', staffName(investigator), investigator.accountId)).rejects.toMatchObject({ code: '42501' });
+    await expect(write('staff', 'Somebody Else', scene.coordinator.accountId)).rejects.toMatchObject({ code: '42501' });
+    await expect(write('staff', staffName(scene.coordinator), null)).rejects.toMatchObject({ code: '42501' });
+    await expect(write('staff', staffName(scene.coordinator), scene.coordinator.accountId)).resolves.toBeDefined();
   });
 
   test('holds one open consent for a screening', async () => {

@@ -7,6 +7,8 @@ import { asOwner, givenConsent, givenParticipant, givenScreening, type GivenScen
 /** One of everything an address can name, all of one site (and of one participant). */
 export interface Subject {
   readonly site: GivenSite;
+  /** Whoever holds the tablet that was handed over for the open screening. */
+  readonly atTablet: Actor;
   readonly participant: { readonly id: string; readonly code: string; readonly actor: Actor };
   readonly screeningId: string;
   readonly openScreeningId: string;
@@ -60,6 +62,7 @@ export async function subjectAt(scene: GivenScene, site: GivenSite, staff: Actor
   );
   return {
     site,
+    atTablet: open.atTablet,
     participant,
     screeningId: participant.screeningId,
     openScreeningId: open.id,

@@ -1,7 +1,7 @@
 import { beforeAll, describe, expect, test, vi } from 'vitest';
 import { routes } from '@/app/api/routes';
 import { may } from '@/lib/auth/policy';
-import { grantedRoles, type Actor, type GrantedRole } from '@/lib/auth/roles';
+import { grantedRoles, type Actor, type Role } from '@/lib/auth/roles';
 import type { RouteHandler } from '@/lib/web/route';
 import { givenScene, givenStaff, type GivenScene } from '../../given';
 import { requestOf } from './request-of';
@@ -29,13 +29,16 @@ let own: Subject;
 let other: Subject;
 /** Another participant of the same site: for 'own record, other record'. */
 let neighbour: Subject;
-const actors = new Map<GrantedRole, Actor>();
+/** Every role that is granted, and whoever holds a tablet that was handed over. */
+const walkers = [...grantedRoles, 'invitee'] as const satisfies readonly Role[];
+const actors = new Map<Role, Actor>();
 
 beforeAll(async () => {
   scene = await givenScene();
   own = await subjectAt(scene, scene.site, scene.coordinator);
   neighbour = await subjectAt(scene, scene.site, scene.coordinator);
   other = await subjectAt(scene, scene.otherSite, scene.otherCoordinator);
+  actors.set('invitee', own.atTablet);
   for (const role of grantedRoles) actors.set(role, role === 'participant' ? own.participant.actor : await givenStaff(role, scene.site));
 });
 
@@ -63,13 +66,13 @@ describe.each(guarded.map((route) => [route.name, route] as const))('%s', (name,
   });
 
   test('refuses every role without the act', async () => {
-    for (const role of grantedRoles.filter((candidate) => !may(candidate, act)))
+    for (const role of walkers.filter((candidate) => !may(candidate, act)))
       expect([role, (await ask(actors.get(role) as Actor, route, sampleOf(name, own))).status]).toEqual([role, 403]);
   });
 
   test('shows other sites and other records to nobody', async () => {
-    for (const role of grantedRoles.filter((candidate) => may(candidate, act))) {
-      const strangers = role === 'participant' ? [other, neighbour] : [other];
+    for (const role of walkers.filter((candidate) => may(candidate, act))) {
+      const strangers = role === 'participant' || role === 'invitee' ? [other, neighbour] : [other];
       for (const stranger of strangers) {
         const sample = sampleOf(name, stranger);
         const { status, text } = await ask(actors.get(role) as Actor, route, sample);
@@ -81,7 +84,7 @@ describe.each(guarded.map((route) => [route.name, route] as const))('%s', (name,
   });
 
   test('lets those who may reach their own', async () => {
-    for (const role of grantedRoles.filter((candidate) => may(candidate, act))) {
+    for (const role of walkers.filter((candidate) => may(candidate, act))) {
       const { status, text } = await ask(actors.get(role) as Actor, route, sampleOf(name, own));
       // What the record allows now is another question (409, 412, 422, 423); a fault is never an answer.
       expect([role, status >= 500 || [401, 403].includes(status) || (status === 404 && !mayBeAbsent.has(name)), text.slice(0, 300)]).toEqual([role, false, expect.any(String)]);

@@ -8,6 +8,7 @@ import { LeaveScreeningForm } from '@/components/screening/leave-screening-form'
 import { formatDate, formatMoment } from '@/components/ui/format';
 import { Columns, FactStrip, MarginPart, PageHead } from '@/components/ui/page';
 import { may } from '@/lib/auth/policy';
+import { findSigner } from '@/lib/consent/find-signer';
 import { viewScreeningConsent } from '@/lib/consent/view-consent';
 import { viewIdentity } from '@/lib/enrolment/view-identity';
 import { viewScreening } from '@/lib/enrolment/view-screening';
@@ -21,6 +22,7 @@ export default async function ScreeningPage({ params }: { params: Promise<{ id: 
   const screening = await loadPage('screening.view', (work) => viewScreening(work, { id }));
   const leads = may(role, 'consent.start');
   const consent = leads ? await loadPage('consent.view', (work) => viewScreeningConsent(work, { screeningId: id })) : null;
+  const signer = leads ? await loadPage('consent.view', findSigner) : null;
   const identity = may(role, 'identity.view') ? await loadPage('identity.view', (work) => viewIdentity(work, { id })) : null;
   const { site, state, eligibility, today, version } = screening;
   const isOpen = state === 'screening';
@@ -61,10 +63,10 @@ export default async function ScreeningPage({ params }: { params: Promise<{ id: 
           ) : null}
           <EligibilityChecklist key={version} screeningId={id} version={version} criteria={screening.criteria} mayAnswer={isOpen && !eligibility && may(role, 'screening.answer')} />
         </section>
-        {leads && (isOpen || consent) ? (
+        {signer && (isOpen || consent) ? (
           <section className="mt-8">
             <h2>Consent</h2>
-            <ConsentSection screeningId={id} consent={consent} today={today} />
+            <ConsentSection screeningId={id} consent={consent} signer={signer} today={today} />
           </section>
         ) : null}
         {isOpen && may(role, 'participant.enrol') ? (
