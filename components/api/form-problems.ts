@@ -1,4 +1,4 @@
-import '@/lib/work/zod-words';
+import '@/instruments/schema-words';
 import type { FieldErrors, FieldValues, Path, UseFormSetError } from 'react-hook-form';
 import type { Problem } from '../ui/error-summary';
 import type { ProblemDetails } from './send';

@@ -87,7 +87,7 @@ export function QueriesList({ first, limitDays, mayClose }: QueriesListProps) {
         <ChoiceInSentence label="site" choices={siteChoices(sites)} value={filter.siteId} onChange={(event) => narrow({ siteId: event.target.value })} />, older than{' '}
         <ChoiceInSentence label="age" choices={ageChoices} value={filter.olderThanDays} onChange={(event) => narrow({ olderThanDays: event.target.value })} />, {orderWords(sorting)}.{' '}
         <span className="found" role="status">
-          {found.data ? `${countOf(found.data.rowCount, 'query', 'queries')} found, ${late} past the limit.` : ''}
+          {found.data ? `${countOf(found.data.rowCount, 'query', 'queries')} found, ${late === 0 ? 'none' : late} past the limit without an answer.` : ''}
         </span>
       </p>
       <Columns

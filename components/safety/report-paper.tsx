@@ -18,7 +18,7 @@ export function ReportPaper({ report }: { report: ReportView }) {
       <FactStrip
         facts={[
           { term: 'Participant', value: <Link href={`/participants/${report.participantCode}`}>{report.participantCode}</Link> },
-          { term: 'Treated side', value: report.affectedSide },
+          { term: 'Affected side', value: report.affectedSide },
           { term: 'Noticed', value: formatDate(report.noticedOn) },
           { term: 'Reported', value: at(report.reportedAt, '') },
           { term: 'Answer by', value: report.isOverdue ? <b className="text-needs">{at(report.dueAt, '')}, past</b> : at(report.dueAt, 'nothing asked') },

@@ -22,7 +22,7 @@ export function ReportTable({ caption, rows, now }: { caption: string; rows: rea
       rows={rows}
       getRowId={({ id }) => id}
       columns={[
-        { id: 'code', header: 'Participant', width: '110px', cell: (row) => <span className="t-num">{row.participantCode}</span> },
+        { id: 'code', header: 'Participant', width: '110px', cell: (row) => <Link className="code-link" href={`/participants/${row.participantCode}`}>{row.participantCode}</Link> },
         { id: 'level', header: 'Level', width: '120px', cell: (row) => `${row.level}, ${urgencyWords[row.urgency].toLowerCase()}` },
         { id: 'said', header: 'What was said', cell: (row) => row.said },
         { id: 'reported', header: 'Reported', width: '150px', cell: (row) => formatMoment(new Date(row.reportedAt), row.timeZone) },
@@ -34,7 +34,7 @@ export function ReportTable({ caption, rows, now }: { caption: string; rows: rea
           headerHidden: true,
           width: '80px',
           cell: (row) => (
-            <Link className="font-semibold" href={`/safety/${row.id}`} aria-label={`Open the report of ${row.participantCode}`}>
+            <Link className="font-semibold" href={`/safety/${row.id}`} aria-label={`${row.state === 'reviewed' ? 'Open' : 'Review'}: the report of ${row.participantCode}`}>
               {row.state === 'reviewed' ? 'Open' : 'Review'}
             </Link>
           ),

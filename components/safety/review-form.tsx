@@ -21,7 +21,7 @@ export function ReviewForm({ id, version, today, holds }: { id: string; version:
   const end = async ({ outcome: chosen, note, visitOn }: ReviewReportInput) => {
     await review.mutateAsync({ outcome: chosen, note, ...(chosen === 'unscheduled visit' ? { visitOn } : {}) }).then(
       () => {
-        say({ kind: 'fine', word: 'Reviewed.', text: chosen === 'unscheduled visit' ? 'The extra visit stands in the schedule.' : 'The participant’s record carries the outcome.' });
+        say({ kind: 'fine', word: 'Reviewed.', text: chosen === 'unscheduled visit' ? 'The unscheduled visit stands in the schedule.' : 'The participant’s record carries the outcome.' });
         router.refresh();
       },
       () => undefined,
@@ -36,13 +36,13 @@ export function ReviewForm({ id, version, today, holds }: { id: string; version:
         choices={[
           { value: 'no action', label: 'No action' },
           { value: 'advice', label: 'Advice' },
-          { value: 'unscheduled visit', label: 'Extra visit, to measure both arms' },
+          { value: 'unscheduled visit', label: 'Unscheduled visit, to measure both arms' },
           { value: 'adverse event', label: 'Adverse event' },
         ]}
         error={formState.errors.outcome?.message}
         {...register('outcome')}
       />
-      {outcome === 'unscheduled visit' ? <DateField label="Day of the extra visit" min={today} error={formState.errors.visitOn?.message} {...register('visitOn', { setValueAs: (text: string) => text || undefined })} /> : null}
+      {outcome === 'unscheduled visit' ? <DateField label="Day of the unscheduled visit" min={today} error={formState.errors.visitOn?.message} {...register('visitOn', { setValueAs: (text: string) => text || undefined })} /> : null}
       <TextArea label="What was found and agreed" hint="No names." maxLength={1000} error={formState.errors.note?.message} {...register('note')} />
       {holds ? (
         <p className="t-small text-ink-2">Training is held. It is free again with ‘no action’ or ‘advice’; otherwise once both arms were measured.</p>

@@ -43,9 +43,9 @@ export function EnrolForm({ screeningId, today }: { screeningId: string; today: 
   return (
     <form noValidate className="mt-4 grid max-w-xl gap-5" onSubmit={(event) => void enrol(event)}>
       <ErrorSummary problems={listProblems(errors, enrolling.error?.problem ?? null)} />
-      <RadioGroup id="affectedSide" label="Treated side" choices={sides} error={errors.affectedSide?.message} {...register('affectedSide')} />
+      <RadioGroup id="affectedSide" label="Affected side" choices={sides} error={errors.affectedSide?.message} {...register('affectedSide')} />
       <RadioGroup id="dominantSide" label="Dominant hand" choices={[...sides, { value: 'both', label: 'Both alike' }]} error={errors.dominantSide?.message} {...register('dominantSide')} />
-      <DateField id="surgeryOn" label="Date of surgery" hint="The last one on the treated side" max={today} error={errors.surgeryOn?.message} {...register('surgeryOn')} />
+      <DateField id="surgeryOn" label="Date of surgery" hint="The last one on the affected side" max={today} error={errors.surgeryOn?.message} {...register('surgeryOn')} />
       <Select id="surgery" label="Surgery" none="Choose the surgery" choices={surgeries} error={errors.surgery?.message} {...register('surgery')} />
       <Select id="axillaryProcedure" label="Axillary procedure" none="Choose the procedure" choices={axillaryProcedures} error={errors.axillaryProcedure?.message} {...register('axillaryProcedure')} />
       <NumberField id="nodesRemoved" label="Nodes removed" unit="" error={errors.nodesRemoved?.message} {...register('nodesRemoved')} />

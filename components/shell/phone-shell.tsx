@@ -14,7 +14,7 @@ export interface PhoneShellProps {
   back?: { href: string; title: string };
   /** The participant's own two years, 0 to 1. */
   gone: number;
-  /** Five tabs: three in the first row, two in the second, each at least 44 px high. */
+  /** Five tabs, each at least 44 px high. */
   tabs: readonly NavItem[];
   /** Where urgent care is explained. The band is on every screen but those that say it themselves. */
   urgentHref: string;

@@ -18,7 +18,7 @@ export function ButtonExamples() {
       <Button kind="risk">Withdraw consent</Button>
       <Button size="small">Ask again</Button>
       <Button kind="link">Give the reason</Button>
-      <ButtonLink href="#buttons">Record an extra visit</ButtonLink>
+      <ButtonLink href="#buttons">Record an unscheduled visit</ButtonLink>
       <Button kind="primary" size="phone">
         Start session 1
       </Button>

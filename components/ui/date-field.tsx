@@ -1,6 +1,6 @@
 'use client';
 
-import { type ComponentProps, useEffect, useRef, useState } from 'react';
+import { type ComponentProps, useState } from 'react';
 import { Field, type FieldWords } from './field';
 import { formatDate } from './format';
 
@@ -18,10 +18,7 @@ const inFull = (value: string): string => (value === '' ? '' : [formatDate(value
  * read month first or day first; so the day stands beside it with its month in letters.
  */
 export function DateField({ label, hint, error, optional, labelHidden, withTime, id, className, ref, ...rest }: DateFieldProps) {
-  const input = useRef<HTMLInputElement | null>(null);
   const [shown, setShown] = useState('');
-  // Without a list: whoever keeps the value (this form, a library, the browser), what the input holds is what is read.
-  useEffect(() => setShown(input.current?.value ?? ''));
   return (
     <Field {...{ label, hint, error, optional, labelHidden, id, className }}>
       {(joined) => (
@@ -31,10 +28,10 @@ export function DateField({ label, hint, error, optional, labelHidden, withTime,
             {...joined}
             type={withTime ? 'datetime-local' : 'date'}
             ref={(element) => {
-              input.current = element;
-              if (typeof ref === 'function') return ref(element);
-              if (ref) ref.current = element;
-              return undefined;
+              if (typeof ref === 'function') ref(element);
+              else if (ref) ref.current = element;
+              // Whoever keeps the value (the caller, a form library that has just set it, the browser), what the input holds is what is read.
+              if (element) setShown(element.value);
             }}
             onChange={(event) => {
               setShown(event.target.value);

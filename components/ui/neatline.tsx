@@ -26,7 +26,7 @@ export function Neatline({ segments, gone }: NeatlineProps) {
           );
         })}
       </svg>
-      <svg className="neatline-notch" style={{ left: `${(100 * now) / segments}%` }} width="12" height="12" viewBox="0 0 12 12">
+      <svg className="neatline-notch" style={{ left: `clamp(6px, ${(100 * now) / segments}%, calc(100% - 6px))` }} width="12" height="12" viewBox="0 0 12 12">
         <path d="M0.5 0h11l-5.5 11z" fill="var(--needs)" stroke="var(--ground)" strokeWidth="1.5" />
       </svg>
     </div>

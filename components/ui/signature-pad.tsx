@@ -51,8 +51,10 @@ function DrawField({ label, stamp, onChange, error }: SignaturePadProps) {
   const current = useRef('');
   const { id, errorId } = useJoined({ error });
   const point = (event: PointerEvent<SVGSVGElement>) => {
-    const box = event.currentTarget.getBoundingClientRect();
-    return `${(event.clientX - box.left).toFixed(1)} ${(event.clientY - box.top).toFixed(1)}`;
+    const { left, top, width, height } = event.currentTarget.getBoundingClientRect();
+    // The pen may slip over the edge; the drawing ends there.
+    const within = (at: number, most: number) => Math.min(Math.max(at, 0), Math.round(most)).toFixed(1);
+    return `${within(event.clientX - left, width)} ${within(event.clientY - top, height)}`;
   };
   const start = (event: PointerEvent<SVGSVGElement>) => {
     event.currentTarget.setPointerCapture(event.pointerId);

@@ -2,7 +2,7 @@ import type { Work } from '@/lib/work/work';
 
 /**
  * Whether training waits. One place: from a report that asks to hold until its review; after a review that ended in an
- * extra visit or an adverse event, until the next completed limb assessment.
+ * unscheduled visit or an adverse event, until the next completed limb assessment.
  */
 const isHeld = `exists (select from symptom_report r where r.participant_id = participant.id and r.hold_training and (r.state <> 'reviewed'
     or (r.outcome in ('unscheduled visit', 'adverse event')

@@ -23,7 +23,7 @@ export interface ParticipantVisit {
   readonly doneOn: string | null;
   readonly state: 'to come' | 'in progress' | 'complete' | 'missed';
   readonly missedReason: string | null;
-  /** Where the visit lies against its window; null while it has no date, and for an extra visit. */
+  /** Where the visit lies against its window; null while it has no date, and for an unscheduled visit. */
   readonly deltaDays: number | null;
   readonly version: number;
   readonly rvc: number | null;

@@ -27,7 +27,7 @@ export const reviewReportInput = z.strictObject({
   id: z.uuid(),
   outcome: z.enum(['no action', 'advice', 'unscheduled visit', 'adverse event'], { error: 'Choose how the review ends.' }),
   note: z.string().trim().min(3, 'Say what was found and agreed.').max(1000, 'Use at most 1 000 characters.'),
-  /** The day of the extra visit; only with 'unscheduled visit'. */
-  visitOn: calendarDay('Give the day of the extra visit.').optional(),
+  /** The day of the unscheduled visit; only with 'unscheduled visit'. */
+  visitOn: calendarDay('Give the day of the unscheduled visit.').optional(),
 });
 export type ReviewReportInput = z.infer<typeof reviewReportInput>;

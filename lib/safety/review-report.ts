@@ -11,7 +11,7 @@ import { settleHold } from '@/lib/measurement/settle-hold';
 import { viewReport, type ReportView } from './view-report';
 
 /**
- * The review ends in an outcome. An extra visit is added to the schedule at once; the hold on training is settled.
+ * The review ends in an outcome. An unscheduled visit is added to the schedule at once; the hold on training is settled.
  * @throws Refusal 'conflict' when it was reviewed before, 'stale' when somebody else opened it since, 'invalid' without a day for the visit.
  */
 export async function reviewReport(work: Work, { id, outcome, note, visitOn }: ReviewReportInput): Promise<ReportView> {
@@ -19,7 +19,7 @@ export async function reviewReport(work: Work, { id, outcome, note, visitOn }: R
   work.expect(report);
   review(report, { outcome, note, by: work.actor.accountId, at: work.now });
   if (outcome === 'unscheduled visit') {
-    if (!visitOn) throw new Refusal('invalid', 'Give the day of the extra visit.', 'visitOn');
+    if (!visitOn) throw new Refusal('invalid', 'Give the day of the unscheduled visit.', 'visitOn');
     if (visitOn < localDate(work.now, await timeZoneOf(work, report.siteId))) throw new Refusal('invalid', `${plainDate(visitOn)} has passed. Give a day from today on.`, 'visitOn');
     await addUnscheduledVisit(work, { participantId: report.participantId, on: visitOn, why: `Symptom report: ${note}`.slice(0, 300) });
   }

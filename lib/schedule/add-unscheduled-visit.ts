@@ -5,10 +5,10 @@ import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
 import { toVisitView, type VisitView } from './view-visit';
 
-/** Days after its day in which an extra visit is still taken for it. Common practice, no source. */
+/** Days after its day in which an unscheduled visit is still taken for it. Common practice, no source. */
 const graceDays = 7;
 
-/** An extra visit, after a symptom report for one. Its window is the day and the week after it. */
+/** An unscheduled visit, after a symptom report for one. Its window is the day and the week after it. */
 export async function addUnscheduledVisit(work: Work, { participantId, on, why }: { participantId: string; on: string; why: string }): Promise<VisitView> {
   const participant = await work.em.findOne(ParticipantSchema, { id: participantId });
   if (!participant) throw new Refusal('not-found', 'There is no such participant in your reach.');
@@ -19,7 +19,7 @@ export async function addUnscheduledVisit(work: Work, { participantId, on, why }
     siteId: participant.siteId,
     participantId,
     key: 'extra',
-    name: 'Extra visit',
+    name: 'Unscheduled visit',
     targetOn: on,
     opensOn: on,
     closesOn: addDays(on, graceDays),

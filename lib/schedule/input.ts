@@ -15,5 +15,5 @@ export const missVisitInput = z.strictObject({ id: z.uuid(), missedReason: why('
 export const addVisitInput = z.strictObject({
   code: z.string().max(12),
   on: calendarDay('Give the day of the visit.'),
-  why: why('Say what the extra visit is for.'),
+  why: why('Say what the unscheduled visit is for.'),
 });

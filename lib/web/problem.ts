@@ -1,7 +1,7 @@
 import { log } from '@/lib/log';
 import { Refusal, type RefusalCode } from '@/lib/work/refusal';
 import { unkeepable } from '@/lib/work/unkeepable';
-import '@/lib/work/zod-words';
+import '@/instruments/schema-words';
 import { z } from 'zod';
 
 /** The one map from refusals to HTTP. */

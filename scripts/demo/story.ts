@@ -17,7 +17,7 @@ export interface Cast {
   readonly breaks?: readonly (readonly [week: number, weeks: number])[];
   /** A load taken too fast: week, kilograms above the week before. */
   readonly jump?: { readonly week: number; readonly extraKg: number };
-  /** Days of scripted reports of heaviness that ended in an extra visit. */
+  /** Days of scripted reports of heaviness that ended in an unscheduled visit. */
   readonly reports?: readonly { readonly day: number; readonly signs: readonly ReportedSign[]; readonly extraVisitDay: number }[];
 }
 

@@ -104,8 +104,8 @@ function nextSlot(plan: Plan, { site }: Person, slots: readonly number[]): Visit
   return { kind: 'booked', on: free === undefined ? addDays(today, 1) : today, minutes: free ?? slots[0] ?? 840 };
 }
 
-/** An extra visit after a report. */
+/** An unscheduled visit after a report. */
 export const extraVisit = (ids: Draw, on: LocalDate, minutes: number): PlannedVisit => ({
-  id: ids.uuid(), key: 'extra', name: 'Extra visit', targetOn: on, opensOn: on, closesOn: addDays(on, 7), questionnaires: [], unscheduledReason: 'Change in the arm reported',
+  id: ids.uuid(), key: 'extra', name: 'Unscheduled visit', targetOn: on, opensOn: on, closesOn: addDays(on, 7), questionnaires: [], unscheduledReason: 'Change in the arm reported',
   outcome: { kind: 'done', on, minutes },
 });

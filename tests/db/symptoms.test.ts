@@ -181,7 +181,7 @@ describe('training', () => {
     expect(await isHeld(participant)).toBe(false);
   });
 
-  test('an extra visit stands in the schedule at once, on its day and the week after', async () => {
+  test('an unscheduled visit stands in the schedule at once, on its day and the week after', async () => {
     const participant = await person();
     const { id } = await report(participant.actor);
     await review(scene.coordinator, id, { outcome: 'unscheduled visit', visitOn: '2027-03-08', note: 'Measure both arms.' });
@@ -190,7 +190,7 @@ describe('training', () => {
     ]);
   });
 
-  test('an extra visit without a day, or on a day gone by, is refused and nothing is reviewed', async () => {
+  test('an unscheduled visit without a day, or on a day gone by, is refused and nothing is reviewed', async () => {
     const { id } = await report((await person()).actor);
     await expect(review(scene.coordinator, id, { outcome: 'unscheduled visit' })).rejects.toMatchObject({ code: 'invalid', field: 'visitOn' });
     await expect(review(scene.coordinator, id, { outcome: 'unscheduled visit', visitOn: '2027-03-03' })).rejects.toMatchObject({ code: 'invalid', field: 'visitOn' });

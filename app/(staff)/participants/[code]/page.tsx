@@ -1,6 +1,6 @@
 import type { Metadata } from 'next';
 import { TideChart } from '@/components/chart/tide-chart';
-import { ExtraVisit } from '@/components/participants/extra-visit';
+import { AddVisit } from '@/components/participants/add-visit';
 import { ParticipantFacts } from '@/components/participants/participant-facts';
 import { ParticipantMargin } from '@/components/participants/participant-margin';
 import { armStanding, tideFinding, tideOf } from '@/components/participants/tide-of';
@@ -35,7 +35,7 @@ export default async function ParticipantPage({ params }: Props) {
         beside={`${state === 'enrolled' ? `Month ${month} in the study` : `${state} in month ${month}`}, ${armStanding(view)}`}
         actions={
           <>
-            {state === 'enrolled' && may(role, 'visit.add') ? <ExtraVisit code={code} today={today} /> : null}
+            {state === 'enrolled' && may(role, 'visit.add') ? <AddVisit code={code} today={today} /> : null}
             {running && may(role, 'visit.begin') ? (
               <ButtonLink kind="primary" href={`/participants/${code}/visits/${running.id}`}>
                 Continue {running.name}

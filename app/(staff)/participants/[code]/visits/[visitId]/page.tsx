@@ -65,7 +65,7 @@ export default async function Page({ params }: Props) {
 function ledeOf({ visit, assessment, underWay, assessorLabel, participant }: ReviewView): string {
   const window = `window ${formatDateRange(visit.opensOn, visit.closesOn)}`;
   const booked = visit.bookedAt ? `, booked for ${formatMoment(new Date(visit.bookedAt), participant.timeZone)}` : '';
-  const why = visit.unscheduledReason ? ` Extra visit: ${visit.unscheduledReason}` : '';
+  const why = visit.unscheduledReason ? ` Unscheduled visit: ${visit.unscheduledReason}` : '';
   if (visit.state === 'missed') return `Missed: ${visit.missedReason ?? ''}. The ${window}.`;
   if (!visit.doneOn) return `To come, ${window}${booked}.${why}`;
   const entered = assessment && assessorLabel ? ` Entered by ${assessorLabel}.` : underWay ? ` Being measured: ${countOf(underWay.passes, 'pass', 'passes')} of four saved.` : '';

@@ -17,8 +17,8 @@ import { DateField } from '../ui/date-field';
 const input = addVisitInput.omit({ code: true });
 type Typed = { on: string; why: string };
 
-/** Adds an extra visit, with its day and what it is for, and opens it. */
-export function ExtraVisit({ code, today }: { code: string; today: string }) {
+/** Adds an unscheduled visit, with its day and what it is for, and opens it. */
+export function AddVisit({ code, today }: { code: string; today: string }) {
   const [open, setOpen] = useState(false);
   const router = useRouter();
   const { register, handleSubmit, setError, formState } = useForm<Typed>({ resolver: zodResolver(input), defaultValues: { on: today, why: '' } });
@@ -31,21 +31,21 @@ export function ExtraVisit({ code, today }: { code: string; today: string }) {
   });
   return (
     <>
-      <Button onClick={() => setOpen(true)}>Record an extra visit</Button>
+      <Button onClick={() => setOpen(true)}>Record an unscheduled visit</Button>
       <Dialog
         open={open}
         onClose={() => setOpen(false)}
-        title={`What is the extra visit of ${code} for?`}
+        title={`What is the unscheduled visit of ${code} for?`}
         actions={
           <>
-            <Button kind="primary" type="submit" form="extra-visit" atWork={adding.isPending && 'Saving'}>
+            <Button kind="primary" type="submit" form="add-visit" atWork={adding.isPending && 'Saving'}>
               Record the visit
             </Button>
             <Button onClick={() => setOpen(false)}>Leave it</Button>
           </>
         }
       >
-        <form id="extra-visit" noValidate className="grid gap-4" onSubmit={(event) => void add(event)}>
+        <form id="add-visit" noValidate className="grid gap-4" onSubmit={(event) => void add(event)}>
           <ErrorSummary problems={listProblems(formState.errors, adding.error?.problem ?? null)} />
           <DateField id="on" label="Day of the visit" error={formState.errors.on?.message} {...register('on')} />
           <TextArea id="why" label="What it is for" hint="Such as: arm fuller since Thursday. No names." error={formState.errors.why?.message} {...register('why')} />
