@@ -1,6 +1,10 @@
 import { Migration } from '@mikro-orm/migrations';
 import { guard } from './sql';
 
+/** A drawn signature as it is kept: moves and lines of numbers that a page can hold. */
+const point = String.raw`\d{1,4}(?:\.\d)? \d{1,4}(?:\.\d)?`;
+const drawing = String.raw`^\{"path":"(?:M${point}(?:L${point})*)+","width":\d{2,4},"height":\d{2,4}\}$`;
+
 /** The protocol as data, screening, identity, consent. */
 export class ProtocolConsent extends Migration {
   override up(): void {
@@ -41,7 +45,7 @@ export class ProtocolConsent extends Migration {
     this.addSql(`create table consent_signature (
       id uuid primary key default gen_random_uuid(), consent_id uuid not null references consent, screening_id uuid not null references screening, site_id uuid not null references site,
       participant_id uuid, who text not null check (who in ('participant', 'staff')), means text not null check (means in ('typed', 'drawn', 'paper')),
-      name text not null, drawing text check (length(drawing) < 60000), signed_at timestamptz not null, content_sha256 text not null, unique (consent_id, who),
+      name text not null, drawing text check (length(drawing) < 60000 and drawing ~ '${drawing}'), signed_at timestamptz not null, content_sha256 text not null, unique (consent_id, who),
       -- Whose account signed second. A participant signs without one.
       account_id uuid references account, check ((who = 'staff') = (account_id is not null)))`);
     this.addSql(`create table participant_identity (

@@ -1,6 +1,7 @@
 'use client';
 
 import { useState } from 'react';
+import { signatureMade } from '@/lib/consent/input';
 import type { ConsentForm } from '@/lib/protocol/document';
 import type { ProblemDetails } from '../api/send';
 import { Checkbox } from '../ui/checkbox';
@@ -19,16 +20,22 @@ const yesNo = [
   { value: 'no', label: 'No' },
 ] as const;
 
+const notSigned = 'Sign with a finger, or type your name.';
+
+/** What is wrong with a signature, in the words of the rule that the server asks too. */
+const wrongIn = (signature: SignatureMade | null): string | null => (signature ? (signatureMade.safeParse(signature).error?.issues[0]?.message ?? null) : notSigned);
+
 /** What is agreed, each optional permission with its own yes or no and nothing preset, and the signature. */
 export function useAgreement(form: ConsentForm) {
   const [ticked, setTicked] = useState<ReadonlySet<string>>(new Set());
   const [permissions, setPermissions] = useState<Readonly<Record<string, 'yes' | 'no'>>>({});
   const [signature, setSignature] = useState<SignatureMade | null>(null);
   const [asked, setAsked] = useState(false);
+  const unsigned = wrongIn(signature);
   const open: Problem[] = [
     ...form.statements.filter(({ key }) => !ticked.has(key)).map(({ key, text }) => ({ fieldId: `statement-${key}`, sentence: `Tick this if you agree: ${text}` })),
     ...form.permissions.filter(({ key }) => !permissions[key]).map(({ key, text }) => ({ fieldId: `permission-${key}`, sentence: `Answer yes or no: ${text}` })),
-    ...(signature ? [] : [{ fieldId: 'signature', sentence: 'Sign with a finger, or type your name.' }]),
+    ...(unsigned ? [{ fieldId: 'signature', sentence: unsigned }] : []),
   ];
   /** The agreement once nothing is open; before that it says what is, and returns null. */
   const finish = (): Agreement | null => {

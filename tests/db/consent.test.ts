@@ -63,7 +63,7 @@ describe('on the clinic’s tablet', () => {
   test('a drawn signature carries the printed name of the record', async () => {
     const { id, screening } = await start('tablet');
     await readAll(screening.atTablet, id);
-    await sign(screening.atTablet, id, { signature: { kind: 'drawn', path: 'M1.0 1.0L20.0 20.0', width: 300, height: 120 } });
+    await sign(screening.atTablet, id, { signature: { kind: 'drawn', path: 'M10.0 60.0L80.0 20.0L150.5 90.0', width: 300, height: 120 } });
     const view = await withWork(scene.coordinator, 'consent.view', (work) => viewConsent(work, { id }));
     expect(view.signatures).toMatchObject([{ means: 'drawn', name: screening.name }]);
   });
@@ -214,7 +214,7 @@ describe('the participant’s copy', () => {
   test('is made once, kept, and mailed as a whole PDF; only the own site and the trail know of it', async () => {
     const { id, screening } = await start('tablet');
     await readAll(screening.atTablet, id);
-    await sign(screening.atTablet, id, { signature: { kind: 'drawn', path: 'M1.0 1.0L20.0 20.0', width: 300, height: 120 } });
+    await sign(screening.atTablet, id, { signature: { kind: 'drawn', path: 'M10.0 60.0L80.0 20.0L150.5 90.0', width: 300, height: 120 } });
     await expect(withWork(scene.coordinator, 'consent.file', (work) => fetchConsentFile(work, { id, which: 'copy' }))).rejects.toMatchObject({ code: 'not-found' });
     await countersign(scene.coordinator, id);
     const sent: Posting[] = [];
@@ -253,6 +253,16 @@ describe('the data base', () => {
     await expect(write('staff', 'Somebody Else', scene.coordinator.accountId)).rejects.toMatchObject({ code: '42501' });
     await expect(write('staff', staffName(scene.coordinator), null)).rejects.toMatchObject({ code: '42501' });
     await expect(write('staff', staffName(scene.coordinator), scene.coordinator.accountId)).resolves.toBeDefined();
+  });
+
+  test('keeps no drawing that no page can hold', async () => {
+    const screening = await givenScreening(scene.site, scene.protocol);
+    const { id } = await givenConsent(screening, scene.protocol, scene.coordinator, 'reading');
+    const keep = (drawing: object) =>
+      asOwner(`insert into consent_signature (consent_id, screening_id, site_id, who, means, name, drawing, signed_at, content_sha256) values ($1, $2, $3, 'participant', 'drawn', 'Ada', $4, now(), '0')`, [id, screening.id, scene.site.id, JSON.stringify(drawing)]);
+    for (const path of [`M1 1L${'9'.repeat(400)}1 1`, 'M1 1L-5 4', 'M1 1"', ''])
+      await expect(keep({ path, width: 300, height: 120 })).rejects.toMatchObject({ code: '23514' });
+    await expect(keep({ path: 'M1 1L200.5 80', width: 300, height: 120 })).resolves.toEqual([]);
   });
 
   test('holds one open consent for a screening', async () => {
