@@ -1,4 +1,5 @@
 import { LimbAssessmentSchema } from '@/entities/limb-assessment';
+import { may } from '@/lib/auth/policy';
 import { findVisit } from '@/lib/schedule/view-visit';
 import type { Work } from '@/lib/work/work';
 import { trialsOf } from './find-assessment';
@@ -10,5 +11,7 @@ export async function viewAssessment(work: Work, { visitId }: { visitId: string 
   await findVisit(work, visitId);
   const assessment = await work.em.findOne(LimbAssessmentSchema, { visitId });
   if (!assessment) return null;
+  // What is still being taken is the site's alone; the others see what was saved.
+  if (assessment.state === 'open' && !may(work.actor.role, 'query.answer')) return null;
   return assessment.state === 'complete' ? viewComplete(work, assessment) : viewOpen(assessment, await trialsOf(work, assessment.id));
 }

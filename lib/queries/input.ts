@@ -10,18 +10,25 @@ export const fieldTargetInput = z.strictObject({
 });
 
 /** A query asks; it never names the value it expects (it would lead the answer). */
-const leads = /\b(chang|correct|alter|set)\w*\b[^.?!]{0,20}\bto\b\s*\d/i;
+const leading = [
+  /\b(chang|correct|alter|set|amend|adjust)\w*\b[^.?!\d]{0,20}\b(to|as|into)\b[^.?!\d]{0,12}\d/i,
+  /\b(should|ought to|must|has to|needs? to|supposed to|expected to|meant to)\b[^.?!\d]{0,30}\b(be|been|read|say|show|give|have)\b[^.?!\d]{0,20}\d/i,
+  /\bd(o|id) you mean\b[^.?!\d]{0,20}\d/i,
+  /\bplease\s+(enter|type|put|write|record|make it)\b[^.?!\d]{0,20}\d/i,
+];
+const leads = (text: string): boolean => leading.some((pattern) => pattern.test(text));
+const question = (sentence: string) => words(sentence).refine((text) => !leads(text), 'Ask what was seen; do not name the value you expect.');
 
 export const raiseQueryInput = z.strictObject({
   target: fieldTargetInput,
-  question: words('Write the question.').refine((text) => !leads.test(text), 'Ask what was seen; do not name the value you expect.'),
+  question: question('Write the question.'),
 });
 export type RaiseQueryInput = z.output<typeof raiseQueryInput>;
 
 export const answerQueryInput = z.strictObject({ id: z.uuid(), answer: words('Write the answer.') });
 export const closeQueryInput = z.strictObject({ id: z.uuid(), note: z.string().trim().max(1000).optional() });
 export const cancelQueryInput = z.strictObject({ id: z.uuid(), reason: words('Say why the query is withdrawn.') });
-export const askAgainInput = z.strictObject({ id: z.uuid(), question: words('Write what is still open.') });
+export const askAgainInput = z.strictObject({ id: z.uuid(), question: question('Write what is still open.') });
 export const remindInput = z.strictObject({ id: z.uuid() });
 
 export const closeQueriesInput = z.strictObject({

@@ -1,3 +1,4 @@
+import { may } from '@/lib/auth/policy';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
 
@@ -68,6 +69,14 @@ async function labelOf(work: Work, { table, field }: FieldTarget, image: Record<
   return Object.hasOwn(labels[table], field) ? (labels[table][field] ?? null) : null;
 }
 
+async function isStillOpen(work: Work, table: TargetTable, image: Record<string, unknown>): Promise<boolean> {
+  if (table === 'limb_assessment') return image['state'] === 'open';
+  if (table === 'questionnaire_response') return image['state'] === 'in progress';
+  if (table !== 'limb_trial') return false;
+  const [open] = await work.sql("select id from limb_assessment where id = ? and state = 'open'", [image['assessment_id']]);
+  return open !== undefined;
+}
+
 const isDictionary = (part: unknown): part is Record<string, unknown> => typeof part === 'object' && part !== null;
 
 /**
@@ -81,6 +90,8 @@ export async function findTarget(work: Work, target: FieldTarget): Promise<Found
     `select to_jsonb(t) as image, ${visitOf[target.table]} as visit_id from ${target.table} t where t.id = ?`,
     [target.id],
   );
+  // What is still being taken is the site's alone: nobody else asks about it, marks it or reads its history.
+  if (row && (await isStillOpen(work, target.table, row.image)) && !may(work.actor.role, 'query.answer')) throw absent;
   const label = row && (await labelOf(work, target, row.image));
   if (!row || !label) throw absent;
   const { image, visit_id: visitId } = row;

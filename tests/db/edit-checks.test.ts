@@ -13,10 +13,11 @@ import { listQueriesInput } from '@/lib/queries/input';
 import { listQueries } from '@/lib/queries/list-queries';
 import { raiseQuery } from '@/lib/queries/raise-query';
 import { viewQuery, type QueryView } from '@/lib/queries/view-query';
+import { queryRaised } from '@/lib/mail/letters/query-raised';
 import { Refusal } from '@/lib/work/refusal';
 import { withWork } from '@/lib/work/with-work';
 import type { FieldTarget } from '@/lib/queries/targets';
-import { givenParticipant, givenScene, givenStaff, type GivenParticipant, type GivenScene } from '../given';
+import { asOwner, givenParticipant, givenScene, givenStaff, type GivenParticipant, type GivenScene } from '../given';
 
 let scene: GivenScene;
 let assessor: Actor;
@@ -193,6 +194,8 @@ describe('a correction', () => {
     expect((await again(second)).findings.map(({ check, reason }) => [check, reason])).toEqual([['weight-change.range', null]]);
     const { rows } = await withWork(monitor, 'query.list', (work) => listQueries(work, listQueriesInput.parse({ pageSize: 100 })), { now });
     const raised = rows.filter(({ participantCode }) => participantCode === who.code);
+    const [letter] = await asOwner<{ letter: unknown }>(`select data -> 'data' as letter from pgboss.job where data::text like '%' || $1 || '%'`, [raised[0]?.id]);
+    expect(queryRaised.renderRaw(letter?.letter).text).toMatch(/^An edit check has raised a data query on /);
     expect(raised.map(({ fieldLabel, origin, visitId }) => [fieldLabel, origin, visitId])).toEqual([['Body weight', 'check', second.visitId]]);
   });
 

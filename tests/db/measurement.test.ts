@@ -77,6 +77,20 @@ describe('a limb assessment', () => {
     expect(JSON.stringify(open)).not.toMatch(/volume|rvc|earlier|verdict|baseline|interLimb/i);
   });
 
+  test('is the site’s alone while it is being taken: a monitor reads, marks and asks only about what was saved', async () => {
+    const who = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
+    const open = await measure(who, 'baseline', { left: vol03, right: vol03 });
+    const target = { table: 'limb_assessment', id: open.id, field: 'body_weight_g' } as const;
+    const history = (actor: Actor) => withWork(actor, 'history.view', (work) => fieldHistory(work, target));
+    expect((await history(assessor)).map(({ value }) => value)).toEqual([71_400]);
+    await expect(history(monitor)).rejects.toMatchObject({ code: 'not-found' });
+    await expect(withWork(monitor, 'verification.mark', (work) => markVerified(work, { targets: [{ ...target, value: 71_400 }] }))).rejects.toMatchObject({ code: 'not-found' });
+    expect(await withWork(monitor, 'assessment.view', (work) => viewAssessment(work, { visitId: open.visitId }))).toBeNull();
+    await complete(open);
+    expect((await history(monitor)).map(({ value }) => value)).toEqual([71_400]);
+    expect(await withWork(monitor, 'assessment.view', (work) => viewAssessment(work, { visitId: open.visitId }))).toMatchObject({ state: 'complete' });
+  });
+
   test('corrects a value with a reason: results follow, the mark falls, the history keeps the old value', async () => {
     const who = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
     const saved = await complete(await measure(who, 'baseline', { left: vol03, right: vol03 }));

@@ -6,7 +6,7 @@ import { askAgain } from '@/lib/queries/ask-again';
 import { cancelQuery } from '@/lib/queries/cancel-query';
 import { closeQueries } from '@/lib/queries/close-queries';
 import { closeQuery } from '@/lib/queries/close-query';
-import { listQueriesInput, raiseQueryInput } from '@/lib/queries/input';
+import { askAgainInput, listQueriesInput, raiseQueryInput } from '@/lib/queries/input';
 import { listQueries } from '@/lib/queries/list-queries';
 import { raiseQuery } from '@/lib/queries/raise-query';
 import { remind } from '@/lib/queries/remind';
@@ -115,6 +115,9 @@ describe('a data query', () => {
   test('asks, and never names the value it expects', () => {
     const parse = (question: string) => raiseQueryInput.safeParse({ target: { table: 'visit', id: randomUUID(), field: 'done_on' }, question });
     expect(parse('Should this be corrected to 71.4?').success).toBe(false);
+    for (const leading of ['This should read 70.0 kg.', 'Should it not be 25.4?', 'The girth must be 25.4 cm', 'Was it meant to say 24?', 'Did you mean 71.4?', 'Please enter 71.4.', 'Please change it to about 70']) expect([leading, parse(leading).success]).toEqual([leading, false]);
+    for (const open of ['The worksheet shows 25.4 here. Please look again.', 'Was 71.4 kg read with shoes?', 'Should the arm be measured again?', 'Which of the 2 sheets is right?']) expect([open, parse(open).success]).toEqual([open, true]);
+    expect(askAgainInput.safeParse({ id: randomUUID(), question: 'It should be 70.' }).success).toBe(false);
     expect(parse('   ').success).toBe(false);
     expect(parse('What does the scale sheet say?').success).toBe(true);
   });

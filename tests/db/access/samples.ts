@@ -12,6 +12,7 @@ export interface Sample {
 
 const girths = Array.from({ length: 11 }, (_, level) => 160 + level * 13);
 const weight = (s: Subject) => ({ table: 'limb_assessment', id: s.assessmentId, field: 'body_weight_g' });
+const visitDay = (s: Subject) => ({ table: 'visit', id: s.visitId, field: 'done_on' });
 const byId = (pick: (s: Subject) => string, body?: unknown) => (s: Subject): Sample => ({ params: { id: pick(s) }, ...(body === undefined ? {} : { body }) });
 const list = (): Sample => ({ isList: true });
 
@@ -45,7 +46,7 @@ export const samples: Readonly<Record<string, (s: Subject) => Sample>> = {
   'POST /api/extracts/{id}/retry': (s) => ({ isList: true, params: { id: s.extractId }, body: {} }),
   'GET /api/flags': list,
   'POST /api/flags/{id}/seen': byId((s) => s.flagId, {}),
-  'GET /api/history': (s) => ({ query: weight(s) }),
+  'GET /api/history': (s) => ({ query: visitDay(s) }),
   'POST /api/invitations': (s) => ({ body: { participantId: s.participant.id } }),
   'GET /api/lifting': list,
   'GET /api/participants': () => ({ isList: true, query: { pageSize: '100' } }),
@@ -53,7 +54,7 @@ export const samples: Readonly<Record<string, (s: Subject) => Sample>> = {
   'POST /api/participants/{code}/identity': (s) => ({ params: { code: s.participant.code }, body: {} }),
   'GET /api/people': list,
   'GET /api/queries': () => ({ isList: true, query: { pageSize: '100' } }),
-  'POST /api/queries': (s) => ({ body: { target: weight(s), question: 'Was the scale level?' } }),
+  'POST /api/queries': (s) => ({ body: { target: visitDay(s), question: 'Which day does the diary give?' } }),
   'POST /api/queries/close': (s) => ({ body: { ids: [s.queryId], reason: 'Answered.' } }),
   'POST /api/queries/{id}/answer': byId((s) => s.queryId, { answer: 'It was.' }),
   'POST /api/queries/{id}/ask-again': byId((s) => s.queryId, { question: 'And the shoes?' }),
@@ -85,7 +86,7 @@ export const samples: Readonly<Record<string, (s: Subject) => Sample>> = {
   'GET /api/training': list,
   'GET /api/today': list,
   'POST /api/training': () => ({ isList: true, body: { clientKey: randomUUID(), on: '2026-11-03', armCheck: 'the same', soreness: 'no', effort: null, note: null, sets: [{ exercise: 'chest-press', equipment: 'dumbbell', basis: 'per hand', side: 'both', typed: 1, unit: 'kg', repetitions: 10, setCount: 2, effort: null, alreadyLifted: false }] } }),
-  'POST /api/verifications': (s) => ({ body: { targets: [{ ...weight(s), value: null }] } }),
+  'POST /api/verifications': (s) => ({ body: { targets: [{ ...visitDay(s), value: null }] } }),
   'POST /api/visits': (s) => ({ body: { code: s.participant.code, on: '2026-12-20', why: 'After a report.' } }),
   'GET /api/visits/{id}/assessment': byId((s) => s.visitId),
   'POST /api/visits/{id}/assessment': byId((s) => s.laterVisitId, {}),
