@@ -2,6 +2,7 @@ import '@/components/phone/phone.css';
 import type { ReactNode } from 'react';
 import { redirect } from 'next/navigation';
 import { AccountMenu } from '@/components/account/account-menu';
+import { ClearUnsent } from '@/components/account/clear-unsent';
 import { Providers } from '@/components/api/providers';
 import { ParticipantFrame } from '@/components/phone/frame';
 import { viewOwnShell } from '@/lib/training/view-own-shell';
@@ -10,7 +11,8 @@ import { loadPage, requireSession } from '@/lib/web/session';
 /** Every participant page: who it is, how much of two years is gone, what waits. */
 export default async function ParticipantLayout({ children }: { children: ReactNode }) {
   const session = await requireSession();
-  if (session.actor.role !== 'participant') redirect('/');
+  const { participantId } = session.actor;
+  if (session.actor.role !== 'participant' || participantId === null) redirect('/');
   const { code, site, gone, questionsDue } = await loadPage('week.view', viewOwnShell);
   const footer = (
     <>
@@ -24,7 +26,8 @@ export default async function ParticipantLayout({ children }: { children: ReactN
   );
   return (
     <Providers>
-      <ParticipantFrame study={session.studyName} code={code} gone={gone} questionsDue={questionsDue} footer={footer}>
+      <ClearUnsent owner={participantId} />
+      <ParticipantFrame study={session.studyName} code={code} participantId={participantId} gone={gone} questionsDue={questionsDue} footer={footer}>
         {children}
       </ParticipantFrame>
     </Providers>

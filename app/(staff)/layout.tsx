@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { redirect } from 'next/navigation';
 import { AccountMenu } from '@/components/account/account-menu';
+import { ClearUnsent } from '@/components/account/clear-unsent';
 import { Providers } from '@/components/api/providers';
 import { StaffShell } from '@/components/shell/staff-shell';
 import { formatCount, formatNearDate, formatTime } from '@/components/ui/format';
@@ -39,6 +40,7 @@ export default async function StaffLayout({ children }: { children: ReactNode })
   ];
   return (
     <Providers>
+      <ClearUnsent owner={null} />
       <StaffShell
         homeHref="/"
         study={studyName}

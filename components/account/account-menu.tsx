@@ -3,7 +3,10 @@ import { signOut } from 'next-auth/react';
 import { useRouter } from 'next/navigation';
 import { useId, useState } from 'react';
 import { ProblemError, send } from '../api/send';
+import { sweepUnsent } from '../phone/unsent';
+import { deviceShelf } from '../phone/unsent-shelf';
 import { Button } from '../ui/button';
+import { Dialog } from '../ui/dialog';
 import { useToast } from '../ui/toast';
 
 export interface HeldRole {
@@ -18,6 +21,7 @@ export function AccountMenu({ current, grants }: { current: string; grants: read
   const router = useRouter();
   const { say } = useToast();
   const [leaving, setLeaving] = useState(false);
+  const [asksFirst, setAsksFirst] = useState(false);
   const fieldId = useId();
   const choose = async (grantId: string) => {
     try {
@@ -32,8 +36,14 @@ export function AccountMenu({ current, grants }: { current: string; grants: read
       });
     }
   };
-  const leave = async () => {
+  /** What is unsent on this device goes with the person: asked first, because it is lost. */
+  const leave = async (isSure: boolean) => {
+    // The way out never waits on the device: where it offers no shelf, nothing is on it.
+    const unsent = await deviceShelf.all().catch(() => []);
+    if (!isSure && unsent.length > 0) return setAsksFirst(true);
+    setAsksFirst(false);
     setLeaving(true);
+    if (unsent.length > 0) await sweepUnsent(deviceShelf, null, new Date()).catch(() => []);
     await signOut({ callbackUrl: '/sign-in' });
   };
   return (
@@ -52,9 +62,24 @@ export function AccountMenu({ current, grants }: { current: string; grants: read
           </select>
         </>
       ) : null}
-      <Button kind="link" atWork={leaving && 'Signing out'} onClick={() => void leave()}>
+      <Button kind="link" atWork={leaving && 'Signing out'} onClick={() => void leave(false)}>
         Sign out
       </Button>
+      <Dialog
+        open={asksFirst}
+        onClose={() => setAsksFirst(false)}
+        title="Something is not sent yet"
+        actions={
+          <>
+            <Button kind="primary" onClick={() => setAsksFirst(false)}>
+              Stay signed in
+            </Button>
+            <Button onClick={() => void leave(true)}>Remove it and sign out</Button>
+          </>
+        }
+      >
+        <p>What you typed is kept on this phone until it is sent. Signing out removes it, because somebody else may use the phone.</p>
+      </Dialog>
     </div>
   );
 }

@@ -2,10 +2,13 @@
 import { usePathname } from 'next/navigation';
 import { createContext, useContext, type ReactNode } from 'react';
 import { PhoneShell, type PhoneShellProps } from '../shell/phone-shell';
+import { UnsentLine } from './unsent-line';
 
 export interface FrameFacts {
   readonly study: string;
   readonly code: string;
+  /** Whose phone this is now: what is kept on it is kept under this. */
+  readonly participantId: string;
   /** The participant's own two years, 0 to 1. */
   readonly gone: number;
   readonly questionsDue: number;
@@ -27,7 +30,7 @@ const isTask = (path: string): boolean => path === '/log' || path === '/report' 
 /** Round every participant page: the tabs, or nothing where a task brings its own head and foot. */
 export function ParticipantFrame({ footer, children, ...facts }: FrameFacts & { footer: ReactNode; children: ReactNode }) {
   const path = usePathname();
-  const { study, code, gone, questionsDue } = facts;
+  const { study, code, participantId, gone, questionsDue } = facts;
   if (isTask(path)) return <Facts value={facts}>{children}</Facts>;
   return (
     <PhoneShell
@@ -38,12 +41,20 @@ export function ParticipantFrame({ footer, children, ...facts }: FrameFacts & { 
       tabs={tabs.map((tab) => ({ ...tab, current: path === tab.href, ...(tab.href === '/questions' ? { count: questionsDue } : {}) }))}
       footer={footer}
     >
+      <UnsentLine key={path} owner={participantId} />
       {children}
     </PhoneShell>
   );
 }
 
 export type TaskFrameProps = Pick<PhoneShellProps, 'right' | 'action' | 'hideCaution' | 'children'> & { back: { href: string; title: string } };
+
+/** Who works here. */
+export function useParticipantId(): string {
+  const facts = useContext(Facts);
+  if (!facts) throw new Error('A participant’s page needs a ParticipantFrame above it.');
+  return facts.participantId;
+}
 
 /** Head and foot of one step of a task. */
 export function TaskFrame(props: TaskFrameProps) {

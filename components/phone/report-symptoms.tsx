@@ -11,10 +11,12 @@ import { DateField } from '../ui/date-field';
 import { RadioGroup } from '../ui/radio-group';
 import { Stepper } from '../ui/stepper';
 import { TextArea } from '../ui/text-area';
-import { TaskFrame } from './frame';
+import { TaskFrame, useParticipantId } from './frame';
 import { NotSent } from './not-sent';
 import { SentReportWords } from './sent-report';
+import { TakenUp } from './unsent-line';
 import { useKeepOpen, useSending } from './use-sending';
+import { useKeepUnsent, useLeftUnsent, type Left } from './use-unsent';
 
 export interface ReportSymptomsProps {
   today: string;
@@ -40,21 +42,41 @@ const answersOf = ({ signs, lasted, sore, soreDays }: Said) => ({
   soreness: sore === null || sore === 'no' ? null : { days: soreDays, onlyTrainedMuscles: sore === 'trained' },
 });
 
+const toInput = (said: Said, clientKey: string) => ({ clientKey, noticedOn: said.noticedOn, ...answersOf(said), note: said.note.trim() || null });
+
+/** What is kept on the phone of a report that is not sent. */
+interface KeptReport {
+  readonly said: Said;
+  readonly step: 'urgent' | 'more';
+  /** It was being sent when the page went. */
+  readonly isPressed: boolean;
+}
+
 /** A change in the arm, at any hour: what must not wait first, its advice at once and before anything is sent. */
-export function ReportSymptoms({ today, site }: ReportSymptomsProps) {
-  const [clientKey] = useState(() => crypto.randomUUID());
-  const [said, setSaid] = useState<Said>({ signs: [], lasted: null, sore: null, soreDays: 1, noticedOn: today, note: '' });
-  const [step, setStep] = useState<'urgent' | 'more' | 'sent'>('urgent');
+export function ReportSymptoms(props: ReportSymptomsProps) {
+  const owner = useParticipantId();
+  const { form, ...left } = useLeftUnsent<KeptReport>(owner, 'report');
+  return <ReportSteps key={form} {...props} owner={owner} left={left} />;
+}
+
+function ReportSteps({ today, site, owner, left: { found, isRead, forget } }: ReportSymptomsProps & { owner: string; left: Omit<Left<KeptReport>, 'form'> }) {
+  const [clientKey] = useState(() => found?.key ?? crypto.randomUUID());
+  const [said, setSaid] = useState<Said>(found?.value.said ?? { signs: [], lasted: null, sore: null, soreDays: 1, noticedOn: today, note: '' });
+  const [step, setStep] = useState<'urgent' | 'more' | 'sent'>(found?.value.step ?? 'urgent');
   const [sent, setSent] = useState<SentReport | null>(null);
   const [missing, setMissing] = useState<string | null>(null);
-  const sending = useSending<SentReport>('/api/symptoms', clientKey, (report) => {
+  const arrived = (report: SentReport) => {
     setSent(report);
     setStep('sent');
     window.scrollTo(0, 0);
-  });
+  };
+  const sending = useSending<SentReport>('/api/symptoms', clientKey, arrived, found?.value.isPressed ? toInput(said, clientKey) : null);
   const verdict = judgeSymptomReport(answersOf(said));
   const isUrgent = verdict !== null && (verdict.urgency === 'emergency now' || verdict.urgency === 'same-day care');
-  useKeepOpen(step !== 'sent' && said.signs.length > 0);
+  const isTyped = step !== 'sent' && (said.signs.length > 0 || said.sore !== null || said.note !== '');
+  const value: KeptReport | null = isTyped ? { said, step, isPressed: sending.isWaiting || sending.atWork } : null;
+  const isKept = useKeepUnsent({ owner, kind: 'report', key: clientKey, value, isRead });
+  useKeepOpen(isTyped && !isKept);
 
   const tick = (code: ReportedSign, on: boolean) => setSaid({ ...said, signs: on ? [...said.signs, code] : said.signs.filter((sign) => sign !== code) });
   const more = () => {
@@ -64,9 +86,10 @@ export function ReportSymptoms({ today, site }: ReportSymptomsProps) {
   const submit = () => {
     if (verdict === null) return setMissing('Choose at least one thing that you notice, or say that you are sore.');
     setMissing(null);
-    void sending.start({ clientKey, noticedOn: said.noticedOn, ...answersOf(said), note: said.note.trim() || null });
+    void sending.start(toInput(said, clientKey));
   };
   const back = { href: '/week', title: 'Tell us of a change' };
+  const takenUp = found ? <TakenUp onForget={forget} /> : null;
 
   if (step === 'sent' && sent)
     return (
@@ -109,7 +132,8 @@ export function ReportSymptoms({ today, site }: ReportSymptomsProps) {
           )
         }
       >
-        <NotSent problem={sending.problem} />
+        {takenUp}
+        <NotSent problem={sending.problem} isKept={isKept} />
         <h1>First: is any of this so?</h1>
         <p className="phone-lede">{NOT_WATCHED} Call your local emergency number.</p>
         <div aria-live="assertive">{verdict && isUrgent ? <UrgentWords verdict={verdict} site={site} /> : null}</div>
@@ -118,7 +142,8 @@ export function ReportSymptoms({ today, site }: ReportSymptomsProps) {
     );
   return (
     <TaskFrame back={back} right="2 of 2" action={sendButton}>
-      <NotSent problem={sending.problem} />
+      {takenUp}
+      <NotSent problem={sending.problem} isKept={isKept} />
       {missing ? <NotSent problem={{ title: 'Not sent', status: 422, code: 'invalid', detail: missing }} /> : null}
       <h1>What do you notice?</h1>
       <div aria-live="polite">{verdict && isUrgent ? <UrgentWords verdict={verdict} site={site} /> : null}</div>

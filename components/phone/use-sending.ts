@@ -15,9 +15,9 @@ export interface Sending<Answer> {
 
 /**
  * One create under one key, kept over presses and retries. Without a connection it is tried again every 30 seconds
- * and as soon as the line is back; `onDone` hears of the one success.
+ * and as soon as the line is back; `onDone` hears of the one success. `resume` is what an earlier visit had begun to send under the same key.
  */
-export function useSending<Answer>(path: string, key: string, onDone: (answer: Answer) => void): Sending<Answer> {
+export function useSending<Answer>(path: string, key: string, onDone: (answer: Answer) => void, resume: object | null = null): Sending<Answer> {
   const [state, setState] = useState<{ atWork: boolean; problem: ProblemDetails | null }>({ atWork: false, problem: null });
   const waiting = useRef<object | null>(null);
   const running = useRef(false);
@@ -63,6 +63,13 @@ export function useSending<Answer>(path: string, key: string, onDone: (answer: A
       window.removeEventListener('online', again);
     };
   }, [isWaiting, start]);
+
+  const toResume = useRef(resume);
+  useEffect(() => {
+    const body = toResume.current;
+    toResume.current = null;
+    if (body) void start(body);
+  }, [start]);
 
   const clear = useCallback(() => setState({ atWork: false, problem: null }), []);
   return { ...state, isWaiting, start, clear };

@@ -72,15 +72,56 @@ test('a session is logged: arm check first, advice on a jump, pounds noticed, th
     await expect(page.getByRole('heading', { level: 1, name: 'Your session' })).toBeVisible();
   });
 
-  await test.step('without a line it waits, and goes once when the line is back', async () => {
+  await test.step('without a line it waits on the phone', async () => {
     await context.setOffline(true);
     await page.getByRole('button', { name: /^Save session/ }).click();
-    await expect(page.getByRole('alert').filter({ hasText: 'Waiting for the line' })).toContainText('Do not close the page.');
+    await expect(page.getByRole('alert').filter({ hasText: 'Waiting for the line' })).toContainText('kept on this phone');
     await expect(page.getByText('Chest press')).toBeVisible();
+  });
+
+  await test.step('the page goes and comes again: all of it is still there, and goes once when the line is back', async () => {
+    const sent: string[] = [];
+    page.on('request', (request) => {
+      if (request.method() === 'POST' && request.url().endsWith('/api/training')) sent.push(request.headers()['idempotency-key'] ?? '');
+    });
+    // The page is gone before the line is back, so that nothing is sent from it.
+    await page.goto('about:blank');
     await context.setOffline(false);
+    // The pages come, what is saved does not arrive.
+    await page.route('**/api/training', (route) => (route.request().method() === 'POST' ? route.abort('internetdisconnected') : route.continue()));
+    await open(page, '/week');
+    await expect(page.getByRole('note').filter({ hasText: 'Not sent yet: kept on this phone.' })).toContainText('A training session.');
+    for (const _time of ['taken up', 'and after a reload']) {
+      await open(page, '/log');
+      await expect(page.getByRole('heading', { level: 1, name: 'Your session' })).toBeVisible();
+      await expect(page.getByRole('status').filter({ hasText: 'Not sent yet: kept on this phone.' })).toBeVisible();
+      await expect(page.getByText(`${jumpKg} kg,`)).toBeVisible();
+      await expect(page.getByRole('alert').filter({ hasText: 'Waiting for the line' })).toBeVisible();
+    }
+    await page.unroute('**/api/training');
+    await page.evaluate(() => window.dispatchEvent(new Event('online')));
     await expect(page.getByRole('heading', { level: 1, name: 'Saved' })).toBeVisible({ timeout: 40_000 });
+    expect(sent.length, 'tried on each page, and once more with the line').toBeGreaterThanOrEqual(3);
+    expect(new Set(sent).size, 'under one key').toBe(1);
     await expect(page.getByText('That is 6 kg more than last time.')).toBeVisible();
     await expect(page.getByText(/^Call Northmoor on/)).toBeVisible();
+  });
+
+  await test.step('nothing of it stays on the phone', async () => {
+    await open(page, '/week');
+    await expect(page.getByText('kept on this phone')).toHaveCount(0);
+    const left = await page.evaluate(
+      () =>
+        new Promise<number>((resolve, reject) => {
+          const request = indexedDB.open('tidemark-unsent');
+          request.onerror = () => reject(new Error('The phone’s shelf does not open.'));
+          request.onsuccess = () => {
+            const count = request.result.transaction('entries').objectStore('entries').count();
+            count.onsuccess = () => resolve(count.result);
+          };
+        }),
+    );
+    expect(left).toBe(0);
   });
 
   const after = await ask<Lifting>(page, '/api/lifting');

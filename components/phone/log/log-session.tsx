@@ -8,10 +8,12 @@ import type { SessionLogged } from '@/lib/safety/log-session';
 import type { LogView } from '@/lib/training/view-log';
 import { Button, ButtonLink } from '../../ui/button';
 import { formatNearDate } from '../../ui/format';
-import { TaskFrame } from '../frame';
+import { TaskFrame, useParticipantId } from '../frame';
 import { NotSent } from '../not-sent';
 import { SentReportWords } from '../sent-report';
+import { TakenUp } from '../unsent-line';
 import { useKeepOpen, useSending } from '../use-sending';
+import { useKeepUnsent, useLeftUnsent, type Left } from '../use-unsent';
 import { AdviceSheet } from './advice-sheet';
 import { ArmStep } from './arm-step';
 import { CheckStep } from './check-step';
@@ -21,27 +23,49 @@ import { FeltStep } from './felt-step';
 import { LoadStep } from './load-step';
 import { armChanged, armState, flagFor } from './log-rules';
 
-type Step = { at: 'arm' } | { at: 'held'; report: SentReport } | { at: 'load'; index: number } | { at: 'felt'; index: number } | { at: 'check' } | { at: 'done'; logged: SessionLogged };
+type OpenStep = { at: 'arm' } | { at: 'load'; index: number } | { at: 'felt'; index: number } | { at: 'check' };
+type Step = OpenStep | { at: 'held'; report: SentReport } | { at: 'done'; logged: SessionLogged };
+
+/** What is kept on the phone of a session that is not sent. */
+interface KeptLog {
+  readonly draft: Draft;
+  readonly step: OpenStep;
+  /** What was being sent when the page went. */
+  readonly pressed: 'arm' | 'session' | null;
+}
 
 /** From the arm check to the saved session, one thing a screen. One key, so one session whatever the line does. */
 export function LogSession({ view }: { view: LogView }) {
+  const owner = useParticipantId();
+  const { form, ...left } = useLeftUnsent<KeptLog>(owner, 'session');
+  return <LogSteps key={form} view={view} owner={owner} left={left} />;
+}
+
+function LogSteps({ view, owner, left: { found, isRead, forget } }: { view: LogView; owner: string; left: Omit<Left<KeptLog>, 'form'> }) {
   const router = useRouter();
-  const [clientKey] = useState(() => crypto.randomUUID());
-  const [draft, setDraft] = useState<Draft>(() => startDraft(view));
-  const [step, setStep] = useState<Step>({ at: 'arm' });
+  const [clientKey] = useState(() => found?.key ?? crypto.randomUUID());
+  const [draft, setDraft] = useState<Draft>(() => found?.value.draft ?? startDraft(view));
+  const [step, setStep] = useState<Step>(found?.value.step ?? { at: 'arm' });
+  const [isTakenUp, setTakenUp] = useState(found !== null);
   const [errors, setErrors] = useState<{ arm?: string; effort?: string; soreness?: string; sets?: string }>({});
   const [flag, setFlag] = useState<TrainingFlag | null>(null);
   const go = (next: Step) => {
     setErrors({});
+    setTakenUp(false);
     setStep(next);
     window.scrollTo(0, 0);
   };
-  const armSending = useSending<ArmChecked>('/api/arm/check', `${clientKey}-arm`, ({ report }) => go(report ? { at: 'held', report } : { at: 'load', index: 0 }));
-  const sending = useSending<SessionLogged>('/api/training', clientKey, (logged) => {
-    go({ at: 'done', logged });
+  const armSending = useSending<ArmChecked>('/api/arm/check', `${clientKey}-arm`, ({ report }) => go(report ? { at: 'held', report } : { at: 'load', index: 0 }), found?.value.pressed === 'arm' ? { clientKey, armCheck: draft.armCheck } : null);
+  const logged = (saved: SessionLogged) => {
+    go({ at: 'done', logged: saved });
     router.refresh();
-  });
-  useKeepOpen(step.at !== 'arm' && step.at !== 'held' && step.at !== 'done');
+  };
+  const sending = useSending<SessionLogged>('/api/training', clientKey, logged, found?.value.pressed === 'session' ? toInput(draft, clientKey) : null);
+  const pressed = armSending.isWaiting || armSending.atWork ? 'arm' : sending.isWaiting || sending.atWork ? 'session' : null;
+  const isTyped = pressed !== null || step.at === 'felt' || draft.sets.some(({ state, isTouched }) => state !== 'open' || isTouched);
+  const value: KeptLog | null = step.at !== 'held' && step.at !== 'done' && isTyped ? { draft, step, pressed } : null;
+  const isKept = useKeepUnsent({ owner, kind: 'session', key: clientKey, value, isRead });
+  useKeepOpen(value !== null && !isKept);
 
   const setOf = (index: number): DraftSet | undefined => draft.sets[index];
   const change = (index: number, part: Partial<DraftSet>) => setDraft((now) => propose(view, { ...now, sets: now.sets.map((set, i) => (i === index ? { ...set, ...part } : set)) }));
@@ -78,6 +102,7 @@ export function LogSession({ view }: { view: LogView }) {
   const back = (title: string) => ({ href: '/week', title });
   const title = `Session ${view.sessionNumber}`;
   const day = formatNearDate(draft.on);
+  const takenUp = isTakenUp ? <TakenUp onForget={forget} /> : null;
 
   if (step.at === 'arm')
     return (
@@ -90,7 +115,8 @@ export function LogSession({ view }: { view: LogView }) {
           </Button>
         }
       >
-        <NotSent problem={armSending.problem} />
+        {takenUp}
+        <NotSent problem={armSending.problem} isKept={isKept} />
         {view.trainingHeld ? <HoldWords view={view} /> : null}
         <ArmStep view={view} armCheck={draft.armCheck} onArmCheck={(armCheck) => setDraft({ ...draft, armCheck })} on={draft.on} onDay={(on) => setDraft({ ...draft, on: on || view.today })} error={errors.arm} />
         {armSending.isWaiting ? (
@@ -145,7 +171,8 @@ export function LogSession({ view }: { view: LogView }) {
           </Button>
         }
       >
-        <NotSent problem={sending.problem} />
+        {takenUp}
+        <NotSent problem={sending.problem} isKept={isKept} />
         {errors.sets ?? errors.soreness ? <NotSent problem={{ title: 'Not saved', status: 422, code: 'invalid', detail: errors.sets ?? errors.soreness ?? '' }} /> : null}
         <CheckStep
           view={view}
@@ -174,6 +201,7 @@ export function LogSession({ view }: { view: LogView }) {
         </Button>
       }
     >
+      {takenUp}
       {step.at === 'load' ? (
         <LoadStep key={index} {...{ view, set, index, count: draft.sets.length, on: draft.on, arm }} onChange={(part) => change(index, part)} onLeaveOut={() => leaveOut(index)} />
       ) : (
