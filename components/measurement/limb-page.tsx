@@ -48,7 +48,7 @@ function Begin({ visitId, mayMeasure, onBegun }: { visitId: string; mayMeasure: 
           </Button>
         </p>
       ) : (
-        <p>Nothing has been measured at this visit yet.</p>
+        <p>Nothing has been saved at this visit yet.</p>
       )}
     </div>
   );

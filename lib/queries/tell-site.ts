@@ -11,6 +11,6 @@ export async function tellSite(work: Work, query: DataQuery): Promise<void> {
   );
   if (!where) return;
   const page = query.visitId ? `/participants/${where.code}/visits/${query.visitId}` : `/participants/${where.code}`;
-  const data = { participantCode: where.code, visitName: where.visit ?? 'the record', url: `${env().NEXTAUTH_URL}${page}#query-${query.id}`, origin: query.origin };
+  const data = { participantCode: where.code, visitName: where.visit ?? 'the record', url: `${env().NEXTAUTH_URL}${page}#query-${query.id}`, raisedBy: query.origin === 'check' ? 'An edit check' : 'A monitor' };
   await work.later(mailSend, { letter: 'query-raised', to: where.email, data });
 }
