@@ -1,3 +1,5 @@
+import { fixedDigits, percentOf, roundHalfAway } from '@/instruments/numbers';
+
 /**
  * The one way this registry prints dates, times and figures. Pure functions:
  * the moment, the zone and the unit are always given, never guessed.
@@ -113,10 +115,10 @@ export function countOf(count: number, noun: string, plural = `${noun}s`): strin
   return `${formatCount(count)} ${count === 1 ? noun : plural}`;
 }
 
-/** A figure with fixed decimals, thin space for thousands, true minus. Throws RangeError for what is not finite. */
+/** A figure with fixed decimals, halves away from zero, thin space for thousands, true minus. Throws RangeError for what is not finite. */
 export function formatNumber(value: number, decimals = 0): string {
   if (!Number.isFinite(value)) throw new RangeError(`${value} is not a figure that can be printed.`);
-  const text = Math.abs(value).toFixed(decimals);
+  const text = fixedDigits(value, decimals);
   const [whole = '0', part] = text.split('.');
   const grouped = whole.replace(/\B(?=(\d{3})+(?!\d))/g, thin);
   const sign = value < 0 && Number(text) !== 0 ? minus : '';
@@ -133,25 +135,25 @@ export function formatVolumeMl(volumeMl: number): string {
   return `${formatNumber(volumeMl)} mL`;
 }
 
-/** '25.9 cm' from millimetres, to 0.1 cm. */
+/** '25.9 cm' from millimetres, to 0.1 cm, as the tape is read; a settled girth of 228.5 mm prints as 22.9. */
 export function formatGirthCm(circumferenceMm: number): string {
   return `${formatNumber(circumferenceMm / 10, 1)} cm`;
 }
 
 /** '+5.1 %' from a proportion (0.051), to 0.1 %, always with its sign; zero has none. */
 export function formatChange(proportion: number): string {
-  return `${formatSigned(proportion * 100, 1)}${narrow}%`;
+  return `${formatSigned(percentOf(proportion), 1)}${narrow}%`;
 }
 
 /** '+5.1', '−4.0', '0.0': a figure whose sign matters. */
 export function formatSigned(value: number, decimals = 1): string {
   const text = formatNumber(value, decimals);
-  return value > 0 && Number(value.toFixed(decimals)) !== 0 ? `+${text}` : text;
+  return value > 0 && roundHalfAway(value, decimals) !== 0 ? `+${text}` : text;
 }
 
 /** '24.3 %' from a proportion (0.243). */
 export function formatPercent(proportion: number, decimals = 1): string {
-  return `${formatNumber(proportion * 100, decimals)}${narrow}%`;
+  return `${formatNumber(percentOf(proportion), decimals)}${narrow}%`;
 }
 
 /** '7.0 kg', or '7 kg' when `short`, in steps of 0.5 kg as they are logged. */
@@ -161,5 +163,5 @@ export function formatLoadKg(loadKg: number, short = false): string {
 
 /** '5.0 to 16.4': the limits of an interval given as proportions, in percent without the sign. */
 export function formatLimits(lower: number, upper: number, decimals = 1): string {
-  return `${formatNumber(lower * 100, decimals)} to ${formatNumber(upper * 100, decimals)}`;
+  return `${formatNumber(percentOf(lower), decimals)} to ${formatNumber(percentOf(upper), decimals)}`;
 }

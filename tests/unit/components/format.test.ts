@@ -14,9 +14,11 @@ import {
   formatNearDate,
   formatNumber,
   formatPercent,
+  formatSigned,
   formatTime,
   formatVolumeMl,
 } from '@/components/ui/format';
+import { printNumber } from '@/instruments/numbers';
 import { readNumber } from '@/components/ui/read-number';
 
 const zone = 'Europe/London';
@@ -86,6 +88,51 @@ describe('figures carry thin spaces, a true minus and their unit', () => {
       fc.property(fc.integer({ min: -9_999_999, max: 9_999_999 }), (tenths) => {
         const read = readNumber(formatNumber(tenths / 10, 1));
         expect(read).toEqual({ kind: 'number', value: tenths === 0 ? 0 : tenths / 10 });
+      }),
+    );
+  });
+});
+
+describe('halves go away from zero, by the digits as they are written', () => {
+  /** Whole tenths or half tenths, rounded on integers alone. */
+  const twin = (halfMm: number): string => {
+    const tenths = Math.floor((Math.abs(halfMm) + 1) / 2);
+    return `${halfMm < 0 && tenths > 0 ? '\u2212' : ''}${Math.floor(tenths / 10)}.${tenths % 10}`;
+  };
+  it('girths settled between two trials', () => {
+    expect([228.5, 377.5, 266.5, 264.5, 355.5].map((mm) => formatGirthCm(mm))).toEqual(['22.9 cm', '37.8 cm', '26.7 cm', '26.5 cm', '35.6 cm']);
+    expect([22.85, 37.75, 26.65, 26.45, 35.55, -26.65].map((cm) => formatNumber(cm, 1))).toEqual(['22.9', '37.8', '26.7', '26.5', '35.6', '\u221226.7']);
+    expect(formatSigned(-0.05)).toBe('\u22120.1');
+    expect(formatSigned(0.05)).toBe('+0.1');
+    expect(formatSigned(0.04)).toBe('0.0');
+  });
+  it('every half millimetre, against whole numbers alone', () => {
+    fc.assert(
+      fc.property(fc.integer({ min: -1998, max: 1998 }), (halfMm) => {
+        expect(formatNumber(halfMm / 2 / 10, 1)).toBe(twin(halfMm));
+      }),
+    );
+  });
+  it('proportions too, without the error of a factor of a hundred', () => {
+    expect(formatPercent(0.285, 0)).toBe('29\u202f%');
+    expect(formatPercent(0.0285)).toBe('2.9\u202f%');
+    fc.assert(
+      fc.property(fc.integer({ min: 0, max: 20_000 }), (halfTenths) => {
+        const tenths = Math.floor((halfTenths + 1) / 2);
+        expect(formatPercent(halfTenths / 2000)).toBe(`${Math.floor(tenths / 10) >= 1000 ? `1\u2009000` : Math.floor(tenths / 10)}.${tenths % 10}\u202f%`);
+      }),
+    );
+  });
+  it('figures far off the scale of the registry print as they are', () => {
+    expect(formatNumber(1e-9, 1)).toBe('0.0');
+    expect(formatNumber(-1e-9, 1)).toBe('0.0');
+    expect(formatNumber(0.49999999999999994)).toBe('0');
+    expect(formatNumber(123456789012.5)).toBe('123\u2009456\u2009789\u2009013');
+  });
+  it('the sentences of the checks round as the tables do', () => {
+    fc.assert(
+      fc.property(fc.integer({ min: -1998, max: 1998 }), (halfMm) => {
+        expect(printNumber(halfMm / 20, 1)).toBe(twin(halfMm));
       }),
     );
   });
