@@ -50,11 +50,8 @@ export function MyLifting({ lifting }: { lifting: LiftingView }) {
 
 function Exercise({ exercise: { name, weeks } }: { exercise: LiftedExercise }) {
   return (
-    <details className="mt-4 border-t border-rule pt-2">
-      <summary className="flex min-h-11 items-center justify-between gap-3">
-        <b>{name}</b>
-        <span className="text-[16px] text-ink-2">by week</span>
-      </summary>
+    <details className="chart-table mt-4 border-t border-rule pt-2">
+      <summary className="pad-44">{name}, the heaviest load of each week</summary>
       <PlainTable
         caption={`${name}: heaviest load of each week`}
         tight

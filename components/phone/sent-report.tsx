@@ -13,7 +13,7 @@ export function SentReportWords({ report: { title, text, dueAt, holdTraining, si
       </p>
       <p className="mt-2">
         {site.name} has your report.{' '}
-        {due === null ? 'Nothing more is asked of you.' : `They are to answer by ${formatNearDate(due, site.timeZone)}, ${formatTime(due, site.timeZone)}.`}{' '}
+        {due === null ? 'Nothing more is asked of you.' : `The study asks them to look at it by ${formatNearDate(due, site.timeZone)}, ${formatTime(due, site.timeZone)}. Nobody reads reports around the clock: do what stands above without waiting.`}{' '}
         {holdTraining ? 'Your training waits until they have looked at it. ' : ''}
         To reach them sooner call <a className="font-semibold" href={phoneHref(site.phone)}>{site.phone}</a>.
       </p>

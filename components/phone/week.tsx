@@ -7,10 +7,11 @@ import { countOf, formatDate, formatDateRange, formatNearDate, formatTime } from
 const counts = ['No', 'One', 'Two', 'Three', 'Four', 'Five', 'Six', 'Seven'];
 
 /** What the week holds, in a sentence. */
-function weekSentence({ isTraining, sessionsPerWeek, baselineDone, days }: WeekView): string {
+function weekSentence({ isTraining, trainingHeld, sessionsPerWeek, baselineDone, days }: WeekView): string {
   const questionnaires = days.flatMap(({ items }) => items).filter(({ kind }) => kind === 'questionnaire').length;
   const asked = questionnaires > 0 ? ` ${counts[questionnaires] ?? questionnaires} ${questionnaires === 1 ? 'questionnaire' : 'questionnaires'} to answer.` : '';
   if (!baselineDone) return `Training begins once both arms have been measured.${asked}`;
+  if (trainingHeld) return `Training is on hold.${asked}`;
   if (!isTraining) return `No sessions are planned.${asked}`;
   return `${counts[sessionsPerWeek] ?? sessionsPerWeek} ${sessionsPerWeek === 1 ? 'session' : 'sessions'}, each with an arm check.${asked}`;
 }

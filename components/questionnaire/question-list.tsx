@@ -54,7 +54,7 @@ export function QuestionList({ list }: { list: QuestionnaireList }) {
   );
 }
 
-function Open({ row: { id, title, minutes, itemCount, answeredCount, state, closesOn }, today }: { row: QuestionnaireRow; today: string }) {
+function Open({ row: { id, title, minutes, itemCount, doneCount, state, closesOn }, today }: { row: QuestionnaireRow; today: string }) {
   return (
     <li>
       <Link className="pad-44 font-semibold" href={`/questions/${id}`}>
@@ -63,7 +63,7 @@ function Open({ row: { id, title, minutes, itemCount, answeredCount, state, clos
       <span className="block text-[16px] text-ink-2">
         {countOf(itemCount, 'question')}, about {countOf(minutes, 'minute')}. Open until {formatDate(closesOn)}, closes {formatDue(closesOn, today)}.
       </span>
-      {state === 'in progress' ? <Gauge state="part" level={answeredCount / itemCount} word={`${answeredCount} of ${itemCount} answered`} /> : null}
+      {state === 'in progress' ? <Gauge state="part" level={doneCount / itemCount} word={`${doneCount} of ${itemCount} answered or left out`} /> : null}
     </li>
   );
 }

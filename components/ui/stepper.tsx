@@ -1,6 +1,6 @@
 'use client';
 
-import { useCallback, useEffect, useRef, useState, type KeyboardEvent } from 'react';
+import { useEffect, useRef, useState, type KeyboardEvent } from 'react';
 import { FieldError, useJoined, type FieldWords } from './field';
 import { readNumber } from './read-number';
 import { Verb } from './verbs';
@@ -19,6 +19,8 @@ export interface StepperProps extends Omit<FieldWords, 'optional'> {
   size?: 'large' | 'small';
   /** Past the rule: the figure turns to needs. Say why in `error` or beside. */
   outside?: boolean;
+  /** Hears whether what was typed last could not be taken; the figure stands as it was before. */
+  onFault?: (isFaulty: boolean) => void;
 }
 
 const holdMs = 450;
@@ -40,9 +42,18 @@ export function Stepper({
   decimals = 0,
   size = 'large',
   outside,
+  onFault,
 }: StepperProps) {
-  const { hintId, errorId, ...joined } = useJoined({ hint, error }, id);
-  const move = useCallback((by: number) => onChange(within(roundTo(value + by * step, step), min, max)), [onChange, value, step, min, max]);
+  const [fault, setFault] = useState<string | null>(null);
+  const { hintId, errorId, ...joined } = useJoined({ hint, error: fault ?? error }, id);
+  const told = (sentence: string | null) => {
+    setFault(sentence);
+    onFault?.(sentence !== null);
+  };
+  const move = (by: number) => {
+    told(null);
+    onChange(within(roundTo(value + by * step, step), min, max));
+  };
   const small = size === 'small';
   const labelled = (
     <label htmlFor={joined.id} className={labelHidden ? 'sr-only' : small ? 't-participant' : 'field-label'}>
@@ -56,7 +67,7 @@ export function Stepper({
       <div className={`stepper ${small ? 'stepper-small' : ''}`}>
         {small ? labelled : null}
         <HoldKey verb="less" label="Less" describedBy={joined.id} onStep={() => move(-1)} />
-        <Figure {...{ joined, value, onChange, move, min, max, decimals, unit, outside }} />
+        <Figure {...{ joined, value, onChange, move, min, max, decimals, unit, outside, told }} />
         <HoldKey verb="add" label="More" describedBy={joined.id} onStep={() => move(1)} />
       </div>
       {hint ? (
@@ -64,7 +75,7 @@ export function Stepper({
           {hint}
         </p>
       ) : null}
-      <FieldError id={errorId}>{error}</FieldError>
+      <FieldError id={errorId}>{fault ?? error}</FieldError>
     </div>
   );
 }
@@ -75,15 +86,22 @@ interface FigureProps extends Pick<StepperProps, 'value' | 'onChange' | 'unit' |
   min: number;
   max: number;
   decimals: number;
+  told: (sentence: string | null) => void;
 }
 
-/** While it is typed the words stand as typed; on leaving they become the figure, or fall back to the last one. */
-function Figure({ joined, value, onChange, move, min, max, decimals, unit, outside }: FigureProps) {
+/** While it is typed the words stand as typed; on leaving they become the figure. What cannot be taken is said, and the last figure stands. */
+function Figure({ joined, value, onChange, move, min, max, decimals, unit, outside, told }: FigureProps) {
   const [typed, setTyped] = useState<string | null>(null);
   const settle = () => {
-    const read = typed === null ? null : readNumber(typed);
-    if (read?.kind === 'number') onChange(within(read.value, min, max));
+    if (typed === null) return;
+    const read = readNumber(typed);
+    const measure = unit ? ` ${unit}` : '';
+    const stays = `It stays at ${value.toFixed(decimals)}${measure} until you type another.`;
     setTyped(null);
+    if (read.kind === 'unclear') return told(`${read.sentence} ${stays}`);
+    if (read.kind === 'number' && (read.value < min || read.value > max)) return told(`You typed ${typed.trim()}; ${min} to ${max}${measure} can be kept. ${stays}`);
+    told(null);
+    if (read.kind === 'number') onChange(read.value);
   };
   const key = (event: KeyboardEvent) => {
     if (event.key !== 'ArrowUp' && event.key !== 'ArrowDown') return;

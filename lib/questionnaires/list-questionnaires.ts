@@ -11,8 +11,10 @@ export interface QuestionnaireRow {
   readonly id: string;
   readonly title: string;
   readonly minutes: number;
+  /** Questions everybody is asked, and those that an answer has opened. */
   readonly itemCount: number;
-  readonly answeredCount: number;
+  /** Answered, or left out on purpose. */
+  readonly doneCount: number;
   readonly state: QuestionnaireResponse['state'];
   readonly dueOn: string;
   readonly opensOn: string;
@@ -44,8 +46,8 @@ export async function listQuestionnaires(work: Work): Promise<QuestionnaireList>
         id: response.id,
         title: questionnaire.title,
         minutes: questionnaire.minutes,
-        itemCount: elementsOf(questionnaire.survey).length,
-        answeredCount: Object.keys(response.answers).length,
+        itemCount: elementsOf(questionnaire.survey).filter(({ name, visibleIf }) => visibleIf === undefined || name in response.answers).length,
+        doneCount: new Set([...Object.keys(response.answers), ...response.leftOut]).size,
         state: response.state,
         dueOn: response.dueOn,
         opensOn: response.opensOn,

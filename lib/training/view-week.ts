@@ -58,7 +58,7 @@ async function loadRows(work: Work, participantId: string, from: string, to: str
 
 const clamp = (day: string, from: string, to: string): string => (day < from ? from : day > to ? to : day);
 
-/** Visits on their day: done, booked, or 'to be booked' on the last day of the week on which the window is open. */
+/** Visits on their day: done, booked, or 'to be booked' on the first day of the week on which the window is open. */
 function visitItems(visits: Rows['visits'], timeZone: string, span: { from: string; to: string; today: string }): [string, WeekItem][] {
   return visits.flatMap(({ name, opens_on, closes_on, booked_at, done_on, state }): [string, WeekItem][] => {
     if (done_on !== null) return done_on >= span.from && done_on <= span.to ? [[done_on, { kind: 'visit', name, time: null, done: state !== 'in progress', isWindow: false }]] : [];
@@ -68,8 +68,9 @@ function visitItems(visits: Rows['visits'], timeZone: string, span: { from: stri
       const time = new Intl.DateTimeFormat('en-GB', { timeZone, hour: '2-digit', minute: '2-digit', hourCycle: 'h23' }).format(at);
       return on >= span.from && on <= span.to ? [[on, { kind: 'visit', name, time, done: false, isWindow: false }]] : [];
     }
-    const on = clamp(closes_on, span.from, span.to);
-    return on >= span.today && opens_on <= span.to ? [[on, { kind: 'visit', name, time: null, done: false, isWindow: true }]] : [];
+    // What is not booked stands where it can first be done, so that it is not taken for an appointment at the week's end.
+    const on = opens_on > span.today ? opens_on : span.today;
+    return on <= span.to && closes_on >= span.today ? [[on, { kind: 'visit', name, time: null, done: false, isWindow: true }]] : [];
   });
 }
 

@@ -226,6 +226,14 @@ describe('the participant’s pages', () => {
     expect(view).toMatchObject({ weekNumber: 2, sessionsLogged: 1, isTraining: true });
   });
 
+  test('a visit that is not booked stands on the first day it can be done, not at the end of the week', async () => {
+    const participant = await givenMeasured();
+    const [visit] = await asOwner<{ opens_on: string }>(`select opens_on::text from visit where participant_id = $1 and state = 'to come' order by opens_on limit 1`, [participant.id]);
+    const opensOn = visit?.opens_on ?? '';
+    const view = await withWork(participant.actor, 'week.view', viewWeek, at(opensOn));
+    expect(view.days.filter(({ items }) => items.some((item) => item.kind === 'visit' && item.isWindow)).map(({ on }) => on)).toEqual([opensOn]);
+  });
+
   test('the log opens with the programme of the protocol and the number of the session', async () => {
     const participant = await givenMeasured();
     await log(participant.actor, session('2027-01-12', [press(2)]));
