@@ -1,5 +1,5 @@
 import { binomial } from '../distributions';
-import { requireRange } from '../result';
+import { isMeasure, requireRange } from '../result';
 
 /** The bootstrap distribution of a median without any resampling. */
 export interface ExactMedian {
@@ -21,7 +21,7 @@ export function exactMedian(values: ArrayLike<number>): ExactMedian {
   const n = values.length;
   requireRange(n % 2 === 1, `The exact form is for an odd number of values, not ${n}.`);
   const sorted = Array.from(values).sort((a, b) => a - b);
-  requireRange(sorted.every(Number.isFinite), 'Values are finite; leave missing ones out first.');
+  requireRange(sorted.every(isMeasure), 'Values are finite; leave missing ones out first.');
   const middle = (n - 1) / 2;
   /** P(resampled median > k-th smallest) = P(at most `middle` draws are among the k smallest). */
   const above = (k: number): number => (k === 0 ? 1 : k === n ? 0 : binomial.cdf(middle, n, k / n));

@@ -1,6 +1,6 @@
 import { fisherF, studentT } from '../distributions';
 import { methodOf } from '../registry';
-import { requireLevel, requireRange, type Interval, type Provenance } from '../result';
+import { isMeasure, requireLevel, requireRange, type Interval, type Provenance } from '../result';
 import { Householder } from './householder';
 import { meanAndDeviation } from './mean-and-deviation';
 
@@ -61,7 +61,7 @@ export function leastSquares(
 }
 
 function allFinite(column: ArrayLike<number>): boolean {
-  for (let i = 0; i < column.length; i++) if (!Number.isFinite(column[i])) return false;
+  for (let i = 0; i < column.length; i++) if (!isMeasure(column[i] as number)) return false;
   return true;
 }
 

@@ -1,5 +1,5 @@
 import { methodOf } from '../registry';
-import { requireRange } from '../result';
+import { isMeasure, requireRange } from '../result';
 
 export interface MeanAndDeviation {
   readonly n: number;
@@ -25,8 +25,12 @@ export function meanAndDeviation(values: ArrayLike<number>): MeanAndDeviation {
   if (n === 0) return { n, mean: null, standardDeviation: null, sumOfSquares: 0, method };
   const first = values[0] as number;
   let sum = 0;
-  for (let i = 0; i < n; i++) sum += (values[i] as number) - first;
-  requireRange(Number.isFinite(sum), 'Values are finite numbers; leave missing ones out first.');
+  let usable = true;
+  for (let i = 0; i < n; i++) {
+    usable &&= isMeasure(values[i] as number);
+    sum += (values[i] as number) - first;
+  }
+  requireRange(usable, 'Values are finite numbers; leave missing ones out first.');
   const shift = sum / n;
   let squares = 0;
   let rest = 0;

@@ -1,6 +1,6 @@
 import { fisherF } from '../distributions';
 import { methodOf } from '../registry';
-import { requireRange, type Provenance } from '../result';
+import { isMeasure, requireRange, type Provenance } from '../result';
 
 export interface OneWayAnova extends Provenance {
   readonly groups: number;
@@ -33,7 +33,7 @@ export function oneWayAnova(values: ArrayLike<number>, group: ArrayLike<number>)
   for (let i = 0; i < n; i++) {
     const label = group[i] as number;
     const value = (values[i] as number) - first;
-    requireRange(Number.isFinite(value) && Number.isFinite(label), 'Values and groups are finite numbers; leave missing ones out first.');
+    requireRange(isMeasure(values[i] as number) && Number.isFinite(label), 'Values and groups are finite numbers; leave missing ones out first.');
     const own = sums.get(label) ?? { n: 0, sum: 0, mean: 0 };
     own.n++;
     own.sum += value;

@@ -1,3 +1,4 @@
+import { orderByTwo } from '../progression/order-by-two';
 import { methodOf } from '../registry';
 import { requireRange, type Provenance } from '../result';
 
@@ -27,35 +28,49 @@ export interface MissingByVisit extends Provenance {
  * Longitudinal Data, ch. 13. `n` counts subjects.
  *
  * @param subjects and @param visits numbers that name subject and visit of each row; @param values NaN is missing.
- * @throws RangeError for unequal columns or two rows of one subject at one visit.
+ * @throws RangeError for unequal columns, a subject or visit that is missing, or two rows of one subject at one visit.
  */
 export function missingByVisit(subjects: ArrayLike<number>, visits: ArrayLike<number>, values: ArrayLike<number>): MissingByVisit {
   const rows = subjects.length;
   requireRange(visits.length === rows && values.length === rows, `Columns must be equally long: ${rows}, ${visits.length} and ${values.length} rows.`);
-  const schedule = [...new Set(Array.from(visits))].sort((a, b) => a - b);
-  const position = new Map(schedule.map((visit, at) => [visit, at]));
-  const seen = new Map<number, { observed: Uint8Array; rows: Uint8Array }>();
   for (let row = 0; row < rows; row++) {
-    const subject = seen.get(subjects[row]!) ?? { observed: new Uint8Array(schedule.length), rows: new Uint8Array(schedule.length) };
-    const at = position.get(visits[row]!)!;
-    requireRange(subject.rows[at] === 0, `Subject ${subjects[row]} has two rows at visit ${visits[row]}.`);
-    subject.rows[at] = 1;
-    subject.observed[at] = Number.isNaN(values[row]) ? 0 : 1;
-    seen.set(subjects[row]!, subject);
+    if (!(Number.isFinite(subjects[row]) && Number.isFinite(visits[row]))) throw new RangeError(`Row ${row} names subject ${subjects[row]} and visit ${visits[row]}; names are finite numbers.`);
   }
-  const people = [...seen.values()].map(({ observed }) => observed);
-  const expected = people.length;
+  const schedule = [...new Set(Array.from(visits, (visit) => visit + 0))].sort((a, b) => a - b);
+  const position = new Map(schedule.map((visit, at) => [visit, at]));
+  const subject = Float64Array.from(subjects);
+  const visit = Float64Array.from(visits);
+  const observedAt = new Float64Array(schedule.length);
+  let [expected, complete, monotone] = [0, 0, 0];
+  const order = orderByTwo(subject, visit);
+  // Subject by subject, visits ascending: nothing the size of subjects times visits is ever made.
+  for (let start = 0; start < rows; ) {
+    let observed = 0;
+    let last = -1;
+    let end = start;
+    for (; end < rows && subject[order[end]!] === subject[order[start]!]; end++) {
+      const row = order[end]!;
+      if (end > start && visit[row] === visit[order[end - 1]!]) throw new RangeError(`Subject ${subjects[row]} has two rows at visit ${visits[row]}.`);
+      if (Number.isNaN(values[row])) continue;
+      last = position.get(visit[row]!)!;
+      observedAt[last]!++;
+      observed++;
+    }
+    expected++;
+    if (observed === schedule.length) complete++;
+    if (observed === last + 1) monotone++;
+    start = end;
+  }
   const byVisit = schedule.map((visit, at) => {
-    const observed = people.reduce((sum, person) => sum + person[at]!, 0);
+    const observed = observedAt[at]!;
     return { visit, expected, observed, missing: expected - observed, percentMissing: (100 * (expected - observed)) / expected };
   });
-  const monotone = people.filter((person) => !person.subarray(0, person.lastIndexOf(1) + 1).includes(0)).length;
   return {
     method: methodOf('missingByVisit'),
     n: expected,
     leftOut: [],
     visits: byVisit,
-    complete: people.filter((person) => !person.includes(0)).length,
+    complete,
     monotone,
     intermittent: expected - monotone,
   };

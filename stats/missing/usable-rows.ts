@@ -1,4 +1,4 @@
-import { requireRange } from '../result';
+import { isMeasure, requireRange } from '../result';
 
 /** The rows on which every column has a value, and how many rows that leaves out. */
 export interface UsableRows {
@@ -10,9 +10,10 @@ export interface UsableRows {
 
 /**
  * Complete rows of one or more equally long columns. NaN is a missing value:
- * its row is left out and counted. An infinite value is a mistake of the caller.
+ * its row is left out and counted. A value that is infinite, or whose square no
+ * double can hold, is a mistake of the caller.
  *
- * @throws RangeError for columns of different length or an infinite value.
+ * @throws RangeError for columns of different length or such a value.
  */
 export function usableRows(columns: Readonly<Record<string, ArrayLike<number>>>): UsableRows {
   const named = Object.entries(columns);
@@ -25,8 +26,8 @@ export function usableRows(columns: Readonly<Record<string, ArrayLike<number>>>)
   for (const [name, column] of named) {
     for (let row = 0; row < total; row++) {
       const value = column[row] as number;
-      if (value - value === 0) continue;
-      requireRange(Number.isNaN(value), `${name} is not finite in row ${row}.`);
+      if (isMeasure(value)) continue;
+      requireRange(Number.isNaN(value), `${name} is ${value} in row ${row}, which is no measurement.`);
       gap[row] = 1;
     }
   }

@@ -1,5 +1,5 @@
 import { normal, studentT } from '../distributions';
-import type { Interval } from '../result';
+import { representable, type Interval } from '../result';
 
 /** One coefficient of a fitted model with Wald limits. */
 export interface Coefficient extends Interval {
@@ -18,18 +18,19 @@ export function coefficient(name: string, estimate: number, se: number, level: n
   const statistic = Math.abs(estimate / se);
   const tailOf = (): number => 2 * (df === undefined ? normal.sf(statistic) : studentT.sf(statistic, df));
   const p = se > 0 ? tailOf() : null;
-  const base = { name, estimate, se, lower: estimate - z * se, upper: estimate + z * se, level, p };
+  // Few degrees of freedom send the quantile, and with it the limits, beyond all numbers.
+  const base = representable({ name, estimate, se, lower: estimate - z * se, upper: estimate + z * se, level, p });
   return df === undefined ? base : { ...base, df };
 }
 
 /** exp of an interval: a log rate ratio to a rate ratio. */
 export function exponentiate<T extends Interval>(interval: T): T {
   const exp = (value: number | null): number | null => (value === null ? null : Math.exp(value));
-  return { ...interval, estimate: exp(interval.estimate), lower: exp(interval.lower), upper: exp(interval.upper) };
+  return representable({ ...interval, estimate: exp(interval.estimate), lower: exp(interval.lower), upper: exp(interval.upper) });
 }
 
 /** A slope on the log scale as percent change for one unit: 100 (exp(b) - 1), without cancellation near 0. */
 export function percentChange(interval: Interval): Interval {
   const percent = (value: number | null): number | null => (value === null ? null : 100 * Math.expm1(value));
-  return { ...interval, estimate: percent(interval.estimate), lower: percent(interval.lower), upper: percent(interval.upper) };
+  return representable({ ...interval, estimate: percent(interval.estimate), lower: percent(interval.lower), upper: percent(interval.upper) });
 }

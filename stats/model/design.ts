@@ -1,5 +1,5 @@
 import { pickRows } from '../missing/usable-rows';
-import { requireRange } from '../result';
+import { isMeasure, requireRange } from '../result';
 
 /** One column of a model, named as the reader of the result will see it. */
 export interface Term {
@@ -54,6 +54,7 @@ export function designOf(terms: readonly Term[], rows: Int32Array, intercept = t
     const after = norm(column);
     // With fewer rows than columns no fit exists, and the caller says so.
     requireRange(n < p || after > COLLINEAR * before, `Column ${term.name} is a combination of the columns before it.`);
+    requireRange(isMeasure(after), `Column ${term.name} varies by ${after} only: give it in a smaller unit.`);
     r[j * p + j] = after;
     for (let row = 0; row < n; row++) column[row]! /= after;
     basis.push(column);

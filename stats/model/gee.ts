@@ -55,11 +55,14 @@ export function gee(input: GeeInput): Gee | Refusal {
   const why = refusal(prepared, family, start) ?? (input.correlation === 'exchangeable' && clusters === design.n ? 'No cluster has two rows: a correlation within clusters does not exist.' : null);
   if (why !== null) return { fitted: false, reason: why, ...provenance };
   const { gamma, alpha, converged, iterations } = iterate(prepared, family, start.gamma, input.correlation === 'exchangeable');
+  if (!isCorrelation(alpha, cluster) || !gamma.every(Number.isFinite)) {
+    return { fitted: false, reason: 'The working correlation runs out of the range that a correlation within these clusters can have: the equations have no solution.', ...provenance };
+  }
   const { bread, scores } = equations(prepared, family, gamma, alpha);
   const { p, names } = design;
   const covariance = backTransformCovariance(design, filled(inverse(factor(bread, p, 0)), scores, p));
   const beta = backTransform(design, gamma);
-  const coefficients = names.map((name, k) => coefficient(name, beta[k]!, Math.sqrt(covariance[k * p + k]!), level));
+  const coefficients = names.map((name, k) => coefficient(name, beta[k]!, Math.sqrt(Math.max(0, covariance[k * p + k]!)), level));
   return {
     fitted: true,
     correlation: input.correlation,
@@ -72,6 +75,18 @@ export function gee(input: GeeInput): Gee | Refusal {
     events: data.y.reduce((sum, value) => sum + value, 0),
     ...provenance,
   };
+}
+
+/** Correlations of c rows are possible above -1/(c - 1) only; at that edge and at 1 the working matrix has no inverse. */
+function isCorrelation(alpha: number, cluster: Int32Array): boolean {
+  const sizes = new Map<number, number>();
+  let largest = 0;
+  for (const own of cluster) {
+    const size = (sizes.get(own) ?? 0) + 1;
+    sizes.set(own, size);
+    largest = Math.max(largest, size);
+  }
+  return alpha < 1 && 1 + (largest - 1) * alpha > 0;
 }
 
 function iterate(prepared: Prepared, family: Family, start: Float64Array, exchangeable: boolean) {

@@ -174,10 +174,12 @@ export function negativeBinomialFamily(theta: number): Family {
     constant: (y) => logRising(theta, y) - logFactorial(y),
     mean: (eta) => Math.exp(eta),
     score: (y, eta) => (y - Math.exp(eta)) / (1 + Math.exp(eta) / theta),
-    // The two logs are of y/mu and of (y + theta)/(mu + theta), the second written as 1 and what is beyond it.
+    // The two logs are of y/mu and of (y + theta)/(mu + theta); the second is written as 1 and what is beyond it where they are close.
     deviance: (y, eta) => {
       const mean = Math.exp(eta);
-      return 2 * ((y > 0 ? y * (Math.log(y) - eta) : 0) - (y + theta) * Math.log1p((y - mean) / (mean + theta)));
+      const beyond = (y - mean) / (mean + theta);
+      const second = beyond > -0.5 ? Math.log1p(beyond) : Math.log((y + theta) / (mean + theta));
+      return 2 * ((y > 0 ? y * (Math.log(y) - eta) : 0) - (y + theta) * second);
     },
     variance: (eta) => Math.exp(eta) + Math.exp(2 * eta) / theta,
     escape: (y) => (y === 0 ? -1 : 0),

@@ -81,10 +81,10 @@ export function prepare(input: GlmInput): Prepared {
   const exposure = pick(input.exposure);
   for (let row = 0; row < y.length; row++) {
     // Plain throws: a sentence built for each of a million good rows would cost more than the fit.
-    if (!(y[row]! >= 0 && Number.isInteger(y[row]))) throw new RangeError(`A count is a whole number from 0 up, not ${y[row]}.`);
+    if (!(y[row]! >= 0 && Number.isSafeInteger(y[row]))) throw new RangeError(`A count is a whole number from 0 up, not ${y[row]}.`);
     if (!(exposure[row]! > 0)) throw new RangeError(`An exposure is above 0, not ${exposure[row]}.`);
     if (input.trials === undefined) continue;
-    if (!(m[row]! >= y[row]! && Number.isInteger(m[row]) && m[row]! > 0)) throw new RangeError(`There are ${y[row]} events of ${m[row]} trials.`);
+    if (!(m[row]! >= y[row]! && Number.isSafeInteger(m[row]) && m[row]! > 0)) throw new RangeError(`There are ${y[row]} events of ${m[row]} trials.`);
   }
   const data = { design: designOf(terms, rows), y, m, offset: exposure.map(Math.log), tally: tallyOf(y, m) };
   return { data, rows, cluster: input.cluster === undefined ? null : peopleOf(input.cluster, rows), level, leftOut };
@@ -120,14 +120,15 @@ export function report(prepared: Prepared, family: Family, fit: IrlsFit, method:
   const beta = backTransform(design, fit.gamma);
   const covariance = backTransformCovariance(design, fit.covariance);
   const withSe = (variance: Float64Array, factor = 1): Coefficient[] =>
-    names.map((name, k) => coefficient(name, beta[k]!, Math.sqrt(factor * variance[k * p + k]!), level));
+    names.map((name, k) => coefficient(name, beta[k]!, Math.sqrt(Math.max(0, factor * variance[k * p + k]!)), level)); // rounding may leave a variance of 0 just below it
   const coefficients = withSe(covariance);
   let deviance = 0;
   let pearson = 0;
   for (let row = 0; row < n; row++) {
     const eta = fit.eta[row]!;
     deviance += family.deviance(y[row]!, eta, m[row]!);
-    pearson += (y[row]! - family.mean(eta, m[row]!)) ** 2 / family.variance(eta, m[row]!);
+    const residual = y[row]! - family.mean(eta, m[row]!);
+    if (residual !== 0) pearson += residual ** 2 / family.variance(eta, m[row]!); // a mean of 0 has no variance either
   }
   return {
     fitted: true,

@@ -42,11 +42,11 @@ export function quantileSorted(sorted: ArrayLike<number>, p: number, type: Quant
 /**
  * Quantiles of unordered values.
  *
- * @throws RangeError for NaN among the values or a probability outside [0, 1].
+ * @throws RangeError for a value that is missing or infinite, or a probability outside [0, 1].
  */
 export function quantile(values: ArrayLike<number>, probs: readonly number[], type: QuantileType = 7): (number | null)[] {
   const sorted = Float64Array.from(values);
-  requireRange(!sorted.some(Number.isNaN), 'Quantiles are asked of values without gaps; leave missing ones out first.');
+  requireRange(sorted.every(Number.isFinite), 'Quantiles are asked of finite values; leave missing ones out first.');
   sorted.sort();
   return probs.map((p) => quantileSorted(sorted, p, type));
 }

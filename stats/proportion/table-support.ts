@@ -1,4 +1,8 @@
+import { requireRange } from '../result';
 import type { FourfoldTable } from './counts';
+
+/** Beyond this many tables an exact method is no longer worth its memory, and no table of people gets there. */
+const MOST_TABLES = 2 ** 24;
 
 /**
  * The tables that share a fourfold table's margins, as log weights of the
@@ -19,6 +23,7 @@ export function supportOf({ a, b, c, d }: FourfoldTable): TableSupport {
   const events = a + c;
   const least = Math.max(0, events - other);
   const greatest = Math.min(row, events);
+  requireRange(greatest - least < MOST_TABLES, `${greatest - least + 1} tables share these margins: too many to sum one by one.`);
   const logWeights = new Float64Array(greatest - least + 1);
   const mode = Math.min(greatest, Math.max(least, Math.floor(((row + 1) * (events + 1)) / (row + other + 2))));
   for (let k = mode; k < greatest; k++) {

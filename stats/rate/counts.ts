@@ -1,5 +1,5 @@
 import { requireCount } from '../proportion/counts';
-import { requireRange } from '../result';
+import { isMeasure, requireRange } from '../result';
 
 /** Events over person-time, with the unit to report in: `per: 100` gives a rate per 100 units of person-time. */
 export interface OneRate {
@@ -21,7 +21,7 @@ export interface TwoRates {
 
 /** Person-time is positive and finite. Throws RangeError otherwise. */
 export function requirePersonTime(value: number): void {
-  requireRange(value > 0 && value < Number.POSITIVE_INFINITY, `Person-time is a positive number, not ${value}.`);
+  requireRange(value > 0 && isMeasure(value), `Person-time is a positive number, not ${value}.`);
 }
 
 export function requireOneRate({ events, personTime, per = 1 }: OneRate): void {

@@ -1,9 +1,9 @@
 import { fisherF } from '../distributions';
 import { methodOf } from '../registry';
 import { twoWayAnova, type TwoWayAnova } from './two-way-anova';
-import { requireLevel, type Interval, type Provenance } from '../result';
+import { representable, requireLevel, type Interval, type Provenance } from '../result';
 
-/** An F test with its real-valued degrees of freedom; p is null where F does not exist. */
+/** An F test with its real-valued degrees of freedom; f is null where it does not exist, with p = 0 where that is because no error was seen. */
 export interface FTest {
   readonly f: number | null;
   readonly df1: number;
@@ -43,19 +43,20 @@ export function icc(columns: readonly ArrayLike<number>[], level = 0.95): Intrac
   const anova = twoWayAnova(columns);
   const { n, k, leftOut } = anova;
   const provenance = { method: methodOf('icc'), n, leftOut, anova };
-  const why = noCorrelation(anova);
+  const squares = squaresOf(anova);
+  const why = squares === null ? 'A correlation needs two or more subjects.' : squares.rows === 0 && squares.within === 0 ? 'Every reading is equal: nothing to compare.' : null;
   const tests = {
     rowsTest: fTest(anova.meanSquareRows, anova.meanSquareError, n - 1, (n - 1) * (k - 1)),
     columnsTest: fTest(anova.meanSquareColumns, anova.meanSquareError, k - 1, (n - 1) * (k - 1)),
   };
-  if (why !== null) {
-    const none: Interval = { estimate: null, lower: null, upper: null, level, reason: why };
+  if (squares === null || why !== null) {
+    const none: Interval = { estimate: null, lower: null, upper: null, level, reason: why! };
     const forms = { oneWaySingle: none, agreementSingle: none, consistencySingle: none, oneWayAverage: none, agreementAverage: none, consistencyAverage: none };
     return { ...provenance, ...forms, agreementDf: null, ...tests };
   }
-  const oneWay = fForms(anova.meanSquareRows, anova.meanSquareWithin, n - 1, n * (k - 1), k, level);
-  const consistency = fForms(anova.meanSquareRows, anova.meanSquareError, n - 1, (n - 1) * (k - 1), k, level);
-  const agreement = agreementForms(anova, level);
+  const oneWay = fForms(squares.rows, squares.within, n - 1, n * (k - 1), k, level);
+  const consistency = fForms(squares.rows, squares.error, n - 1, (n - 1) * (k - 1), k, level);
+  const agreement = agreementForms(squares, n, k, level);
   return {
     ...provenance,
     oneWaySingle: oneWay.single,
@@ -69,15 +70,22 @@ export function icc(columns: readonly ArrayLike<number>[], level = 0.95): Intrac
   };
 }
 
-function noCorrelation({ n, meanSquareRows, meanSquareWithin }: TwoWayAnova): string | null {
-  if (n < 2) return 'A correlation needs two or more subjects.';
-  return meanSquareRows === 0 && meanSquareWithin === 0 ? 'Every reading is equal: nothing to compare.' : null;
+interface MeanSquares {
+  readonly rows: number;
+  readonly columns: number;
+  readonly error: number;
+  readonly within: number;
 }
 
-function fTest(numerator: number, denominator: number, df1: number, df2: number): FTest {
-  if (!(df1 > 0 && df2 > 0) || (numerator === 0 && denominator === 0)) return { f: null, df1, df2, p: null };
+/** null below two subjects. */
+function squaresOf({ meanSquareRows: rows, meanSquareColumns: columns, meanSquareError: error, meanSquareWithin: within }: TwoWayAnova): MeanSquares | null {
+  return rows === null || columns === null || error === null || within === null ? null : { rows, columns, error, within };
+}
+
+function fTest(numerator: number | null, denominator: number | null, df1: number, df2: number): FTest {
+  if (numerator === null || denominator === null || denominator === 0) return { f: null, df1, df2, p: numerator !== null && numerator > 0 ? 0 : null };
   const f = numerator / denominator;
-  return { f, df1, df2, p: f === Infinity ? 0 : fisherF.sf(f, df1, df2) };
+  return { f, df1, df2, p: fisherF.sf(f, df1, df2) };
 }
 
 const NO_ERROR = 'No disagreement was seen: limits do not exist.';
@@ -98,13 +106,12 @@ function fForms(rows: number, error: number, df1: number, df2: number, k: number
   const toSingle = (ratio: number): number => (ratio - 1) / (ratio + k - 1);
   return {
     single: { estimate: single, lower: toSingle(low), upper: toSingle(high), level },
-    average: rows === 0 ? noAverage : { estimate: (rows - error) / rows, lower: 1 - 1 / low, upper: 1 - 1 / high, level },
+    average: rows === 0 ? noAverage : representable({ estimate: (rows - error) / rows, lower: 1 - 1 / low, upper: 1 - 1 / high, level }),
   };
 }
 
 /** Absolute agreement: the column variance counts as error, so its limits need Satterthwaite's v (McGraw & Wong, table 7). */
-function agreementForms(anova: TwoWayAnova, level: number): { single: Interval; average: Interval; df: number | null } {
-  const { n, k, meanSquareRows: rows, meanSquareColumns: columns, meanSquareError: error } = anova;
+function agreementForms({ rows, columns, error }: MeanSquares, n: number, k: number, level: number): { single: Interval; average: Interval; df: number | null } {
   const single = (rows - error) / (rows + (k - 1) * error + (k * (columns - error)) / n);
   const average = (rows - error) / (rows + (columns - error) / n);
   if (columns === 0 && error === 0) {
@@ -119,12 +126,13 @@ function agreementForms(anova: TwoWayAnova, level: number): { single: Interval; 
   const f1 = fisherF.isf(tail, n - 1, df);
   const f2 = fisherF.isf(tail, df, n - 1);
   const noise = k * columns + (k * n - k - n) * error;
-  const lower = (n * (rows - f1 * error)) / (f1 * noise + n * rows);
-  const upper = (n * (f2 * rows - error)) / (noise + n * f2 * rows);
+  // Divided through by the quantile: with next to no degrees of freedom it is infinite, and the limit is still a number.
+  const lower = (n * (rows / f1 - error)) / (noise + (n * rows) / f1);
+  const upper = (n * (rows - error / f2)) / (noise / f2 + n * rows);
   const stepUp = (r: number): number => (k * r) / (1 + (k - 1) * r);
   return {
     single: { estimate: single, lower, upper, level },
-    average: { estimate: average, lower: stepUp(lower), upper: stepUp(upper), level },
+    average: average !== average || Math.abs(average) === Infinity ? { estimate: null, lower: null, upper: null, level, reason: 'Subjects differ no more than columns do: the average form does not exist.' } : representable({ estimate: average, lower: stepUp(lower), upper: stepUp(upper), level }),
     df,
   };
 }

@@ -27,7 +27,7 @@ export function measurementError(columns: readonly ArrayLike<number>[], level = 
   requireLevel(level);
   const { n, k, leftOut, meanSquareRows, meanSquareColumns, meanSquareError } = twoWayAnova(columns);
   const provenance = { level, method: methodOf('measurementError'), n, leftOut };
-  if (n < 2) {
+  if (meanSquareRows === null || meanSquareColumns === null || meanSquareError === null) {
     const none = { semAgreement: null, sdcConsistency: null, sdcAgreement: null, varianceBetweenColumns: null, varianceBetweenRows: null };
     return { estimate: null, lower: null, upper: null, reason: 'Measurement error needs two or more subjects.', ...none, ...provenance };
   }

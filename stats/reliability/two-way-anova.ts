@@ -5,12 +5,13 @@ import { requireRange, type Provenance } from '../result';
 export interface TwoWayAnova extends Provenance {
   /** Columns: raters, trials or methods. */
   readonly k: number;
-  readonly meanSquareRows: number;
-  readonly meanSquareColumns: number;
+  /** Mean squares are null where they have no degrees of freedom. */
+  readonly meanSquareRows: number | null;
+  readonly meanSquareColumns: number | null;
   /** Rows x columns residual. */
-  readonly meanSquareError: number;
+  readonly meanSquareError: number | null;
   /** Within rows: columns and residual together (the one-way model's error). */
-  readonly meanSquareWithin: number;
+  readonly meanSquareWithin: number | null;
 }
 
 /**
@@ -52,9 +53,9 @@ export function twoWayAnova(columns: readonly ArrayLike<number>[]): TwoWayAnova 
     n,
     k,
     leftOut: usable.leftOut,
-    meanSquareRows: (k * settle(rows)) / (n - 1),
-    meanSquareColumns: (n * settle(between)) / (k - 1),
-    meanSquareError: settle(error) / ((n - 1) * (k - 1)),
-    meanSquareWithin: settle(within) / (n * (k - 1)),
+    meanSquareRows: n > 1 ? (k * settle(rows)) / (n - 1) : null,
+    meanSquareColumns: n > 0 ? (n * settle(between)) / (k - 1) : null,
+    meanSquareError: n > 1 ? settle(error) / ((n - 1) * (k - 1)) : null,
+    meanSquareWithin: n > 0 ? settle(within) / (n * (k - 1)) : null,
   };
 }

@@ -26,6 +26,9 @@ const RUNAWAY = 15;
 /** A step of this size when the likelihood has stopped rising means that there is no maximum. */
 const RESTLESS = 1e-3;
 
+/** Share of its information at 0 below which a coefficient has none left. */
+const DRAINED = 1e-10;
+
 interface Look {
   readonly value: number;
   readonly score: Float64Array;
@@ -66,6 +69,7 @@ export function fitCox(design: CoxDesign, ties: Ties): ScaledFit {
     }
   }
   if (!converged) markRunaways(missing, beta, new Float64Array(p));
+  markDrained(missing, look.information, start.information, p);
   return {
     beta,
     covariance: inverse(restricted(look.information, p, missing)),
@@ -97,7 +101,9 @@ function halvedStep(sweep: CoxSweep, beta: Float64Array, step: Float64Array, loo
   for (let share = 1; share > 1e-4; share /= 2) {
     const trial = beta.map((b, j) => b + share * step[j]!);
     const next = lookAt(sweep, trial);
-    if (next.value >= look.value - 1e-12 * Math.abs(look.value)) return { beta: trial, look: next };
+    // Above 0 no partial likelihood gets: there a whole risk set has lost its weight to one outside it.
+    const isPossible = next.value <= 1e-6 * (1 + Math.abs(look.value));
+    if (isPossible && next.value >= look.value - 1e-12 * Math.abs(look.value)) return { beta: trial, look: next };
   }
   return undefined;
 }
@@ -123,6 +129,12 @@ function markRunaways(missing: (Missing | undefined)[], beta: Float64Array, step
   for (let j = 0; j < beta.length; j++) {
     if (missing[j] === undefined && (Math.abs(beta[j]!) > RUNAWAY || Math.abs(step[j]!) > RESTLESS)) missing[j] = 'monotone';
   }
+}
+
+/** Where one coefficient has run away, another whose information went with it has no estimate either. */
+function markDrained(missing: (Missing | undefined)[], now: Float64Array, first: Float64Array, p: number): void {
+  if (!missing.includes('monotone')) return;
+  for (let j = 0; j < p; j++) if (missing[j] === undefined && !(now[j * p + j]! > DRAINED * first[j * p + j]!)) missing[j] = 'monotone';
 }
 
 function dot(a: Float64Array, b: Float64Array): number {

@@ -1,6 +1,6 @@
 import { criticalValue } from '../critical-value';
 import { chiSquare, normal } from '../distributions';
-import { requireLevel, requireRange, type Interval, type Provenance } from '../result';
+import { representable, requireLevel, requireRange, type Interval, type Provenance } from '../result';
 import { quadraticForm, rowsOf } from './cholesky';
 import { coxDesign, type CoxData, type CoxDesign } from './cox-design';
 import { fitCox, type Missing, type ScaledFit } from './cox-newton';
@@ -103,9 +103,9 @@ function coefficient(name: string, estimate: number, missing: Missing | undefine
     const reason = REASONS[missing];
     return { name, estimate: null, se: null, p: null, reason, hazardRatio: { estimate: null, lower: null, upper: null, level, reason } };
   }
-  const ratio = (se: number): Interval => ({ estimate: Math.exp(estimate), lower: Math.exp(estimate - z * se), upper: Math.exp(estimate + z * se), level });
+  const ratio = (se: number): Interval => representable({ estimate: Math.exp(estimate), lower: Math.exp(estimate - z * se), upper: Math.exp(estimate + z * se), level });
   const se = Math.sqrt(variance);
-  const robustSe = robustVariance === undefined ? undefined : Math.sqrt(robustVariance);
+  const robustSe = robustVariance === undefined ? undefined : Math.sqrt(Math.max(0, robustVariance));
   const used = robustSe ?? se;
   return {
     name,
@@ -128,7 +128,8 @@ function robustCovariance(design: CoxDesign, ties: Ties, fit: ScaledFit, data: C
   for (let c = 0; c < clusters; c++) {
     for (let j = 0; j < p; j++) {
       shift[j] = 0;
-      for (let l = 0; l < p; l++) shift[j]! += fit.covariance[j * p + l]! * scores[c * p + l]!;
+      // A coefficient without an estimate has no variance; its scores need not be numbers.
+      for (let l = 0; l < p; l++) if (fit.missing[l] === undefined) shift[j]! += fit.covariance[j * p + l]! * scores[c * p + l]!;
     }
     for (let j = 0; j < p; j++) for (let l = 0; l < p; l++) out[j * p + l]! += shift[j]! * shift[l]!;
   }

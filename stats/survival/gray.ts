@@ -17,7 +17,8 @@ export interface GrayTest extends Provenance, ChiSquareTest {
   /** Events of the cause. */
   readonly events: number;
   readonly score: readonly number[];
-  readonly variance: number[][];
+  /** Covariance matrix of the score; null where it does not exist. */
+  readonly variance: number[][] | null;
 }
 
 /**
@@ -54,6 +55,10 @@ export function grayTest(data: GroupedCompetingFollowUp, options: { readonly cau
     score: [...score],
     variance: rowsOf(variance, k),
   };
+  if (!variance.every(Number.isFinite)) {
+    const reason = 'the pooled incidence reaches 1 while rows are still at risk, so the variance does not exist';
+    return { ...about, variance: null, chiSquare: null, df: 0, p: null, reason };
+  }
   if (df === 0) return { ...about, chiSquare: null, df, p: null, reason: 'no event of the cause at a time when two groups were at risk' };
   return { ...about, chiSquare: statistic, df, p: chiSquare.sf(statistic, df) };
 }

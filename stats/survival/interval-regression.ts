@@ -1,6 +1,6 @@
 import { criticalValue } from '../critical-value';
 import { chiSquare } from '../distributions';
-import { requireLevel, requireRange, type Interval, type Provenance } from '../result';
+import { representable, requireLevel, requireRange, type Interval, type Provenance } from '../result';
 import { factor, inverse, rowsOf } from './cholesky';
 import { informativeRows } from './interval-onset';
 import { fitWeibull, type WeibullFit } from './weibull-newton';
@@ -97,13 +97,17 @@ function describe({ parameters, information, logLikelihood }: WeibullFit, p: num
     coefficients: [...parameters.subarray(1, p + 1)],
     sigma,
     shape: 1 / sigma,
-    scale: Math.exp(parameters[0]!),
+    scale: finiteOrNull(Math.exp(parameters[0]!)), // covariates far from 0 put x = 0 far from every row
     logLikelihood,
     covariance: rowsOf(covariance, size),
     se: Array.from({ length: size }, (_, j) => Math.sqrt(covariance[j * size + j]!)),
     logHazardRatios: ratios,
-    hazardRatios: ratios.map(({ estimate, se }) => ({ estimate: Math.exp(estimate), lower: Math.exp(estimate - z * se), upper: Math.exp(estimate + z * se), level })),
+    hazardRatios: ratios.map(({ estimate, se }) => representable({ estimate: Math.exp(estimate), lower: Math.exp(estimate - z * se), upper: Math.exp(estimate + z * se), level })),
   };
+}
+
+function finiteOrNull(value: number): number | null {
+  return Number.isFinite(value) ? value : null;
 }
 
 function ratioTest(fit: WeibullFit, base: WeibullFit, df: number): ChiSquareTest {

@@ -81,10 +81,12 @@ interface Sums {
   readonly expected: Float64Array;
   readonly variance: Float64Array;
   events: number;
+  /** A weight S(t-)^rho was infinite: the curve had fallen to 0 and others entered later. */
+  endless: boolean;
 }
 
 function newSums(k: number): Sums {
-  return { n: new Uint32Array(k), observed: new Float64Array(k), expected: new Float64Array(k), variance: new Float64Array(k * k), events: 0 };
+  return { n: new Uint32Array(k), observed: new Float64Array(k), expected: new Float64Array(k), variance: new Float64Array(k * k), events: 0, endless: false };
 }
 
 function addStratum(sums: Sums, { time, event, entry }: FollowUp, group: Codes, rows: Uint32Array, rho: number): void {
@@ -103,7 +105,8 @@ function addStratum(sums: Sums, { time, event, entry }: FollowUp, group: Codes, 
     }
     if (d > 0) {
       const n = counter.total;
-      addTable(sums, eventsIn, counter.atRisk, d, n, rho === 0 ? 1 : Math.pow(pooled, rho));
+      if (pooled === 0 && rho < 0) sums.endless = true;
+      else addTable(sums, eventsIn, counter.atRisk, d, n, rho === 0 ? 1 : Math.pow(pooled, rho));
       pooled *= (n - d) / n;
       eventsIn.fill(0);
     }
@@ -129,14 +132,18 @@ function addTable(sums: Sums, eventsIn: Uint32Array, atRisk: Uint32Array, d: num
   }
 }
 
-function testOf({ observed, expected, variance }: Sums, k: number): ChiSquareTest {
+const ENDLESS = 'the weight is infinite where the curve has fallen to 0';
+
+function testOf({ observed, expected, variance, endless }: Sums, k: number): ChiSquareTest {
+  if (endless) return { chiSquare: null, df: 0, p: null, reason: ENDLESS };
   const difference = observed.map((o, a) => o - expected[a]!);
   const { chiSquare: statistic, df } = quadraticForm(difference, variance, k);
   if (df === 0) return { chiSquare: null, df, p: null, reason: 'no event at a time when two groups were at risk' };
   return { chiSquare: statistic, df, p: chiSquare.sf(statistic, df) };
 }
 
-function trendOf({ observed, expected, variance }: Sums, k: number, scores: readonly number[]): ChiSquareTest {
+function trendOf({ observed, expected, variance, endless }: Sums, k: number, scores: readonly number[]): ChiSquareTest {
+  if (endless) return { chiSquare: null, df: 0, p: null, reason: ENDLESS };
   let sum = 0;
   let spread = 0;
   let scale = 0;
