@@ -14,6 +14,8 @@ export interface Env {
   readonly SMTP_URL: string;
   readonly MAIL_FROM: string;
   readonly STORAGE: StorageSettings;
+  /** How many proxies of our own stand in front and add to X-Forwarded-For. */
+  readonly TRUSTED_PROXIES: number;
   readonly DEMO: boolean;
   readonly DEMO_MAILBOX_URL: string | null;
   readonly LOG_LEVEL: 'fatal' | 'error' | 'warn' | 'info' | 'debug' | 'trace' | 'silent';
@@ -57,6 +59,7 @@ const readers: { [K in keyof Env]: () => Env[K] } = {
   SMTP_URL: () => read('SMTP_URL', z.url({ protocol: /^smtps?$/ }), 'the smtp:// address of the mail server'),
   MAIL_FROM: () => read('MAIL_FROM', z.string().min(3), "the sender of letters, such as 'Tidemark <registry@tidemark.example>'"),
   STORAGE: readStorage,
+  TRUSTED_PROXIES: () => Number(read('TRUSTED_PROXIES', z.string().regex(/^[0-5]$/).default('0'), 'how many proxies of your own stand in front, 0 to 5')),
   DEMO: () => read('DEMO', z.enum(['0', '1']).default('0'), '1 for the demonstration, else 0') === '1',
   DEMO_MAILBOX_URL: () => read('DEMO_MAILBOX_URL', httpUrl.optional(), 'the address of the demonstration’s mail capture') ?? null,
   LOG_LEVEL: () =>

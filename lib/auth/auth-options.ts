@@ -3,6 +3,7 @@ import type { NextAuthOptions } from 'next-auth';
 import Credentials from 'next-auth/providers/credentials';
 import { env } from '@/lib/env';
 import { log } from '@/lib/log';
+import { sourceOf } from './source';
 import { endSession, openSession, sessionSeconds, verifySignIn } from './sign-in';
 
 /** What the cookie carries: a random session token and nothing else. The data base is asked each time. */
@@ -12,10 +13,9 @@ declare module 'next-auth/jwt' {
   }
 }
 
-/** Where a request came from: the last hop the reverse proxy vouches for. */
-const originOf = (headers: Record<string, unknown> | undefined): string => {
+const forwardedFor = (headers: Record<string, unknown> | undefined): string | null => {
   const forwarded = headers?.['x-forwarded-for'];
-  return typeof forwarded === 'string' ? (forwarded.split(',').at(-1)?.trim() ?? 'unknown') : 'unknown';
+  return typeof forwarded === 'string' ? forwarded : null;
 };
 
 /** The only words that reach the browser from here; anything else is one plain refusal. */
@@ -23,7 +23,7 @@ async function authorise(credentials: { email?: string; password?: string } | un
   if (!credentials?.email || !credentials.password || credentials.password.length > 256) return null;
   let account: string | null;
   try {
-    account = await verifySignIn({ email: credentials.email, password: credentials.password, from: originOf(headers) });
+    account = await verifySignIn({ email: credentials.email, password: credentials.password, from: sourceOf(forwardedFor(headers)) });
   } catch (error) {
     log().error({ code: (error as { code?: unknown }).code ?? 'fault', at: 'sign-in' });
     return null;

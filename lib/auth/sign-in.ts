@@ -1,9 +1,11 @@
 import { systemActor } from './roles';
 import { isPassword } from './password';
-import { mayTry } from './throttle';
+import { unknownSource } from './source';
+import { clearTries, mayTry, takeBackTry } from './throttle';
 import { newToken, tokenHash } from './token';
 import { withWork } from '@/lib/work/with-work';
 import { secondsAfter } from '@/lib/work/time';
+import type { Work } from '@/lib/work/work';
 
 /** Sessions end after 12 hours whatever happens; idle ones sooner (see idleSeconds). */
 export const sessionSeconds = 12 * 3600;
@@ -16,19 +18,46 @@ export interface SignInTry {
 }
 
 /**
+ * Wrong tries that are let through in a quarter of an hour. Where the source is known, it meets a narrow limit on one
+ * address and a wide one on all of them; the address by itself has a limit that one stranger cannot use up. Where nobody
+ * vouches for the source, everybody shares it: a limit on it would let one guesser shut everybody out, so only the
+ * address's own counts. Common practice; NIST SP 800-63B asks for no more than 100 wrong tries on one account.
+ */
+const within = { withinSeconds: 900 } as const;
+const limits = { addressFromSource: 10, address: 30, source: 60 } as const;
+
+const bucketsOf = (address: string, from: string) => ({ pair: `sign-in ${address} from ${from}`, address: `sign-in ${address}`, source: `sign-in from ${from}` });
+
+/** Counts a try in every bucket that it falls into. */
+async function countTry(work: Work, address: string, from: string): Promise<boolean> {
+  const buckets = bucketsOf(address, from);
+  if (from !== unknownSource && !(await mayTry(work, { bucket: buckets.pair, most: limits.addressFromSource, ...within }))) return false;
+  if (!(await mayTry(work, { bucket: buckets.address, most: limits.address, ...within }))) return false;
+  return from === unknownSource || mayTry(work, { bucket: buckets.source, most: limits.source, ...within });
+}
+
+/** A right password is no try at guessing; what others tried on the address stays counted. */
+async function forgetTry(work: Work, address: string, from: string): Promise<void> {
+  const buckets = bucketsOf(address, from);
+  if (from === unknownSource) return clearTries(work, buckets.address);
+  await clearTries(work, buckets.pair);
+  await takeBackTry(work, buckets.address);
+  await takeBackTry(work, buckets.source);
+}
+
+/**
  * Checks an address and a password.
  * @returns the account id; 'too-many' when tried too often; null when they do not match (which of the two is not said).
  */
 export async function verifySignIn({ email, password, from }: SignInTry): Promise<string | 'too-many' | null> {
   const address = email.trim().toLowerCase();
+  const fits = await withWork(systemActor(), 'account.sign-in', async (work) => {
+    const counted = await countTry(work, address, from);
+    if (!counted) await work.event('sign-in', 'refused', { why: 'too many tries' });
+    return counted;
+  });
+  if (!fits) return 'too-many';
   return withWork(systemActor(), 'account.sign-in', async (work) => {
-    const fits =
-      (await mayTry(work, { bucket: `sign-in ${address}`, most: 10, withinSeconds: 900 })) &&
-      (await mayTry(work, { bucket: `sign-in from ${from}`, most: 60, withinSeconds: 900 }));
-    if (!fits) {
-      await work.event('sign-in', 'refused', { why: 'too many tries' });
-      return 'too-many';
-    }
     const [found] = await work.sql<{ account_id: string; password_hash: string | null }>(
       `select c.account_id, c.password_hash from credential c join account a on a.id = c.account_id where c.email = ? and a.state = 'active'`,
       [address],
@@ -36,7 +65,7 @@ export async function verifySignIn({ email, password, from }: SignInTry): Promis
     const right = await isPassword(found?.password_hash ?? null, password);
     await work.event('sign-in', right && found ? found.account_id : 'refused', right ? {} : { why: 'address or password' });
     if (!right || !found) return null;
-    await work.sql('delete from rate_hit where bucket = ?', [tokenHash(`sign-in ${address}`)]);
+    await forgetTry(work, address, from);
     return found.account_id;
   });
 }

@@ -1,5 +1,6 @@
 import 'server-only';
 import { createHash, randomUUID } from 'node:crypto';
+import { sourceOf } from '@/lib/auth/source';
 import { env } from '@/lib/env';
 import { Refusal } from '@/lib/work/refusal';
 
@@ -9,8 +10,8 @@ const bodyLimitBytes = 262_144;
 /** A reference that the answer, the audit trail and the log share. */
 export const newReference = (): string => randomUUID();
 
-/** Where a request came from, as far as the proxy in front vouches for it. */
-export const originOf = (request: Request): string => request.headers.get('x-forwarded-for')?.split(',').at(-1)?.trim() ?? 'unknown';
+/** Where a request came from, as far as our own proxies vouch for it. */
+export const originOf = (request: Request): string => sourceOf(request.headers.get('x-forwarded-for'));
 
 /** Only our own pages may write: another site's form or script is refused. */
 export function requireOwnOrigin(request: Request): void {
