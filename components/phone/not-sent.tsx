@@ -10,5 +10,9 @@ export function NotSent({ problem, isKept = false }: { problem: ProblemDetails |
   const offline = problem.code === 'no-connection';
   const sentence = offline ? (isKept ? onPhone : onPage) : problem.detail;
   const more = offline ? [] : (problem.fields ?? []).map(({ sentence: words }) => words).filter((words) => words !== sentence);
-  return <ErrorSummary title={offline ? 'Waiting for the line' : 'Not saved'} problems={[sentence, ...more].map((words) => ({ sentence: words }))} />;
+  return (
+    <div className="mb-5">
+      <ErrorSummary title={offline ? 'Waiting for the line' : 'Not saved'} problems={[sentence, ...more].map((words) => ({ sentence: words }))} />
+    </div>
+  );
 }

@@ -78,7 +78,10 @@ function ReportSteps({ today, site, owner, left: { found, isRead, forget } }: Re
   const isKept = useKeepUnsent({ owner, kind: 'report', key: clientKey, value, isRead });
   useKeepOpen(isTyped && !isKept);
 
-  const tick = (code: ReportedSign, on: boolean) => setSaid({ ...said, signs: on ? [...said.signs, code] : said.signs.filter((sign) => sign !== code) });
+  const tick = (code: ReportedSign, on: boolean) => {
+    setMissing(null);
+    setSaid({ ...said, signs: on ? [...said.signs, code] : said.signs.filter((sign) => sign !== code) });
+  };
   const more = () => {
     setStep('more');
     window.scrollTo(0, 0);
@@ -120,24 +123,26 @@ function ReportSteps({ today, site, owner, left: { found, isRead, forget } }: Re
         action={
           said.signs.length > 0 ? (
             <>
+              {/* Beside the thumb: at the head of the list it would be off the screen of whoever ticks the last sign. */}
+              <div aria-live="assertive">{verdict && isUrgent ? <UrgentWords verdict={verdict} site={site} /> : null}</div>
               {sendButton}
               <Button size="phone" wide onClick={more}>
                 Say more first
               </Button>
             </>
-          ) : (
-            <Button kind="primary" size="phone" wide onClick={more}>
-              None of these: go on
-            </Button>
-          )
+          ) : undefined
         }
       >
         {takenUp}
         <NotSent problem={sending.problem} isKept={isKept} />
         <h1>First: is any of this so?</h1>
         <p className="phone-lede">{NOT_WATCHED} Call your local emergency number.</p>
-        <div aria-live="assertive">{verdict && isUrgent ? <UrgentWords verdict={verdict} site={site} /> : null}</div>
         <Signs signs={urgentSigns} chosen={said.signs} onTick={tick} label="Signs that must not wait" />
+        {said.signs.length === 0 ? (
+          <Button className="mt-6" kind="primary" size="phone" wide onClick={more}>
+            None of these: go on
+          </Button>
+        ) : null}
       </TaskFrame>
     );
   return (
@@ -146,7 +151,7 @@ function ReportSteps({ today, site, owner, left: { found, isRead, forget } }: Re
       <NotSent problem={sending.problem} isKept={isKept} />
       {missing ? <NotSent problem={{ title: 'Not sent', status: 422, code: 'invalid', detail: missing }} /> : null}
       <h1>What do you notice?</h1>
-      <div aria-live="polite">{verdict && isUrgent ? <UrgentWords verdict={verdict} site={site} /> : null}</div>
+      <div className="mt-4" aria-live="polite">{verdict && isUrgent ? <UrgentWords verdict={verdict} site={site} /> : null}</div>
       <Signs signs={otherSigns} chosen={said.signs} onTick={tick} label="What you notice in your arm" />
       <div className="mt-7 grid gap-6">
         <RadioGroup
@@ -171,7 +176,10 @@ function ReportSteps({ today, site, owner, left: { found, isRead, forget } }: Re
             { value: 'other', label: 'Yes, and elsewhere in the arm' },
           ]}
           value={said.sore}
-          onChange={(event) => setSaid({ ...said, sore: event.target.value as NonNullable<Said['sore']> })}
+          onChange={(event) => {
+            setMissing(null);
+            setSaid({ ...said, sore: event.target.value as NonNullable<Said['sore']> });
+          }}
         />
         {said.sore === 'trained' || said.sore === 'other' ? (
           <Stepper size="small" label="Days sore" value={said.soreDays} min={1} max={60} onChange={(soreDays) => setSaid({ ...said, soreDays })} />
@@ -199,7 +207,7 @@ function Signs({ signs, chosen, onTick, label }: { signs: typeof urgentSigns | t
 /** The level's own words, shown on the device itself: no line is needed to read them. */
 function UrgentWords({ verdict, site }: { verdict: SafetyVerdict; site: ReportSymptomsProps['site'] }) {
   return (
-    <div className="mt-4">
+    <div className="text-[16px] leading-[23px]">
       <Caution title={`${verdict.participantTitle}.`}>
         {verdict.participantText} The site is on <a className="font-semibold" href={`tel:${site.phone.replace(/[^\d+]/g, '')}`}>{site.phone}</a>.
       </Caution>

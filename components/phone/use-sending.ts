@@ -4,6 +4,13 @@ import { ProblemError, send, type ProblemDetails, type SendOptions } from '../ap
 
 const retryMs = 30_000;
 
+/** FNV-1a, 32 bits in hex: tells one content from another under one key. */
+function fingerprint(text: string): string {
+  let hash = 0x811c9dc5;
+  for (let index = 0; index < text.length; index += 1) hash = Math.imul(hash ^ text.charCodeAt(index), 0x01000193);
+  return (hash >>> 0).toString(16).padStart(8, '0');
+}
+
 export interface Sending<Answer> {
   readonly atWork: boolean;
   readonly problem: ProblemDetails | null;
@@ -32,7 +39,8 @@ export function useSending<Answer>(path: string, key: string, onDone: (answer: A
       running.current = true;
       setState({ atWork: true, problem: null });
       try {
-        const options: SendOptions = { idempotencyKey: key };
+        // The same words sent again are the same request; other words, after an answer of ours that got lost, are another.
+        const options: SendOptions = { idempotencyKey: `${key}-${fingerprint(JSON.stringify(body))}` };
         const answer = await send<Answer>('POST', path, body, options);
         waiting.current = null;
         setState({ atWork: false, problem: null });

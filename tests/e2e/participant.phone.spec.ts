@@ -40,6 +40,13 @@ test('a session is logged: arm check first, advice on a jump, pounds noticed, th
 
   await test.step('a jump is answered by the rule, and the truth can be logged all the same', async () => {
     const load = page.getByRole('textbox', { name: /^Weight/ });
+    const proposed = await load.inputValue();
+    for (const [typed, sentence] of [['500', 'You typed 500; 0 to 150 kg can be kept.'], ['-3', 'You typed -3; 0 to 150 kg can be kept.'], ['abc', 'abc is not a figure.']] as const) {
+      await load.fill(typed);
+      await page.getByRole('button', { name: 'Next: how it felt' }).click();
+      await expect(page.getByText(sentence)).toBeVisible();
+      await expect(load).toHaveValue(proposed);
+    }
     await load.fill(String(jumpKg).replace('.', ','));
     await load.press('Tab');
     await page.getByRole('button', { name: 'Next: how it felt' }).click();

@@ -21,13 +21,15 @@ export interface LoadStepProps {
   arm: ReturnType<typeof armState>;
   onChange: (change: Partial<DraftSet>) => void;
   onLeaveOut: () => void;
+  /** Whether what was typed last could not be kept. */
+  onFault: (isFaulty: boolean) => void;
 }
 
 const sideWords = { both: 'both arms', left: 'left arm', right: 'right arm' } as const;
 const plain = (value: number): string => String(Number(value.toFixed(2)));
 
 /** One exercise: what was lifted, how often. The proposal is last time's; it counts only once it is confirmed. */
-export function LoadStep({ view, set, index, count, on, arm, onChange, onLeaveOut }: LoadStepProps) {
+export function LoadStep({ view, set, index, count, on, arm, onChange, onLeaveOut, onFault }: LoadStepProps) {
   const last = view.last[set.exercise];
   return (
     <>
@@ -43,10 +45,10 @@ export function LoadStep({ view, set, index, count, on, arm, onChange, onLeaveOu
           ? `Last time, ${formatDate(last.on)}: ${last.equipment === 'body weight' ? 'body weight' : last.equipment === 'band' ? `band level ${plain(last.typed)}` : `${plain(last.typed)} ${last.unit}`}, ${last.repetitions} lifts, ${last.setCount} sets.`
           : 'Your first time.'}
       </p>
-      {set.equipment === 'body weight' ? null : <Load {...{ view, set, on, arm, onChange }} />}
+      {set.equipment === 'body weight' ? null : <Load {...{ view, set, on, arm, onChange, onFault }} />}
       <div className="mt-6 grid gap-3">
-        <Stepper size="small" label="Lifts in a row" value={set.repetitions} min={1} max={100} onChange={(repetitions) => onChange({ repetitions })} />
-        <Stepper size="small" label="Sets" value={set.setCount} min={1} max={20} onChange={(setCount) => onChange({ setCount })} />
+        <Stepper size="small" label="Lifts in a row" value={set.repetitions} min={1} max={100} onFault={onFault} onChange={(repetitions) => onChange({ repetitions })} />
+        <Stepper size="small" label="Sets" value={set.setCount} min={1} max={20} onFault={onFault} onChange={(setCount) => onChange({ setCount })} />
       </div>
       <HowLifted {...{ view, set, onChange }} />
       <p className="mt-6 text-[16px] leading-[23px] text-ink-2">
@@ -59,7 +61,7 @@ export function LoadStep({ view, set, index, count, on, arm, onChange, onLeaveOu
   );
 }
 
-function Load({ view, set, on, arm, onChange }: Pick<LoadStepProps, 'view' | 'set' | 'on' | 'arm' | 'onChange'>) {
+function Load({ view, set, on, arm, onChange, onFault }: Pick<LoadStepProps, 'view' | 'set' | 'on' | 'arm' | 'onChange' | 'onFault'>) {
   const isBand = set.equipment === 'band';
   const allowed = allowedFor(view, set, on, arm);
   const loadKg = massToKg(set.typed, set.unit);
@@ -78,6 +80,7 @@ function Load({ view, set, on, arm, onChange }: Pick<LoadStepProps, 'view' | 'se
           min={isBand ? 1 : 0}
           {...(isBand ? {} : { unit: set.unit })}
           outside={isOver}
+          onFault={onFault}
           onChange={(typed) => onChange({ typed: Number(typed.toFixed(2)), isTouched: true, alreadyLifted: false })}
         />
       </div>

@@ -47,6 +47,10 @@ function LogSteps({ view, owner, left: { found, isRead, forget } }: { view: LogV
   const [draft, setDraft] = useState<Draft>(() => found?.value.draft ?? startDraft(view));
   const [step, setStep] = useState<Step>(found?.value.step ?? { at: 'arm' });
   const [isTakenUp, setTakenUp] = useState(found !== null);
+  /** What was typed last could not be kept: the first press after it stops, so that the sentence is read. */
+  const [isFaulty, setFaulty] = useState(false);
+  // The number it has when it is begun: once it is saved, the next would already be counted.
+  const [title] = useState(`Session ${view.sessionNumber}`);
   const [errors, setErrors] = useState<{ arm?: string; effort?: string; soreness?: string; sets?: string }>({});
   const [flag, setFlag] = useState<TrainingFlag | null>(null);
   const go = (next: Step) => {
@@ -79,6 +83,7 @@ function LogSteps({ view, owner, left: { found, isRead, forget } }: { view: LogV
     else go({ at: 'load', index: 0 });
   };
   const afterLoad = (index: number, set: DraftSet) => {
+    if (isFaulty) return setFaulty(false);
     const found = set.alreadyLifted ? null : flagFor(view, set, draft.on, draft.armCheck);
     if (found) return setFlag(found);
     go({ at: 'felt', index });
@@ -99,8 +104,11 @@ function LogSteps({ view, owner, left: { found, isRead, forget } }: { view: LogV
     if (draft.soreness === null) return setErrors({ soreness: 'Say whether you are sore: change the first exercise.' });
     void sending.start(toInput(draft, clientKey));
   };
-  const back = (title: string) => ({ href: '/week', title });
-  const title = `Session ${view.sessionNumber}`;
+  const answerArm = (armCheck: NonNullable<Draft['armCheck']>) => {
+    setErrors({});
+    setDraft({ ...draft, armCheck });
+  };
+  const back = (of: string) => ({ href: '/week', title: of });
   const day = formatNearDate(draft.on);
   const takenUp = isTakenUp ? <TakenUp onForget={forget} /> : null;
 
@@ -118,7 +126,8 @@ function LogSteps({ view, owner, left: { found, isRead, forget } }: { view: LogV
         {takenUp}
         <NotSent problem={armSending.problem} isKept={isKept} />
         {view.trainingHeld ? <HoldWords view={view} /> : null}
-        <ArmStep view={view} armCheck={draft.armCheck} onArmCheck={(armCheck) => setDraft({ ...draft, armCheck })} on={draft.on} onDay={(on) => setDraft({ ...draft, on: on || view.today })} error={errors.arm} />
+        {view.baselineOn === null ? <NotYetMeasured view={view} /> : null}
+        <ArmStep view={view} armCheck={draft.armCheck} onArmCheck={answerArm} on={draft.on} onDay={(on) => setDraft({ ...draft, on: on || view.today })} error={errors.arm} />
         {armSending.isWaiting ? (
           <Button kind="link" className="pad-44 mt-3" onClick={() => go({ at: 'load', index: 0 })}>
             Go on without the line; it is sent with the session
@@ -203,7 +212,7 @@ function LogSteps({ view, owner, left: { found, isRead, forget } }: { view: LogV
     >
       {takenUp}
       {step.at === 'load' ? (
-        <LoadStep key={index} {...{ view, set, index, count: draft.sets.length, on: draft.on, arm }} onChange={(part) => change(index, part)} onLeaveOut={() => leaveOut(index)} />
+        <LoadStep key={index} {...{ view, set, index, count: draft.sets.length, on: draft.on, arm }} onChange={(part) => change(index, part)} onLeaveOut={() => leaveOut(index)} onFault={setFaulty} />
       ) : (
         <FeltStep
           key={index}
@@ -228,6 +237,16 @@ function LogSteps({ view, owner, left: { found, isRead, forget } }: { view: LogV
         }}
       />
     </TaskFrame>
+  );
+}
+
+function NotYetMeasured({ view }: { view: LogView }) {
+  return (
+    <div className="phone-say !mt-0 mb-5" role="note">
+      <p>
+        <b>Your arms have not been measured yet.</b> In the study, training begins after {view.site.name} has measured both. If you have already trained, log it all the same.
+      </p>
+    </div>
   );
 }
 
