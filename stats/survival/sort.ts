@@ -42,7 +42,7 @@ export function orderOf(keys: Float64Array, room?: SortRoom, order: Uint32Array 
   if (sorted) return order;
   if (whole && high - low <= 4 * n + 1024) return countingOrder(keys, low, high - low + 1, order);
   if (n <= 256) return order.sort((a, b) => keys[a]! - keys[b]! || a - b);
-  return radixOrder(keys, low < 0, room ?? roomToSort(n), order);
+  return radixOrder(keys, low < 0, room, order);
 }
 
 /** Rows in the order of a small integer code, keeping the given order within a code. */
@@ -76,15 +76,15 @@ function countingOrder(keys: Float64Array, low: number, range: number, order: Ui
  * doubles already sort like unsigned integers; with negative keys present the
  * sign bit is flipped, and all bits of the negative ones.
  */
-function radixOrder(keys: Float64Array, hasNegative: boolean, room: SortRoom, order: Uint32Array): Uint32Array {
+function radixOrder(keys: Float64Array, hasNegative: boolean, room: SortRoom | undefined, order: Uint32Array): Uint32Array {
   const n = keys.length;
-  const words = sortableWords(keys, hasNegative, room.words);
+  const words = sortableWords(keys, hasNegative, room);
   const counts = new Uint32Array(PASSES * DIGITS);
   for (let i = 0; i < n; i++) {
     for (let pass = 0; pass < PASSES; pass++) counts[pass * DIGITS + digit(words, i, pass)]!++;
   }
   let from = order;
-  let to = room.rows;
+  let to = room?.rows ?? new Uint32Array(n);
   for (let pass = 0; pass < PASSES; pass++) {
     const next = counts.subarray(pass * DIGITS, (pass + 1) * DIGITS);
     if (next[digit(words, 0, pass)] === n) continue; // every key has this digit in common
@@ -123,9 +123,10 @@ function digit(words: Uint32Array, row: number, pass: number): number {
   }
 }
 
-function sortableWords(keys: Float64Array, hasNegative: boolean, words: Uint32Array): Uint32Array {
+function sortableWords(keys: Float64Array, hasNegative: boolean, room: SortRoom | undefined): Uint32Array {
   const own = wordsOf(keys);
   if (!hasNegative && !keys.includes(-0) /* includes() takes 0 and -0 as one */) return own;
+  const words = room?.words ?? new Uint32Array(2 * keys.length);
   for (let i = 0; i < keys.length; i++) {
     const high = own[2 * i + 1]!;
     const negative = high >>> 31 === 1 && keys[i] !== 0; // -0 goes with 0
