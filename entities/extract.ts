@@ -19,6 +19,7 @@ export const ExtractSchema = defineEntity({
     files: p.json<ExtractFile[]>(),
     removed: p.json<string[]>(),
     counts: p.json<Record<string, number>>(),
+    disclosure: p.json<ExtractDisclosure>().nullable(),
     failure: p.string().nullable(),
     requestedBy: p.uuid(),
     requestedLabel: p.string(),
@@ -27,6 +28,18 @@ export const ExtractSchema = defineEntity({
   },
 });
 export type Extract = InferEntity<typeof ExtractSchema>;
+
+/** How far people can be told apart by the marked columns of the people's file, and what had to be withheld for it. */
+export interface ExtractDisclosure {
+  /** Fewest people who must share every marked value. */
+  readonly atLeast: number;
+  readonly people: number;
+  /** Size of the smallest group in the file as written. */
+  readonly smallestGroup: number;
+  readonly peopleWithAny: number;
+  /** Marked columns in the order of withholding, with the values withheld. */
+  readonly withheld: readonly { readonly column: string; readonly label: string; readonly values: number }[];
+}
 
 /** One file of an extract as the ledger keeps it. */
 export interface ExtractFile {
@@ -52,9 +65,9 @@ export function reportProgress(extract: Extract, share: number): void {
 }
 
 /** Names the files. False when another attempt was first: its files stand and these must go. */
-export function finishExtract(extract: Extract, made: { files: ExtractFile[]; counts: Record<string, number>; removed: string[]; asOf: Date; at: Date }): boolean {
+export function finishExtract(extract: Extract, made: { files: ExtractFile[]; counts: Record<string, number>; disclosure: ExtractDisclosure; removed: string[]; asOf: Date; at: Date }): boolean {
   if (extract.state === 'ready') return false;
-  Object.assign(extract, { files: made.files, counts: made.counts, removed: made.removed, asOf: made.asOf, readyAt: made.at, state: 'ready', progress: 100, failure: null });
+  Object.assign(extract, { files: made.files, counts: made.counts, disclosure: made.disclosure, removed: made.removed, asOf: made.asOf, readyAt: made.at, state: 'ready', progress: 100, failure: null });
   return true;
 }
 

@@ -3,6 +3,7 @@ import type { ExtractView } from '@/lib/extracts/view-extract';
 import { countOf, formatMoment } from '../ui/format';
 import { Ledger, type LedgerStep } from '../ui/ledger';
 import { MarginPart } from '../ui/page';
+import { PickedOut } from './picked-out';
 
 const at = (moment: string): string => formatMoment(new Date(moment), 'UTC');
 
@@ -17,7 +18,7 @@ function stepsOf({ state, requestedAt, requestedLabel, purpose, asOf, readyAt }:
 
 /** From asking to the files, who is in it, and what was left out. */
 export function ExtractMargin({ extract }: { extract: ExtractView }) {
-  const { counts, removed, state } = extract;
+  const { counts, disclosure, removed, state } = extract;
   return (
     <>
       <MarginPart title="From asking to the files">
@@ -32,8 +33,9 @@ export function ExtractMargin({ extract }: { extract: ExtractView }) {
           </p>
         </MarginPart>
       ) : null}
+      {disclosure ? <PickedOut disclosure={disclosure} isDone /> : null}
       <MarginPart title="Days, not dates">
-        <p className="t-small mt-1.5 text-ink-2">Every date becomes days from that person’s enrolment: day 1 is the day of enrolment and there is no day 0. The season is gone with it.</p>
+        <p className="t-small mt-1.5 text-ink-2">Every date becomes days from that person’s enrolment: day 1 is the day of enrolment and there is no day 0. The season is gone with it. The day of surgery is a band of weeks before enrolment.</p>
       </MarginPart>
       {removed.length > 0 ? (
         <MarginPart title="Left out of every file">

@@ -61,9 +61,6 @@ function shuffled<T>(list: readonly T[]): T[] {
   return cards;
 }
 
-/** The counts alone, for the preview. */
-export const countSharing = async (work: Work): Promise<PeopleCounts> => countPeople(await readPeople(work));
-
 /** Who is in this extract, each under a new random number, with the sites numbered at random. */
 export async function choosePeople(work: Work): Promise<{ people: PersonOfExtract[]; counts: PeopleCounts }> {
   const rows = await readPeople(work);

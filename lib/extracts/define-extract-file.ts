@@ -11,7 +11,7 @@ export interface ExtractColumn {
   readonly kind: 'integer' | 'number' | 'code' | 'key' | 'yes or no' | 'study number';
   readonly unit?: string;
   readonly codes?: readonly string[];
-  /** An SQL expression: r is the row, p its participant, site its site, person its study number. */
+  /** An SQL expression: r is the row, p its participant, site its site, entry the protocol enrolled under, person the study number. */
   readonly sql: string | Readonly<Record<Profile, string>>;
   /** Profiles that carry the column; both unless said. */
   readonly only?: Profile;
@@ -37,7 +37,7 @@ export const columnsFor = (file: ExtractFileDefinition, profile: Profile): Extra
 /** The column every file starts with. */
 const studyNumber: ExtractColumn = {
   name: 'study_number',
-  label: 'Random number of the person in this extract; another extract has other numbers',
+  label: 'Random number of the person in this extract',
   from: ['participant.code'],
   kind: 'study number',
   sql: 'person.study_number',
@@ -95,3 +95,11 @@ export const day = (name: string, about: About & { moment?: true }): ExtractColu
   unit: 'study day',
   sql: studyDay(about.moment ? atSite(sqlOf(about)) : sqlOf(about)),
 });
+
+/**
+ * A day laid out by the schedule. Where the protocol counts from surgery it would tell the day of surgery, and is left empty.
+ */
+export const scheduleDay = (name: string, about: { label: string; from: string }): ExtractColumn => {
+  const column = day(name, about);
+  return { ...column, label: `${about.label}; empty where the schedule counts from surgery`, sql: `case when not entry.counts_from_surgery then ${String(column.sql)} end` };
+};

@@ -53,7 +53,7 @@ export async function prepareExtract({ actor, extractId, attempt, storage, now }
       { isolation: IsolationLevel.REPEATABLE_READ, now: asOf },
     );
     const isFirst = await change(async (work) =>
-      finishExtract(await find(work, extractId), { files: written.files, counts: { ...written.counts }, removed: leftOutBy(begun.profile), asOf, at: work.now }),
+      finishExtract(await find(work, extractId), { files: written.files, counts: { ...written.counts }, disclosure: written.disclosure, removed: leftOutBy(begun.profile), asOf, at: work.now }),
     );
     if (!isFirst) await clearAway();
   } catch (error) {

@@ -1,7 +1,9 @@
 import type { Work } from '@/lib/work/work';
-import { countSharing, type PeopleCounts } from './choose-people';
+import type { ExtractDisclosure } from '@/entities/extract';
+import { choosePeople, type PeopleCounts } from './choose-people';
 import { columnsFor } from './define-extract-file';
 import { dictionary, type DataClass, type Entry, type Treatment } from './dictionary';
+import { readPeopleSafely } from './disclosure';
 import { extractFiles } from './files';
 import type { Profile } from './input';
 
@@ -18,6 +20,8 @@ export interface VariableRow {
 export interface ExtractPreview {
   readonly profile: Profile;
   readonly people: PeopleCounts;
+  /** What the check would withhold now. */
+  readonly disclosure: ExtractDisclosure;
   readonly groups: readonly { readonly title: string; readonly rows: readonly VariableRow[] }[];
   readonly files: readonly { readonly name: string; readonly about: string; readonly columns: number }[];
 }
@@ -44,9 +48,12 @@ function groupOf(table: keyof typeof dictionary, profile: Profile): ExtractPrevi
 
 /** The dictionary under one profile, and who would be in it now. */
 export async function previewExtract(work: Work, { profile }: { profile: Profile }): Promise<ExtractPreview> {
+  const { people, counts } = await choosePeople(work);
+  const { disclosure } = await readPeopleSafely(work, profile, people);
   return {
     profile,
-    people: await countSharing(work),
+    people: counts,
+    disclosure,
     groups: (Object.keys(dictionary) as (keyof typeof dictionary)[]).map((table) => groupOf(table, profile)),
     files: extractFiles.map((file) => ({ name: file.name, about: file.about, columns: columnsFor(file, profile).length })),
   };

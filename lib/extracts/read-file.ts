@@ -21,12 +21,17 @@ export const bindPeople = (people: readonly PersonOfExtract[]): string[] => [
 export function statementOf(file: ExtractFileDefinition, profile: Profile): string {
   const columns = columnsFor(file, profile).map(({ name, sql }) => `${typeof sql === 'string' ? sql : sql[profile]} as ${name}`);
   const owner = file.table === 'participant' ? 'r.id' : 'r.participant_id';
-  return `with person as materialized (select * from unnest(?::uuid[], ?::text[], ?::int[], ?::date[]) as t(participant_id, study_number, site_number, until))
+  return `with person as materialized (select * from unnest(?::uuid[], ?::text[], ?::int[], ?::date[]) as t(participant_id, study_number, site_number, until)),
+      entry as materialized (select id, number, document ->> 'anchor' = 'surgery' as counts_from_surgery from protocol_version)
     select ${columns.join(', ')}
-    from person join ${file.table} r on ${owner} = person.participant_id join participant p on p.id = person.participant_id join site on site.id = p.site_id ${file.joins ?? ''}
+    from person join ${file.table} r on ${owner} = person.participant_id join participant p on p.id = person.participant_id join site on site.id = p.site_id join entry on entry.id = p.protocol_version_id ${file.joins ?? ''}
     where (person.until is null or ${file.on} <= person.until)${file.where ? ` and ${file.where}` : ''}
     order by person.study_number, ${file.order}`;
 }
+
+/** One file's rows at once: for the people of an extract, who must be looked at together. */
+export const readFile = (work: Work, file: ExtractFileDefinition, profile: Profile, people: readonly PersonOfExtract[]): Promise<Record<string, unknown>[]> =>
+  work.sql<Record<string, unknown>>(statementOf(file, profile), bindPeople(people));
 
 /** The part of the ORM's transaction that streams. */
 interface Streams {

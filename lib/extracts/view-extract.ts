@@ -1,4 +1,4 @@
-import { ExtractSchema, type Extract } from '@/entities/extract';
+import { ExtractSchema, type Extract, type ExtractDisclosure } from '@/entities/extract';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
 import type { Profile } from './input';
@@ -20,6 +20,8 @@ export interface ExtractView {
   readonly asOf: string;
   readonly readyAt: string | null;
   readonly counts: Readonly<Record<string, number>>;
+  /** Once it is ready. */
+  readonly disclosure: ExtractDisclosure | null;
   readonly removed: readonly string[];
   readonly files: readonly { readonly name: string; readonly rowCount: number; readonly byteCount: number; readonly sha256: string }[];
   readonly version: number;
@@ -39,6 +41,7 @@ export const toExtractView = (extract: Extract): ExtractView => ({
   asOf: extract.asOf.toISOString(),
   readyAt: extract.readyAt?.toISOString() ?? null,
   counts: extract.counts,
+  disclosure: extract.disclosure ?? null,
   removed: extract.removed,
   files: extract.files.map(({ name, rowCount, byteCount, sha256 }) => ({ name, rowCount, byteCount, sha256 })),
   version: extract.version,

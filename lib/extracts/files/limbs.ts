@@ -1,6 +1,6 @@
 import { swellingDefinitions } from '@/instruments/swelling';
 import { otherPositions } from '@/lib/measurement/input';
-import { code, day, defineExtractFile, integer, key, number, yesOrNo, type ExtractColumn } from '../define-extract-file';
+import { code, day, defineExtractFile, integer, key, number, scheduleDay, yesOrNo, type ExtractColumn } from '../define-extract-file';
 
 /** Visits are numbered by target day within a person; other files name a visit by this number. */
 export const visitPlace = '(select id, row_number() over (partition by participant_id order by target_on, key, id)::int as number from visit)';
@@ -18,9 +18,9 @@ export const visits = defineExtractFile({
     { ...ofVisit, label: 'Number of the visit within the person' },
     key('visit', { label: 'Visit of the schedule', from: 'visit.key' }),
     yesOrNo('unscheduled', { label: 'Added outside the schedule', from: 'visit.unscheduled_reason', sql: 'r.unscheduled_reason is not null' }),
-    day('target_day', { label: 'Target day', from: 'visit.target_on' }),
-    day('opens_day', { label: 'First day of the window', from: 'visit.opens_on' }),
-    day('closes_day', { label: 'Last day of the window', from: 'visit.closes_on' }),
+    scheduleDay('target_day', { label: 'Target day', from: 'visit.target_on' }),
+    scheduleDay('opens_day', { label: 'First day of the window', from: 'visit.opens_on' }),
+    scheduleDay('closes_day', { label: 'Last day of the window', from: 'visit.closes_on' }),
     day('done_day', { label: 'Day of the visit', from: 'visit.done_on' }),
     code('state', ['to come', 'in progress', 'complete', 'missed'], { label: 'State of the visit', from: 'visit.state' }),
   ],

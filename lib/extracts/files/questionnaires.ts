@@ -1,7 +1,7 @@
 import { questionnaires } from '@/instruments/questionnaires';
 import { elementsOf } from '@/instruments/questionnaires/define-questionnaire';
 import { LEFT_OUT, NOT_TRIED } from '@/instruments/questionnaires/items';
-import { atSite, code, day, defineExtractFile, integer, key, number, type ExtractColumn } from '../define-extract-file';
+import { atSite, code, day, defineExtractFile, integer, key, number, scheduleDay, type ExtractColumn } from '../define-extract-file';
 import { visitPlace } from './limbs';
 
 /** Questions with offered answers. Answers in words are never read. */
@@ -26,7 +26,7 @@ const response: ExtractColumn[] = [
   { name: 'visit_number', label: 'Visit, as numbered in visits', from: ['visit.target_on'], kind: 'integer', sql: 'place.number' },
   code('questionnaire', unique(items.map(({ instrument }) => instrument)), { label: 'Questionnaire', from: 'questionnaire_response.instrument' }),
   integer('questionnaire_version', { label: 'Version of the questionnaire', from: 'questionnaire_response.instrument_version' }),
-  day('due_day', { label: 'Day due', from: 'questionnaire_response.due_on' }),
+  scheduleDay('due_day', { label: 'Day due', from: 'questionnaire_response.due_on' }),
   day('submitted_day', { label: 'Day of submitting', from: 'questionnaire_response.submitted_at', moment: true }),
 ];
 const joins = (rows: string, name: string) => `left join ${visitPlace} place on place.id = r.visit_id

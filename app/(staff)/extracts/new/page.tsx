@@ -1,4 +1,5 @@
 import type { Metadata } from 'next';
+import { PickedOut } from '@/components/extracts/picked-out';
 import { ProfileSentence, RequestForm } from '@/components/extracts/request-form';
 import { VariablesTable } from '@/components/extracts/variables-table';
 import { Columns, MarginPart, PageHead } from '@/components/ui/page';
@@ -11,7 +12,7 @@ export const metadata: Metadata = { title: 'Ask for an extract' };
 export default async function AskForExtractPage({ searchParams }: { searchParams: Promise<Record<string, string | string[] | undefined>> }) {
   const asked = previewExtractInput.safeParse(await searchParams);
   const { profile } = asked.success ? asked.data : previewExtractInput.parse({});
-  const { people, groups, files } = await loadPage('extract.preview', (work) => previewExtract(work, { profile }));
+  const { people, disclosure, groups, files } = await loadPage('extract.preview', (work) => previewExtract(work, { profile }));
   return (
     <>
       <PageHead title="Ask for an extract" crumbs={[{ label: 'Extracts', href: '/extracts' }, { label: 'ask' }]} lede={<ProfileSentence profile={profile} people={people.included} />} />
@@ -28,11 +29,9 @@ export default async function AskForExtractPage({ searchParams }: { searchParams
               <p className="t-small mt-1.5 text-ink-2">Open: study days, wide bands, no site. Controlled: study days, narrow bands, the site as a random number; for somebody who has signed an agreement on the use of the data.</p>
             </MarginPart>
             <MarginPart title="Days, not dates">
-              <p className="t-small mt-1.5 text-ink-2">Every date becomes days from that person’s enrolment. Each extract gives each person a new random number that is kept nowhere.</p>
+              <p className="t-small mt-1.5 text-ink-2">Every date becomes days from that person’s enrolment; the day of surgery becomes a band. The random number of a person is kept nowhere.</p>
             </MarginPart>
-            <MarginPart title="Could someone be picked out?">
-              <p className="t-small mt-1.5 text-ink-2">Bands make it harder, not impossible: somebody who knows a person’s age, surgery and side may still find a rare combination. The size of the smallest group is not checked here, so hand the files only to the recipient named.</p>
-            </MarginPart>
+            <PickedOut disclosure={disclosure} isDone={false} />
             <MarginPart title="Files">
               <ul className="t-small mt-1.5 text-ink-2">
                 {files.map(({ name, about, columns }) => (
