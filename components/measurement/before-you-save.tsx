@@ -3,6 +3,7 @@
 import { useState } from 'react';
 import { Button } from '../ui/button';
 import { TextField } from '../ui/text-field';
+import { ChangeTo } from './change-to';
 import { cellOf } from './grid-keys';
 import { placeWords, type Doubt } from './typed-sitting';
 
@@ -18,13 +19,15 @@ export interface BeforeYouSaveProps {
   map: { readonly startOffsetMm: number; readonly stepMm: number };
   onMeasureAgain: (doubt: Doubt) => void;
   onKeep: (doubt: Doubt, reason: string | null) => void;
+  /** Puts in what was probably meant. */
+  onChange: (doubt: Doubt, typed: string) => void;
 }
 
 /** Id of a doubt in the list, so that saving too early leads to it. */
 export const doubtId = ({ check, place }: Pick<Doubt, 'check' | 'place'>): string => `doubt-${check}-${place}`.replaceAll(/[ .]/g, '-');
 
 /** What is doubtful, in words, each with its ways out: measure it again, or, where it can be so, keep it and say why. */
-export function BeforeYouSave({ doubts, map, onMeasureAgain, onKeep }: BeforeYouSaveProps) {
+export function BeforeYouSave({ doubts, map, ...on }: BeforeYouSaveProps) {
   if (doubts.length === 0) return null;
   const pressing = doubts.filter((doubt) => isPressing(doubt));
   const hints = doubts.filter((doubt) => !isPressing(doubt));
@@ -34,7 +37,7 @@ export function BeforeYouSave({ doubts, map, onMeasureAgain, onKeep }: BeforeYou
       <h3 id="before-save">Before you save</h3>
       <ul>
         {[...pressing, ...hints.slice(0, hintsShown)].map((doubt) => (
-          <DoubtLine key={`${doubt.check} ${doubt.place}`} {...{ doubt, map, onMeasureAgain, onKeep }} />
+          <DoubtLine key={`${doubt.check} ${doubt.place}`} {...{ doubt, map, ...on }} />
         ))}
       </ul>
       {rest > 0 ? <p className="t-small text-ink-2">And {rest} more that are unusual. If the tape reads so, there is nothing to do.</p> : null}
@@ -51,7 +54,7 @@ export const isPressing = ({ check, severity }: Pick<Doubt, 'check' | 'severity'
 
 const elsewhere: Record<string, string> = { weight: 'Body weight', ratio: 'Impedance ratio', whole: 'Both arms', left: 'Left arm', right: 'Right arm' };
 
-function DoubtLine({ doubt, map, onMeasureAgain, onKeep }: Omit<BeforeYouSaveProps, 'doubts'> & { doubt: ListedDoubt }) {
+function DoubtLine({ doubt, map, onMeasureAgain, onKeep, onChange }: Omit<BeforeYouSaveProps, 'doubts'> & { doubt: ListedDoubt }) {
   const [writing, setWriting] = useState(false);
   const cell = cellOf(doubt.place);
   const isHot = doubt.severity !== 'hint' && doubt.reason === null;
@@ -75,6 +78,7 @@ function DoubtLine({ doubt, map, onMeasureAgain, onKeep }: Omit<BeforeYouSavePro
           />
         ) : (
           <p className="before-ways">
+            {doubt.likely && !doubt.reason ? <ChangeTo likely={doubt.likely} onChange={(typed) => onChange(doubt, typed)} /> : null}
             {doubt.reason ? (
               <Button kind="link" onClick={() => onKeep(doubt, null)}>
                 Take the reason back

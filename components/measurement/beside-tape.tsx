@@ -1,13 +1,14 @@
 'use client';
 
 import { impedanceRatioRange, weight } from '@/instruments/checks/measured-ranges';
-import { parseWeightKg, readDecimal } from '@/instruments/measurement/parse';
+import { parseImpedanceRatio, parseWeightKg, readDecimal } from '@/instruments/measurement/parse';
 import { otherPositions } from '@/lib/measurement/input';
 import type { OpenAssessmentView } from '@/lib/measurement/view-open';
 import { NumberField } from '../ui/number-field';
 import { RadioGroup } from '../ui/radio-group';
 import { Select } from '../ui/select';
 import { TextArea } from '../ui/text-area';
+import { ChangeTo } from './change-to';
 import type { Doubt } from './typed-sitting';
 
 /** What stands round the tape, as typed. */
@@ -49,46 +50,52 @@ export function readCircumstances(typed: TypedCircumstances): { values: Circumst
   };
   const kg = typed.bodyWeight.trim() ? parseWeightKg(typed.bodyWeight) : null;
   if (kg && !kg.ok) problems.bodyWeight = kg.reason;
-  const ratio = typed.impedanceRatio.trim() ? readDecimal(typed.impedanceRatio) : null;
-  const ratioIn = ratio !== null && ratio >= 0.5 && ratio <= 3;
-  if (typed.impedanceRatio.trim() && !ratioIn) problems.impedanceRatio = 'The ratio lies between 0.5 and 3.';
+  const ratio = typed.impedanceRatio.trim() ? parseImpedanceRatio(typed.impedanceRatio) : null;
+  if (ratio && !ratio.ok) problems.impedanceRatio = ratio.reason;
   const values: Circumstances = {
     position: typed.position || null,
     sleeveWorn: typed.sleeveWorn === '' ? null : typed.sleeveWorn === 'yes',
     hoursSinceTraining: whole('hoursSinceTraining', 999, 'a number of hours from 0 to 999'),
     bodyWeightG: kg?.ok ? Math.round(kg.value * 1000) : null,
-    impedanceRatio: ratioIn ? Math.round(ratio * 1000) / 1000 : null,
+    impedanceRatio: ratio?.ok ? ratio.value : null,
     impedanceRestMin: whole('impedanceRest', 120, 'a number of minutes from 0 to 120'),
     remarks: typed.remarks.trim() || null,
   };
   return { values, problems };
 }
 
-/** Doubts about weight and ratio, as the server will have them. */
+/** Doubts about weight and ratio, as the server will have them; a weight that would be usual in pounds is answered with that one guess. */
 export function doubtsBeside({ bodyWeightG, impedanceRatio }: Circumstances): Doubt[] {
   const kg = bodyWeightG === null ? null : bodyWeightG / 1000;
   const found = [
     { place: 'weight', finding: kg === null ? null : (weight.limit.run(kg) ?? weight.range.run(kg)) },
     { place: 'ratio', finding: impedanceRatio === null ? null : (impedanceRatioRange.limit.run(impedanceRatio) ?? impedanceRatioRange.range.run(impedanceRatio)) },
   ];
-  return found.flatMap(({ place, finding }) => (finding ? [{ place, check: finding.check, severity: finding.severity, message: finding.message }] : []));
+  const inPounds = kg === null ? null : parseWeightKg(String(kg));
+  return found.flatMap(({ place, finding }) => {
+    if (!finding) return [];
+    const doubt = { place, check: finding.check, severity: finding.severity, message: finding.message };
+    if (place !== 'weight' || !inPounds?.ok || !inPounds.suspicion || inPounds.likely === undefined) return [doubt];
+    return [{ ...doubt, message: `${inPounds.suspicion} Change it, or keep it and say why.`, likely: { typed: inPounds.likely.toFixed(1), unit: 'kg' } }];
+  });
 }
 
 export interface BesideTapeProps {
   typed: TypedCircumstances;
   protocolPosition: string;
   problems: Partial<Record<FieldName, string>>;
+  /** What is doubtful about the weight, while nobody has said why it is kept. */
+  weightDoubt: Doubt | null;
   onType: (change: Partial<TypedCircumstances>) => void;
   onLeave: () => void;
 }
 
 /** Position, sleeve, weight and ratio: asked before the tape is laid. */
-export function BesideTape({ typed, protocolPosition, problems, onType, onLeave }: BesideTapeProps) {
+export function BesideTape({ typed, protocolPosition, problems, weightDoubt, onType, onLeave }: BesideTapeProps) {
   const positions = [...new Set([protocolPosition, ...otherPositions, ...(typed.position ? [typed.position] : [])])].map((value) => ({
     value,
     label: value === protocolPosition ? `${value} (protocol)` : value,
   }));
-  const pounds = typed.bodyWeight.trim() ? parseWeightKg(typed.bodyWeight) : null;
   const field = (name: FieldName) => ({
     id: name,
     value: typed[name],
@@ -96,6 +103,10 @@ export function BesideTape({ typed, protocolPosition, problems, onType, onLeave 
     onChange: (event: { target: { value: string } }) => onType({ [name]: event.target.value }),
     onBlur: onLeave,
   });
+  const changeWeight = (bodyWeight: string) => {
+    onType({ bodyWeight });
+    document.getElementById('bodyWeight')?.focus();
+  };
   return (
     <section className="beside-tape" aria-labelledby="beside-tape">
       <h3 id="beside-tape">Before measuring</h3>
@@ -116,7 +127,10 @@ export function BesideTape({ typed, protocolPosition, problems, onType, onLeave 
       />
       <div className="beside-pair">
         <NumberField label="Since last training" unit="h" {...field('hoursSinceTraining')} />
-        <NumberField label="Body weight" unit="kg" hint={pounds?.ok ? pounds.suspicion : undefined} {...field('bodyWeight')} />
+        <div className="beside-weight">
+          <NumberField label="Body weight" unit="kg" hint={weightDoubt?.message} {...field('bodyWeight')} />
+          {weightDoubt?.likely ? <ChangeTo likely={weightDoubt.likely} onChange={changeWeight} /> : null}
+        </div>
         <NumberField label="Impedance ratio" unit="" hint="unaffected over at risk" {...field('impedanceRatio')} />
         <NumberField label="Lying down for" unit="min" hint="before the ratio" {...field('impedanceRest')} />
       </div>

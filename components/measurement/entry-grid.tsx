@@ -11,6 +11,8 @@ export interface EntryGridProps {
   map: { readonly startOffsetMm: number; readonly stepMm: number; readonly levelCount: number };
   typed: Typed;
   onType: (name: string, text: string) => void;
+  /** A cell was left, by whatever way: what stands in it is whole. */
+  onLeaveCell: () => void;
   /** A column was left: what it holds can be saved. */
   onLeaveColumn: () => void;
   /** Sentences of what is doubtful, by cell. */
@@ -75,13 +77,13 @@ export function EntryGrid(props: EntryGridProps) {
   );
 }
 
-function Cell({ column, level, columns, map, typed, onType, onLeaveColumn, doubts, firstCovered, readOnly, onArm }: EntryGridProps & { column: GridColumn; level: number }) {
+function Cell({ column, level, columns, map, typed, onType, onLeaveCell, onLeaveColumn, doubts, firstCovered, readOnly, onArm }: EntryGridProps & { column: GridColumn; level: number }) {
   const { side, trial, levels } = column;
   const cell: GridCell = { side, trial, level };
   const name = cellName(cell);
   const text = typed[name] ?? '';
   const doubt = doubts.get(name);
-  const move = moveFrom({ cell, columns, onArm, onLeaveColumn });
+  const move = moveFrom({ cell, columns, onArm, onLeaveCell, onLeaveColumn });
   if (!levels.includes(level)) return <td data-side={side} data-trial={trial} className="entry-none" />;
   const hidden = firstCovered && trial === 1;
   const label = `${sideWord[side]} arm, ${(map.startOffsetMm + level * map.stepMm) / 10} cm, trial ${trial}, in cm`;
@@ -105,6 +107,7 @@ function Cell({ column, level, columns, map, typed, onType, onLeaveColumn, doubt
         value={hidden && text ? '··' : text}
         readOnly={hidden}
         onChange={(event) => onType(name, event.target.value.slice(0, 8))}
+        onBlur={onLeaveCell}
         onFocus={(event) => {
           onArm(side);
           event.target.select();
@@ -121,13 +124,15 @@ function Cell({ column, level, columns, map, typed, onType, onLeaveColumn, doubt
 }
 
 /** Follows a key to the next cell; where there is one arm in sight, that arm comes into sight first. */
-function moveFrom({ cell, columns, onArm, onLeaveColumn }: Pick<EntryGridProps, 'columns' | 'onArm' | 'onLeaveColumn'> & { cell: GridCell }) {
+function moveFrom({ cell, columns, onArm, onLeaveCell, onLeaveColumn }: Pick<EntryGridProps, 'columns' | 'onArm' | 'onLeaveCell' | 'onLeaveColumn'> & { cell: GridCell }) {
   return (event: KeyboardEvent<HTMLInputElement>) => {
     if (event.altKey || event.ctrlKey || event.metaKey) return;
     const step = stepOf(event);
     if (step === null) return;
     const next = nextCell(columns, cell, step);
     if (event.key !== 'Tab' || next) event.preventDefault();
+    // Enter in the last cell moves nowhere, and still says that the value is whole.
+    onLeaveCell();
     if (!next || next.side !== cell.side || next.trial !== cell.trial) onLeaveColumn();
     if (!next) {
       if (event.key === 'Tab' && step === 'on') lastInOrderOfPage(event.currentTarget)?.focus();

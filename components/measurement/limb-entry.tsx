@@ -14,7 +14,7 @@ import { cellId, EntryGrid } from './entry-grid';
 import { ArmChoice, DrawingHead, EntryFoot, GridWords, SaveWords } from './entry-parts';
 import { cellName, cellOf, cellsInOrder, columnsOf } from './grid-keys';
 import { partsOfForm, partsOfView } from './sitting-parts';
-import { doubtsOf, drawnMm, readCell, sittingOf, thirdLevels, typedFrom, type Doubt, type Typed } from './typed-sitting';
+import { doubtsOf, drawnMm, isHalfTyped, readCell, sittingOf, thirdLevels, typedFrom, type Doubt, type Typed } from './typed-sitting';
 import { useKeptSitting } from './use-kept-sitting';
 
 export interface LimbEntryProps {
@@ -34,6 +34,12 @@ function goTo(id: string): void {
   (element?.matches('input, select, textarea, li') ? element : element?.querySelector<HTMLElement>('input'))?.focus();
 }
 
+/** The figure at a place, as typed; '' where the place is no single figure. */
+function figureAt(place: string, typed: Typed, { bodyWeight, impedanceRatio }: TypedCircumstances): string {
+  if (place === 'weight') return bodyWeight.trim() && `${bodyWeight.trim()} kg`;
+  return place === 'ratio' ? impedanceRatio.trim() : (typed[place] ?? '');
+}
+
 /** Everything that can be worked out from what is typed. */
 function useForm(view: OpenAssessmentView, typed: Typed, circumstances: TypedCircumstances, kept: Kept, typing: string | null, firstCovered: boolean, asked: readonly Doubt[]) {
   return useMemo(() => {
@@ -50,10 +56,10 @@ function useForm(view: OpenAssessmentView, typed: Typed, circumstances: TypedCir
     const found = [...own, ...asked.filter((one) => !own.some((known) => keyOf(known) === keyOf(one)))]
       // While trial 1 is covered nothing compares with it.
       .filter(({ check, place }) => !(firstCovered && (check.startsWith('trials.') || cellOf(place)?.trial === 1)))
-      .filter(({ place }) => place !== typing || (typed[place] ?? '').length > 3);
+      .filter(({ place }) => !isHalfTyped(place, typing, typed));
     const doubts: ListedDoubt[] = found.map((doubt) => {
       const reason = kept[keyOf(doubt)];
-      return { ...doubt, figure: typed[doubt.place] ?? '', reason: reason?.message === doubt.message ? reason.reason : null };
+      return { ...doubt, figure: figureAt(doubt.place, typed, circumstances), reason: reason?.message === doubt.message ? reason.reason : null };
     });
     return { sitting, columns, missing, doubts, values, problems };
   }, [view, typed, circumstances, kept, typing, firstCovered, asked]);
@@ -128,6 +134,11 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
     else say({ kind: 'needs', word: 'Not saved.', text: error.problem.detail });
   };
 
+  const changeBeside = (change: Partial<TypedCircumstances>) => {
+    setCircumstances((before) => ({ ...before, ...change }));
+    setAsked([]);
+    setRefusal(null);
+  };
   const keep = (doubt: Doubt, reason: string | null) =>
     setKept(({ [keyOf(doubt)]: _before, ...others }) => (reason === null ? others : { ...others, [keyOf(doubt)]: { message: doubt.message, reason } }));
   const rings = new Map(doubts.filter((doubt) => doubt.reason === null && isPressing(doubt)).map(({ place, message }) => [place, message]));
@@ -166,10 +177,8 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
               setAsked([]);
               setRefusal((before) => (before?.place === name ? null : before));
             }}
-            onLeaveColumn={() => {
-              setTyping(null);
-              void flush();
-            }}
+            onLeaveCell={() => setTyping(null)}
+            onLeaveColumn={() => void flush()}
           />
           <GridWords covered={firstCovered} onCover={() => setFirstCovered((before) => !before)} />
         </div>
@@ -182,16 +191,22 @@ export function LimbEntry({ view, page, onComplete, onLeave }: LimbEntryProps) {
             typed={circumstances}
             protocolPosition={page.protocolPosition}
             problems={{ ...form.problems, ...(refusal && !cellOf(refusal.place) ? { [refusal.place]: refusal.sentence } : {}) }}
-            onType={(change) => {
-              setCircumstances((before) => ({ ...before, ...change }));
-              setAsked([]);
-              setRefusal(null);
-            }}
+            weightDoubt={doubts.find(({ place, reason }) => place === 'weight' && reason === null) ?? null}
+            onType={changeBeside}
             onLeave={() => void flush()}
           />
         </div>
       </div>
-      <BeforeYouSave doubts={doubts} map={view.map} onMeasureAgain={({ place }) => goTo(cellOf(place) ? cellId(place) : place === 'weight' ? 'bodyWeight' : place === 'ratio' ? 'impedanceRatio' : 'girth-left-1-0')} onKeep={keep} />
+      <BeforeYouSave
+        doubts={doubts}
+        map={view.map}
+        onMeasureAgain={({ place }) => goTo(cellOf(place) ? cellId(place) : place === 'weight' ? 'bodyWeight' : place === 'ratio' ? 'impedanceRatio' : 'girth-left-1-0')}
+        onKeep={keep}
+        onChange={({ place }, text) => {
+          changeBeside(place === 'weight' ? { bodyWeight: text } : {});
+          goTo('bodyWeight');
+        }}
+      />
       <EntryFoot
         girths={missing.length}
         answers={answersMissing.length}

@@ -69,10 +69,15 @@ export interface Doubt {
   readonly message: string;
   /** As the server names it: 'left 2 5', 'left', 'whole', 'weight', 'ratio'. */
   readonly place: string;
+  /** What was probably meant, as it would be typed. */
+  readonly likely?: { readonly typed: string; readonly unit: string };
 }
 
 /** Names a place as the server does. */
 const placeOf = ({ side, trial, level }: SittingFinding['at']): string => [side, trial && trialNumbers[trial], level].filter((part) => part !== undefined).join(' ') || 'whole';
+
+/** While a value is being typed it is not yet doubtful, unless it is longer than any girth; it is spoken of once it is left. */
+export const isHalfTyped = (place: string, typing: string | null, typed: Typed): boolean => place === typing && (typed[place] ?? '').length <= 3;
 
 /** What this sitting makes doubtful: value, taper and trial against trial while it is open; the whole of it once every reading is in. */
 export const doubtsOf = (sitting: LimbSitting, isWhole: boolean): Doubt[] =>

@@ -1,8 +1,8 @@
 import { CM_PER_INCH, KG_PER_LB } from '../units';
 
-/** A typed number read, or the reason it was not. `suspicion` is a hint about a readable value, never a refusal. */
+/** A typed number read, or the reason it was not. `suspicion` is a hint about a readable value, never a refusal; `likely` is what it may have been, in the unit it was asked in. */
 export type Parsed<Value> =
-  | { readonly ok: true; readonly value: Value; readonly suspicion?: string }
+  | { readonly ok: true; readonly value: Value; readonly suspicion?: string; readonly likely?: number }
   | { readonly ok: false; readonly reason: string };
 
 const NUMBER = /^[+-]?(\d+([.,]\d*)?|[.,]\d+)$/;
@@ -48,35 +48,50 @@ export function parseLoadKg(typed: string): Parsed<number> {
   return parseReading(typed, LOAD_KG);
 }
 
+const ratioLimit = [0.5, 3] as const;
+const ratioUsual = [0.85, 1.4] as const;
+
+/** A ratio of two impedances as typed, decimal point or comma, to at most 0.001. */
+export function parseImpedanceRatio(typed: string): Parsed<number> {
+  const value = readDecimal(typed);
+  if (value === null) return { ok: false, reason: notANumber(typed, '1.05') };
+  return isUsual(value, ratioLimit) ? { ok: true, value: Math.round(value * 1000) / 1000 } : { ok: false, reason: outsideRatio(value) };
+}
+
+/** What is wrong with a ratio beyond its limits, and what it may have been. */
+export const outsideRatio = (value: number): string => `You typed ${value}; the ratio lies between ${ratioLimit[0]} and ${ratioLimit[1]}.${wasItShifted(value, ratioUsual)}`;
+
+const notANumber = (typed: string, example: string): string => `‘${typed.trim()}’ is not a number. Type digits and one decimal point or comma, such as ${example}.`;
+
 function parseReading(typed: string, reading: Reading): Parsed<number> {
   if (typed.trim() === '') return { ok: false, reason: `Type the ${reading.label.toLowerCase()} in ${reading.unit}.` };
   const value = readDecimal(typed);
-  if (value === null) return { ok: false, reason: `‘${typed.trim()}’ is not a number. Type digits and one decimal point or comma, such as 23.6.` };
+  if (value === null) return { ok: false, reason: notANumber(typed, '23.6') };
   if (value < 0) return { ok: false, reason: `${value} is below zero. Type the ${reading.label.toLowerCase()} without a sign.` };
-  if (value > reading.max) return { ok: false, reason: `${value} ${reading.unit} is over the limit of ${reading.max}.${wasItShifted(value, reading)}` };
-  if (value < reading.min) return { ok: false, reason: `${value} ${reading.unit} is under the limit of ${reading.min}.${wasItShifted(value, reading)}` };
+  if (value > reading.max) return { ok: false, reason: `${value} ${reading.unit} is over the limit of ${reading.max}.${wasItShifted(value, reading.usual)}` };
+  if (value < reading.min) return { ok: false, reason: `${value} ${reading.unit} is under the limit of ${reading.min}.${wasItShifted(value, reading.usual)}` };
   if (Math.abs(value * 10 ** reading.decimals - Math.round(value * 10 ** reading.decimals)) > 1e-6) {
     return { ok: false, reason: `${value} has too many decimals. Read it to ${10 ** -reading.decimals} ${reading.unit}.` };
   }
-  const suspicion = suspect(value, reading);
-  return suspicion ? { ok: true, value, suspicion } : { ok: true, value };
+  return { ok: true, value, ...suspect(value, reading) };
 }
 
 const isUsual = (value: number, [low, high]: readonly [number, number]): boolean => value >= low && value <= high;
 const short = (value: number): number => Math.round(value * 100) / 100;
 
 /** Offers the value with the decimal point one place along, where that would be usual. */
-function wasItShifted(value: number, reading: Reading): string {
-  const shifted = [value / 10, value * 10, value / 100].find((candidate) => isUsual(candidate, reading.usual));
+function wasItShifted(value: number, usual: readonly [number, number]): string {
+  const shifted = [value / 10, value * 10, value / 100].find((candidate) => isUsual(candidate, usual));
   return shifted === undefined ? ` Measure it again.` : ` Was it ${short(shifted)}?`;
 }
 
-function suspect(value: number, reading: Reading): string | undefined {
-  if (isUsual(value, reading.usual)) return undefined;
+function suspect(value: number, reading: Reading): { suspicion?: string; likely?: number } {
+  if (isUsual(value, reading.usual)) return {};
   const { name, toUnit } = reading.otherUnit;
   if (isUsual(value * toUnit, reading.usual)) {
-    return `${value} ${reading.unit} is unusual. If it was read in ${name}, it is ${(value * toUnit).toFixed(1)} ${reading.unit}.`;
+    const likely = (value * toUnit).toFixed(1);
+    return { suspicion: `${value} ${reading.unit} is unusual. If it was read in ${name}, it is ${likely} ${reading.unit}.`, likely: Number(likely) };
   }
   const shifted = [value / 10, value * 10].find((candidate) => isUsual(candidate, reading.usual));
-  return shifted === undefined ? undefined : `${value} ${reading.unit} is unusual. Was it ${short(shifted)}?`;
+  return shifted === undefined ? {} : { suspicion: `${value} ${reading.unit} is unusual. Was it ${short(shifted)}?`, likely: short(shifted) };
 }

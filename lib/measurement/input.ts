@@ -1,10 +1,12 @@
+import { outsideRatio } from '@/instruments/measurement/parse';
 import { z } from 'zod';
 import { fieldTargetInput } from '@/lib/queries/input';
+import { windowReason } from '@/lib/schedule/input';
 
 /** What limb assessments take from people: the same schema in the browser and on the server. */
 const girthMm = z.int('Girths are whole millimetres.').min(100, 'A girth under 10 cm cannot be right.').max(700, 'A girth over 70 cm cannot be right.').nullable();
 
-export const beginAssessmentInput = z.strictObject({ id: z.uuid() });
+export const beginAssessmentInput = z.strictObject({ id: z.uuid(), windowReason });
 
 export const saveTrialInput = z.strictObject({
   id: z.uuid(),
@@ -17,13 +19,15 @@ export type SaveTrialInput = z.output<typeof saveTrialInput>;
 /** Ways of holding the arms beside the protocol's own; one who cannot hold them so is measured another way, and the form says which. */
 export const otherPositions = ['supported, 90° forward', 'hanging', 'lying, at the side'] as const;
 
+const ratioWords = ({ input }: { input?: unknown }): string => outsideRatio(Number(input));
+
 export const saveCircumstancesInput = z.strictObject({
   id: z.uuid(),
   position: z.string().trim().min(3, 'Say how the arms were held.').max(80, 'Use at most 80 characters.').nullable(),
   sleeveWorn: z.boolean().nullable(),
   hoursSinceTraining: z.int().min(0).max(999, 'Give the hours as a number up to 999.').nullable(),
   bodyWeightG: z.int().min(30_000, 'Body weight under 30 kg cannot be right.').max(250_000, 'Body weight over 250 kg cannot be right.').nullable(),
-  impedanceRatio: z.number().min(0.5, 'The ratio lies between 0.5 and 3.').max(3, 'The ratio lies between 0.5 and 3.').nullable(),
+  impedanceRatio: z.number().min(0.5, { error: ratioWords }).max(3, { error: ratioWords }).nullable(),
   impedanceRestMin: z.int().min(0).max(120, 'Give the minutes of lying down, 0 to 120.').nullable(),
   remarks: z.string().trim().max(500, 'Use at most 500 characters.').nullable(),
 });
