@@ -1,5 +1,6 @@
 'use client';
 
+import { readDecimal } from '@/instruments/measurement/parse';
 import { lowerFirst } from '@/instruments/words';
 import { useState, type FormEvent } from 'react';
 import { otherPositions } from '@/lib/measurement/input';
@@ -9,7 +10,6 @@ import { Button } from '../ui/button';
 import { DateField } from '../ui/date-field';
 import { Dialog } from '../ui/dialog';
 import { NumberField } from '../ui/number-field';
-import { readNumber } from '../ui/read-number';
 import { Select } from '../ui/select';
 import { TextArea } from '../ui/text-area';
 import { printValue, unitOfKind, type ReviewItem, type ValueKind } from './review-items';
@@ -38,9 +38,10 @@ function read(kind: ValueKind, typed: string): { value: ReviewItem['value'] } | 
   if (kind === 'worn') return { value: typed === 'yes' };
   const factor = toStored[kind];
   if (!factor) return { value: typed.trim() };
-  const number = readNumber(typed);
-  if (number.kind !== 'number') return { sentence: number.kind === 'unclear' ? number.sentence : 'Give the value.' };
-  const stored = number.value * factor;
+  // As in the form of the sitting: a comma is a decimal, so that a ratio of 1,045 is no riddle.
+  const number = readDecimal(typed);
+  if (number === null) return { sentence: `${typed.trim()} is not a number. Type digits and one decimal point or comma.` };
+  const stored = number * factor;
   return { value: kind === 'ratio' ? Math.round(stored * 1000) / 1000 : Math.round(stored) };
 }
 

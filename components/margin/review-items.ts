@@ -13,6 +13,8 @@ export interface ReviewItem {
   /** 'Left arm at 24 cm, trial 2'. */
   readonly label: string;
   readonly kind: ValueKind;
+  /** The arm, of a reading of the tape. */
+  readonly side?: 'left' | 'right';
   readonly value: string | number | boolean | null;
   readonly version: number;
 }
@@ -71,11 +73,14 @@ function tapeRows({ map, trials, trialIds }: CompleteAssessmentView): ReviewRow[
       const value = trials.find((row) => row.side === side && row.trial === trial)?.circumferencesMm[level] ?? null;
       const target: FieldTarget = { table: 'limb_trial', id, field: `circumferences_mm.${level}` };
       const label = `${side === 'left' ? 'Left' : 'Right'} arm at ${cm} cm, trial ${trial}`;
-      return value === null ? [] : [{ key: keyOfTarget(target), target, label, kind: 'girth' as const, value, version }];
+      return value === null ? [] : [{ key: keyOfTarget(target), target, label, kind: 'girth' as const, side, value, version }];
     });
     return { key: `tape ${level}`, no: `2.${level + 1}`, label: cm, items };
   });
 }
+
+/** The value of a line that answers to the one that is chosen: on the same arm, where the line has both. */
+export const itemLike = ({ items }: ReviewRow, side: ReviewItem['side']): ReviewItem | undefined => items.find((item) => item.side === side) ?? items[0];
 
 /** The form of a visit, part by part, in the order in which it was taken. */
 export function partsOfReview({ visit, assessment }: Pick<ReviewView, 'visit' | 'assessment'>): ReviewPart[] {

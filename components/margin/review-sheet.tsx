@@ -2,6 +2,7 @@
 
 import { useRouter } from 'next/navigation';
 import { useCallback, useMemo, useState, type ReactNode } from 'react';
+import { flushSync } from 'react-dom';
 import type { ReviewView } from '@/lib/review/view-review';
 import { send } from '../api/send';
 import { useSend } from '../api/use-send';
@@ -11,10 +12,11 @@ import { Note } from '../ui/note';
 import { useToast } from '../ui/toast';
 import type { HeldValue } from '@/lib/review/field-history';
 import { CorrectDialog } from './correct-dialog';
+import { focusValue, keyAtFragment, useFragment } from './find-value';
 import { ChangedNote, HistoryNote, KeptNote, StruckBefore } from './field-notes';
 import { QueryNote, queryNumber, type MarginRights } from './query-note';
 import { QuestionnaireParts } from './questionnaire-parts';
-import { anchorOf, isSeen, keyOfPlace, keyOfTarget, partsOfReview, printBare, unitOfKind, type ReviewItem, type ReviewRow } from './review-items';
+import { anchorOf, isSeen, itemLike, keyOfPlace, keyOfTarget, partsOfReview, printBare, unitOfKind, type ReviewItem, type ReviewRow } from './review-items';
 import { useReviewKeys, type ReviewKey } from './review-keys';
 import { ChosenBar, Legend } from './review-words';
 import { TapeTable } from './tape-table';
@@ -62,6 +64,7 @@ export function ReviewSheet({ view, rights }: ReviewSheetProps) {
   const mark = useSend<{ marked: number }>('POST', '/api/verifications');
   const { timeZone, code } = view.participant;
   const current = items.find(({ key }) => key === currentKey) ?? null;
+  const fragment = useFragment();
 
   const done = useCallback(
     (said: string) => {
@@ -94,7 +97,8 @@ export function ReviewSheet({ view, rights }: ReviewSheetProps) {
     [histories, refused],
   );
   const choose = (key: string | null) => {
-    setCurrentKey(key);
+    // The arm it stands on comes into sight first.
+    flushSync(() => setCurrentKey(key));
     if (key) document.getElementById(anchorOf(key))?.scrollIntoView({ block: 'nearest' });
   };
   const act = (key: ReviewKey) => {
@@ -102,7 +106,7 @@ export function ReviewSheet({ view, rights }: ReviewSheetProps) {
     const at = rows.findIndex((row) => row.items.some((item) => item.key === currentKey));
     if (key === 'next' || key === 'before') {
       const row = rows[Math.max(0, Math.min(rows.length - 1, at + (key === 'next' ? 1 : -1)))];
-      return choose(row?.items[0]?.key ?? null);
+      return choose((row && itemLike(row, current?.side)?.key) ?? null);
     }
     const row = rows[at];
     if (!current || !row) return choose(items[0]?.key ?? null);
@@ -110,6 +114,15 @@ export function ReviewSheet({ view, rights }: ReviewSheetProps) {
     if (key === 'write' && rights.raise) setWriting(current.key);
     if (key === 'history') showHistory(current);
     if (key === 'correct' && rights.correct) setCorrecting({ item: current, queryId: null });
+  };
+  /** The dialog gives the focus back to what opened it, which an answered query no longer shows: then it goes to the value. */
+  const endCorrection = (key: string, saved: boolean) => {
+    flushSync(() => {
+      setCorrecting(null);
+      if (saved) setCurrentKey(key);
+    });
+    if (saved || document.activeElement === document.body) focusValue(key);
+    if (saved) done('Corrected.');
   };
   useReviewKeys(keysOn && correcting === null, act);
 
@@ -170,7 +183,7 @@ export function ReviewSheet({ view, rights }: ReviewSheetProps) {
           <MarginSection key={part.no} no={part.no} title={part.title} aside={part.tape && view.assessment?.rvc != null ? <>Change from baseline <b className="t-num">{formatChange(view.assessment.rvc)}</b></> : null}>
             {part.tape && view.assessment ? (
               <>
-                <TapeTable rows={part.rows} assessment={view.assessment} currentKey={currentKey} struckOf={(key) => struck.get(key) ?? []} onChoose={(item) => setCurrentKey(item.key)} gutter={gutter} />
+                <TapeTable rows={part.rows} assessment={view.assessment} currentKey={currentKey} anchoredKey={keyAtFragment(fragment, items, view.queries)} struckOf={(key) => struck.get(key) ?? []} onChoose={(item) => setCurrentKey(item.key)} gutter={gutter} />
                 {part.rows.flatMap((row) => row.items).flatMap((item) => notesOf(item).map(({ key, node }) => (
                   <MarginNote key={key} anchorId={anchorOf(item.key)} label={`Note on ${item.label}`}>
                     {node}
@@ -203,11 +216,8 @@ export function ReviewSheet({ view, rights }: ReviewSheetProps) {
         <CorrectDialog
           item={correcting.item}
           query={numbered(view, correcting.queryId)}
-          onClose={() => setCorrecting(null)}
-          onDone={() => {
-            setCorrecting(null);
-            done('Corrected.');
-          }}
+          onClose={() => endCorrection(correcting.item.key, false)}
+          onDone={() => endCorrection(correcting.item.key, true)}
         />
       ) : null}
     </>

@@ -1,13 +1,11 @@
-import { formatNumber, formatSigned } from '../ui/format';
+import { formatNumber } from '../ui/format';
 import { fillOf, Patterns, usePatterns } from '../chart/patterns';
 
 /** Height of one level in the grid and in the drawing: at 4 cm between levels, 10 px are 1 cm. */
 export const levelPx = 40;
 const leftX = 76;
 const rightX = 216;
-const zeroX = 350;
-/** Pixels for one millimetre of difference between the arms. */
-const perMm = 6.2;
+const width = 300;
 /** Arms wider than this are drawn smaller, so that they do not run into each other. */
 const widestPx = 138;
 
@@ -23,17 +21,14 @@ export interface ArmDrawingProps {
   affectedSide: 'left' | 'right';
   /** Doubtful readings: the outline shows the dent with its figure. */
   dents?: readonly ArmDent[];
-  /** Left minus right now and at baseline, in mm; only once the assessment is saved. */
-  difference?: { readonly nowMm: readonly (number | null)[]; readonly baselineMm: readonly (number | null)[] | null };
 }
 
-/** Both arms to true scale, beside the rows of the grid; the difference only when it may be known. */
-export function ArmDrawing({ leftMm, rightMm, affectedSide, dents = [], difference }: ArmDrawingProps) {
+/** Both arms to true scale, beside the rows of the grid. */
+export function ArmDrawing({ leftMm, rightMm, affectedSide, dents = [] }: ArmDrawingProps) {
   const ids = usePatterns();
   const levels = leftMm.length;
   const widest = Math.max(1, ...[...leftMm, ...rightMm].map((mm) => (mm ?? 0) / Math.PI));
   const scale = Math.min(1, widestPx / widest);
-  const width = difference ? 470 : 300;
   return (
     <svg
       className="arm-drawing"
@@ -52,12 +47,12 @@ export function ArmDrawing({ leftMm, rightMm, affectedSide, dents = [], differen
       {dents.map((dent) => (
         <Dent key={`${dent.side} ${dent.level}`} dent={dent} x={dent.side === 'left' ? leftX : rightX} scale={scale} />
       ))}
-      {difference ? <Differences {...difference} levels={levels} /> : null}
     </svg>
   );
 }
 
-const yOf = (level: number): number => level * levelPx + levelPx / 2;
+/** The middle of a level's row. */
+export const yOf = (level: number): number => level * levelPx + levelPx / 2;
 
 /** Runs of neighbouring levels that were read, each as half widths down the page. */
 function runsOf(girthsMm: readonly (number | null)[], scale: number): { y: number; half: number }[][] {
@@ -142,29 +137,3 @@ function Dent({ dent: { level, girthMm }, x, scale }: { dent: ArmDent; x: number
     </g>
   );
 }
-
-function Differences({ nowMm, baselineMm, levels }: { nowMm: readonly (number | null)[]; baselineMm: readonly (number | null)[] | null; levels: number }) {
-  return (
-    <g>
-      <path d={`M${zeroX} 2V${levels * levelPx - 4}`} stroke="var(--ink)" />
-      {nowMm.map((mm, level) => {
-        const y = yOf(level);
-        const before = baselineMm?.[level] ?? null;
-        if (mm === null) return null;
-        const end = zeroX + clamp(mm * perMm);
-        return (
-          <g key={level}>
-            <rect x={Math.min(zeroX, end)} y={y - 5} width={Math.abs(end - zeroX)} height="10" fill="var(--act)" />
-            {before === null ? null : <path d={`M${zeroX + clamp(before * perMm)} ${y - 9}v18`} stroke="var(--ink)" strokeWidth="1.5" />}
-            <text x={Math.max(zeroX, end) + 9} y={y + 4.5} className="arm-figure arm-figure-beside">
-              {formatSigned(mm / 10, 1)}
-            </text>
-          </g>
-        );
-      })}
-    </g>
-  );
-}
-
-/** Bars stay inside their column; the figure beside them says the rest. */
-const clamp = (px: number): number => Math.max(-62, Math.min(72, px));

@@ -63,17 +63,11 @@ export function GridWords({ covered, onCover }: { covered: boolean; onCover: () 
 }
 
 /** Over the drawing: which arm is which. */
-export function DrawingHead({ affectedSide, difference }: { affectedSide: 'left' | 'right'; difference?: boolean }) {
+export function DrawingHead({ affectedSide }: { affectedSide: 'left' | 'right' }) {
   return (
     <div className="drawing-head">
       <b>{affectedSide === 'left' ? 'Left, affected' : 'Left'}</b>
       <b>{affectedSide === 'right' ? 'Right, affected' : 'Right'}</b>
-      {difference ? (
-        <span>
-          <b>Left minus right, cm</b>
-          upright: at baseline
-        </span>
-      ) : null}
     </div>
   );
 }

@@ -8,6 +8,7 @@ import type { OpenAssessmentView } from '@/lib/measurement/view-open';
 import { useSend } from '../api/use-send';
 import { Button, ButtonLink } from '../ui/button';
 import { Caution } from '../ui/caution';
+import { ArmDifference } from './arm-difference';
 import { ArmDrawing } from './arm-drawing';
 import { DrawingHead, ArmChoice } from './entry-parts';
 import { EntryGrid } from './entry-grid';
@@ -62,24 +63,26 @@ function SavedSitting({ view, formHref }: { view: CompleteAssessmentView; formHr
   const columns = columnsOf(view.map.levelCount, { left: third('left'), right: third('right') });
   const baseline = view.earlier.find(({ isBaseline }) => isBaseline);
   const minus = (a: readonly (number | null)[], b: readonly (number | null)[]) => a.map((mm, level) => (mm === null || b[level] == null ? null : mm - b[level]));
+  const baselineMm = baseline && baseline.leftGirthsMm.length === view.map.levelCount ? minus(baseline.leftGirthsMm, baseline.rightGirthsMm) : null;
   return (
     <>
       <div className="limb-work">
         <div>
           <ArmChoice arm={arm} onArm={setArm} />
-          <EntryGrid {...{ columns, typed, arm }} map={view.map} doubts={new Map()} firstCovered={false} readOnly onArm={setArm} onType={() => undefined} onLeaveColumn={() => undefined} />
+          <EntryGrid {...{ columns, typed, arm }} map={view.map} doubts={new Map()} firstCovered={false} readOnly onArm={setArm} onType={() => undefined} onLeaveCell={() => undefined} onLeaveColumn={() => undefined} />
         </div>
         <div className="limb-drawing limb-drawing-wide">
-          <DrawingHead affectedSide={view.affectedSide} difference />
-          <ArmDrawing
-            leftMm={view.leftGirthsMm}
-            rightMm={view.rightGirthsMm}
-            affectedSide={view.affectedSide}
-            difference={{
-              nowMm: minus(view.leftGirthsMm, view.rightGirthsMm),
-              baselineMm: baseline && baseline.leftGirthsMm.length === view.map.levelCount ? minus(baseline.leftGirthsMm, baseline.rightGirthsMm) : null,
-            }}
-          />
+          <div>
+            <DrawingHead affectedSide={view.affectedSide} />
+            <ArmDrawing leftMm={view.leftGirthsMm} rightMm={view.rightGirthsMm} affectedSide={view.affectedSide} />
+          </div>
+          <div className="limb-difference">
+            <p className="drawing-head">
+              <b>Left minus right, cm</b>
+              {baselineMm ? <span>upright: at baseline</span> : null}
+            </p>
+            <ArmDifference map={view.map} nowMm={minus(view.leftGirthsMm, view.rightGirthsMm)} baselineMm={baselineMm} />
+          </div>
         </div>
         <div className="limb-beside">
           <LimbResult view={view} />

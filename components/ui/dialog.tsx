@@ -1,6 +1,6 @@
 'use client';
 
-import { useEffect, useId, useRef, type ReactNode } from 'react';
+import { useEffect, useId, useLayoutEffect, useRef, type ReactNode } from 'react';
 
 export interface DialogProps {
   open: boolean;
@@ -25,6 +25,11 @@ export function Dialog({ open, onClose, title, children, actions, as = 'dialog' 
     if (open) dialog.showModal();
     else dialog.close();
   }, [open]);
+  // Taken from the page while open it would not give the focus back; closed first, it does.
+  useLayoutEffect(() => {
+    const dialog = ref.current;
+    return () => dialog?.close();
+  }, []);
   return (
     <dialog
       ref={ref}

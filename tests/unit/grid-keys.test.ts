@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { cellName, cellOf, cellsInOrder, columnsOf, nextCell, stepOf, type GridCell } from '@/components/measurement/grid-keys';
-import { columnMm, doubtsOf, drawnMm, readCell, sittingOf, thirdLevels, typedFrom } from '@/components/measurement/typed-sitting';
+import { columnMm, doubtsOf, drawnMm, isHalfTyped, readCell, sittingOf, thirdLevels, typedFrom } from '@/components/measurement/typed-sitting';
 
 const columns = columnsOf(3, { left: [1], right: [] });
 const cell = (name: string): GridCell => {
@@ -94,5 +94,15 @@ describe('what is typed into the grid', () => {
     const sitting = sittingOf({ 'left 1 0': '16.0', 'left 1 1': '17.2', 'left 2 0': '16.2' }, about);
     expect(drawnMm(sitting, 'left', true)).toEqual([162, null, null]);
     expect(drawnMm(sitting, 'left', false)).toEqual([161, 172, null]);
+  });
+});
+
+describe('a value that is being typed', () => {
+  test('is spoken of once it is left, and at once when it is longer than any girth', () => {
+    const typed = { 'left 1 0': '160', 'left 1 1': '16.05' };
+    expect(isHalfTyped('left 1 0', 'left 1 0', typed)).toBe(true);
+    expect(isHalfTyped('left 1 0', null, typed)).toBe(false);
+    expect(isHalfTyped('left 1 0', 'left 1 1', typed)).toBe(false);
+    expect(isHalfTyped('left 1 1', 'left 1 1', typed)).toBe(false);
   });
 });

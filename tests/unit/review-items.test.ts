@@ -1,7 +1,9 @@
 import { describe, expect, test } from 'vitest';
-import { countSeen, keyOfPlace, keyOfTarget, partsOfReview, printValue } from '@/components/margin/review-items';
+import { anchorOf, countSeen, itemLike, keyOfPlace, keyOfTarget, partsOfReview, printValue } from '@/components/margin/review-items';
 import { reviewKeyOf } from '@/components/margin/review-keys';
+import { keyAtFragment } from '@/components/margin/find-value';
 import { doubtsBeside, readCircumstances, typedCircumstances } from '@/components/measurement/beside-tape';
+import { saveCircumstancesInput } from '@/lib/measurement/input';
 import type { CompleteAssessmentView } from '@/lib/measurement/view-complete';
 import type { ReviewView } from '@/lib/review/view-review';
 
@@ -57,6 +59,25 @@ describe('the form of a visit', () => {
   });
 });
 
+describe('the way to a value', () => {
+  const items = rows.flatMap((row) => row.items);
+  const right = items.find(({ label }) => label === 'Right arm at 4 cm, trial 2');
+  test('a fragment leads to the value it names, or to the one that a query is about', () => {
+    expect(keyAtFragment(`#${anchorOf(right?.key ?? '')}`, items, [])).toBe(right?.key);
+    const queries = [{ id: 'q7', target: right?.target ?? { table: 'visit' as const, id: '', field: '' } }];
+    expect(keyAtFragment('#query-q7', items, queries)).toBe(right?.key);
+    expect(keyAtFragment('#query-q8', items, queries)).toBeNull();
+    expect(keyAtFragment('', items, queries)).toBeNull();
+  });
+  test('from line to line it stays on the arm, and takes the first where there is none', () => {
+    const [wrist] = parts[1]?.rows ?? [];
+    const [date] = parts[0]?.rows ?? [];
+    expect(wrist && itemLike(wrist, 'right')?.label).toBe('Right arm at 0 cm, trial 1');
+    expect(wrist && itemLike(wrist, undefined)?.label).toBe('Left arm at 0 cm, trial 1');
+    expect(date && itemLike(date, 'right')?.label).toBe('Date of visit');
+  });
+});
+
 describe('the single keys of the review', () => {
   const press = (key: string, held: Partial<{ ctrlKey: boolean; metaKey: boolean; altKey: boolean }> = {}) => ({ key, ctrlKey: false, metaKey: false, altKey: false, ...held });
   test('mean one thing each', () => {
@@ -79,6 +100,30 @@ describe('what stands beside the tape', () => {
     expect(values).toMatchObject({ bodyWeightG: 71_400, impedanceRatio: null, hoursSinceTraining: null });
     expect(Object.keys(problems).toSorted()).toEqual(['hoursSinceTraining', 'impedanceRatio']);
     expect(readCircumstances({ ...typed, bodyWeight: '741' }).problems.bodyWeight).toMatch(/over the limit of 250\. Was it 74\.1/);
+  });
+  test('a ratio beyond its limits is named, with what it may have been; a comma is a decimal', () => {
+    const ratio = (impedanceRatio: string) => readCircumstances({ ...typedCircumstances(circumstances), impedanceRatio });
+    expect(ratio('10,5').problems.impedanceRatio).toBe('You typed 10.5; the ratio lies between 0.5 and 3. Was it 1.05?');
+    expect(ratio('105').problems.impedanceRatio).toBe('You typed 105; the ratio lies between 0.5 and 3. Was it 1.05?');
+    expect(ratio('4').problems.impedanceRatio).toBe('You typed 4; the ratio lies between 0.5 and 3. Measure it again.');
+    expect(ratio('one').problems.impedanceRatio).toBe('‘one’ is not a number. Type digits and one decimal point or comma, such as 1.05.');
+    expect(ratio('1,045')).toMatchObject({ values: { impedanceRatio: 1.045 }, problems: {} });
+    const sent = saveCircumstancesInput.safeParse({ ...circumstances, id: '0190b8f0-0000-7000-8000-000000000001', impedanceRatio: 10.5 });
+    expect(sent.error?.issues.map(({ message }) => message)).toEqual(['You typed 10.5; the ratio lies between 0.5 and 3. Was it 1.05?']);
+  });
+  test('a weight that is usual in pounds has one answer: that figure, or a reason', () => {
+    // 206 lb × 0.45359237 kg (exact by definition) = 93.44 kg.
+    expect(doubtsBeside({ ...circumstances, bodyWeightG: 206_000 })).toEqual([
+      {
+        place: 'weight',
+        check: 'weight.range',
+        severity: 'soft',
+        message: '206 kg is unusual. If it was read in pounds, it is 93.4 kg. Change it, or keep it and say why.',
+        likely: { typed: '93.4', unit: 'kg' },
+      },
+    ]);
+    expect(doubtsBeside({ ...circumstances, bodyWeightG: 93_400 })).toEqual([]);
+    expect(doubtsBeside({ ...circumstances, bodyWeightG: 35_000 })[0]).not.toHaveProperty('likely');
   });
   test('doubts an unusual weight and a ratio that may be swapped', () => {
     expect(doubtsBeside({ ...circumstances, bodyWeightG: 171_000, impedanceRatio: 0.7 }).map(({ place, severity }) => [place, severity])).toEqual([
