@@ -8,9 +8,15 @@ import { countWords, limitWords } from './words';
 type Load = ResultsView['loads'][number];
 type Adherence = ResultsView['adherence'];
 
+/** The last week of which a finding may speak: at least a fifth of the most who ever trained in one, and ten people. Common practice, no source. */
+function lastTold(weeks: Load['weeks']): Load['weeks'][number] | undefined {
+  const most = Math.max(0, ...weeks.map(({ people }) => people));
+  return weeks.findLast(({ people }) => people >= 10 && people >= most / 5) ?? weeks.at(-1);
+}
+
 function findingOf({ weeks }: Load): string {
-  const [first, last] = [weeks[0], weeks.at(-1)];
-  return first && last ? `Half of those training lifted at least ${formatLoadKg(last.p50)} in week ${last.week}, from ${formatLoadKg(first.p50)} in week ${first.week}.` : '';
+  const [first, last] = [weeks[0], lastTold(weeks)];
+  return first && last ? `In week ${last.week} half of the ${last.people} people training lifted ${formatLoadKg(last.p50)} or more; in week ${first.week}, ${formatLoadKg(first.p50)} or more of ${first.people}.` : '';
 }
 
 function OneLoad({ load, firstLoadKg, isFirst }: { load: Load; firstLoadKg: ResultsView['firstLoadKg']; isFirst: boolean }) {

@@ -1,7 +1,7 @@
 'use client';
 
 import { usePathname, useRouter, useSearchParams } from 'next/navigation';
-import { useTransition } from 'react';
+import { useEffect, useOptimistic, useRef, useTransition } from 'react';
 import type { ResultsView } from '@/lib/results/view-results';
 import { confirmations } from '@/lib/results/input';
 import { ChoiceInSentence } from '../ui/in-sentence';
@@ -14,27 +14,37 @@ export function ResultsSentence({ view }: { view: Pick<ResultsView, 'cohorts' | 
   const path = usePathname();
   const asked = useSearchParams();
   const [isWaiting, begin] = useTransition();
-  const { cohorts, sites, definitions, chosen, confirmation } = view;
+  const { cohorts, sites, definitions } = view;
+  const [shown, show] = useOptimistic({ ...view.chosen, confirmation: view.confirmation }, (now, part: Record<string, string>) => ({ ...now, ...part }));
+  /** Choices made while an earlier one is still being worked out are added to it. */
+  const wanted = useRef<URLSearchParams | null>(null);
+  useEffect(() => {
+    wanted.current = null;
+  }, [asked]);
   const choose = (name: string, value: string) => {
-    const next = new URLSearchParams(asked);
+    const next = new URLSearchParams(wanted.current ?? asked);
     if (value) next.set(name, value);
     else next.delete(name);
-    begin(() => router.replace(`${path}?${next.toString()}`, { scroll: false }));
+    wanted.current = next;
+    begin(() => {
+      show({ [name]: value });
+      router.replace(`${path}?${next.toString()}`, { scroll: false });
+    });
   };
   const definitionChoices = definitions.map(({ code, name }) => ({ value: code, label: name }));
   const whole = sites.length === 1 ? (sites[0]?.name ?? 'the site') : `all ${sites.length} sites`;
   return (
-    <span aria-busy={isWaiting} className="leading-[2]">
+    <span aria-busy={isWaiting} className="results-sentence leading-[2]">
       Everyone with a baseline in{' '}
-      <ChoiceInSentence label="cohort" value={chosen.cohort ?? ''} onChange={(event) => choose('cohort', event.target.value)} choices={[{ value: '', label: 'every cohort' }, ...cohorts.map(({ key, name }) => ({ value: key, label: `‘${name}’` }))]} /> at{' '}
+      <ChoiceInSentence label="cohort" value={shown.cohort ?? ''} onChange={(event) => choose('cohort', event.target.value)} choices={[{ value: '', label: 'every cohort' }, ...cohorts.map(({ key, name }) => ({ value: key, label: `‘${name}’` }))]} /> at{' '}
       {sites.length > 1 ? (
-        <ChoiceInSentence label="site" value={chosen.siteId ?? ''} onChange={(event) => choose('siteId', event.target.value)} choices={[{ value: '', label: whole }, ...sites.map(({ id, name }) => ({ value: id, label: name }))]} />
+        <ChoiceInSentence label="site" value={shown.siteId ?? ''} onChange={(event) => choose('siteId', event.target.value)} choices={[{ value: '', label: whole }, ...sites.map(({ id, name }) => ({ value: id, label: name }))]} />
       ) : (
         whole
       )}
-      , swelling counted by <ChoiceInSentence label="definition A" value={chosen.first} onChange={(event) => choose('first', event.target.value)} choices={definitionChoices} /> beside{' '}
-      <ChoiceInSentence label="definition B" value={chosen.second} onChange={(event) => choose('second', event.target.value)} choices={definitionChoices} />, met{' '}
-      <ChoiceInSentence label="confirmation" value={confirmation} onChange={(event) => choose('confirmation', event.target.value)} choices={confirmations.map((value) => ({ value, label: confirmationWords[value] }))} />.{' '}
+      , swelling counted by <ChoiceInSentence label="definition A" value={shown.first} onChange={(event) => choose('first', event.target.value)} choices={definitionChoices} /> beside{' '}
+      <ChoiceInSentence label="definition B" value={shown.second} onChange={(event) => choose('second', event.target.value)} choices={definitionChoices} />, met{' '}
+      <ChoiceInSentence label="confirmation" value={shown.confirmation} onChange={(event) => choose('confirmation', event.target.value)} choices={confirmations.map((value) => ({ value, label: confirmationWords[value] }))} />.{' '}
       <span role="status" className="t-small text-ink-2">
         {isWaiting ? 'Working out the results.' : ''}
       </span>
