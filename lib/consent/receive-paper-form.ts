@@ -30,7 +30,7 @@ async function findPaperConsent(work: Work, id: string) {
  */
 export async function receivePaperForm(actor: Actor, { id }: { id: string }, content: Buffer, options: WorkOptions = {}): Promise<PaperFormView> {
   await withWork(actor, 'consent.upload', (work) => findPaperConsent(work, id), options);
-  const { contentType, extension } = recogniseForm(content);
+  const { contentType, extension } = await recogniseForm(content);
   const key = `consent/${id}/${randomUUID()}.${extension}`;
   await storage().put(key, content, { contentType });
   try {

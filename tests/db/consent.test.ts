@@ -223,7 +223,7 @@ describe('the participant’s copy', () => {
     await consentCopy.run({ siteId: scene.site.id, consentId: id }, deps);
     expect(sent.map(({ to }) => to)).toEqual([screening.email, screening.email]);
     const [first, second] = sent.map(({ attachments }) => attachments?.[0]?.content);
-    expect(recogniseForm(first ?? Buffer.alloc(0)).contentType).toBe('application/pdf');
+    expect(await recogniseForm(first ?? Buffer.alloc(0))).toMatchObject({ contentType: 'application/pdf' });
     expect(second).toEqual(first);
     const served = await withWork(scene.coordinator, 'consent.file', (work) => fetchConsentFile(work, { id, which: 'copy' }));
     expect(served).toMatchObject({ contentType: 'application/pdf', byteCount: first?.length, filename: 'consent-copy.pdf' });

@@ -19,8 +19,9 @@ const operations = Object.entries(document.paths).flatMap(([address, methods]) =
 describe('an address that takes a file', () => {
   const upload = document.paths['/api/consents/{id}/paper']?.['post'];
 
-  test('is described with the media types it takes and its size, not as JSON', () => {
-    expect(Object.keys(upload?.requestBody?.content ?? {}).toSorted()).toEqual([onePagePdf, onePixelJpeg, onePixelPng].map((file) => recogniseForm(file).contentType).toSorted());
+  test('is described with the media types it takes and its size, not as JSON', async () => {
+    const kinds = await Promise.all([onePagePdf, onePixelJpeg, onePixelPng].map(recogniseForm));
+    expect(Object.keys(upload?.requestBody?.content ?? {}).toSorted()).toEqual(kinds.map(({ contentType }) => contentType).toSorted());
     // Raw bytes carry no JSON type; maxLength bounds them (OpenAPI 3.1.1, 'Working with Binary Data').
     for (const { schema } of Object.values(upload?.requestBody?.content ?? {})) expect(schema).toEqual({ maxLength: 10_000_000 });
     expect(upload?.requestBody).toMatchObject({ required: true, description: expect.stringContaining('10000000 bytes') as string });
