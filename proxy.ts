@@ -1,4 +1,5 @@
 import { NextResponse, type NextRequest } from 'next/server';
+import { nothingRuns } from '@/lib/web/file-policy';
 
 /** Headers only: who may see what is decided in the data layer. A nonce for each answer; no inline script or style without it. */
 export function proxy(request: NextRequest): NextResponse {
@@ -21,7 +22,8 @@ export function proxy(request: NextRequest): NextResponse {
   headers.set('x-nonce', nonce);
   headers.set('content-security-policy', policy);
   const response = NextResponse.next({ request: { headers } });
-  response.headers.set('content-security-policy', policy);
+  // A header set here wins over the handler's own: data and files get the policy for what is never a page.
+  response.headers.set('content-security-policy', request.nextUrl.pathname.startsWith('/api/') ? nothingRuns : policy);
   response.headers.set('x-content-type-options', 'nosniff');
   response.headers.set('referrer-policy', 'no-referrer');
   response.headers.set('x-frame-options', 'DENY');

@@ -1,6 +1,7 @@
 import 'server-only';
 import { Readable } from 'node:stream';
 import { storage } from '@/lib/storage';
+import { nothingRuns } from './file-policy';
 
 /** A kept file as it is handed out. */
 export interface ServedFile {
@@ -19,7 +20,7 @@ export async function serveFile({ storageKey, contentType, byteCount, filename }
       'content-length': String(byteCount),
       'content-disposition': `attachment; filename="${filename.replace(/[^A-Za-z0-9._-]/g, '_')}"`,
       'x-content-type-options': 'nosniff',
-      'content-security-policy': "default-src 'none'; sandbox",
+      'content-security-policy': nothingRuns,
       'cache-control': 'no-store',
     },
   });
