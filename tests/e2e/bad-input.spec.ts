@@ -156,6 +156,14 @@ test('two people measure at once: the second is asked before anything is written
     const weight = coordinator.getByLabel('Body weight, in kg');
     await weight.fill('165');
     await expect(coordinator.getByText('165 kg is unusual. If it was read in pounds, it is 74.8 kg.').first()).toBeVisible();
+    await coordinator.getByRole('button', { name: 'Change to 74.8 kg' }).first().click();
+    await expect(weight).toHaveValue('74.8');
+    await expect(weight).toBeFocused();
+    await expect(coordinator.getByText(/unusual/)).toHaveCount(0);
+    const ratio = coordinator.getByLabel('Impedance ratio');
+    await ratio.fill('10,5');
+    await expect(coordinator.getByText('You typed 10.5; the ratio lies between 0.5 and 3. Was it 1.05?')).toBeVisible();
+    await ratio.fill('');
     await weight.fill('seventy');
     await expect(coordinator.getByText('‘seventy’ is not a number. Type digits and one decimal point or comma, such as 23.6.').first()).toBeVisible();
     await weight.fill('74,8');

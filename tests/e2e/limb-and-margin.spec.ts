@@ -88,6 +88,11 @@ test('both arms are measured by keyboard, asked about in the margin, corrected a
     await assessor.keyboard.press('Enter');
     await expect(cell('Left', 0, 1)).toBeVisible();
     await tabTo(assessor, cell('Left', 0, 1));
+    // A value is spoken of when it is left, not one value later.
+    await assessor.keyboard.type('160');
+    await assessor.keyboard.press('Enter');
+    await expect(assessor.getByText('160 cm is over the limit of 90. Was it 16?').first()).toBeVisible();
+    await assessor.keyboard.press('Shift+Enter');
     for (const column of ['left 1', 'right 1', 'left 2', 'right 2'])
       for (const [level, typed] of (readings[column] ?? []).entries()) {
         await assessor.keyboard.type(typed);
@@ -183,7 +188,7 @@ test('both arms are measured by keyboard, asked about in the margin, corrected a
     await dialog.getByLabel('Reason').fill('Misread when copied from the worksheet');
     await dialog.getByRole('button', { name: /^Correct and answer Q-/ }).click();
     await expect(dialog).toBeHidden();
-    await expect(coordinator.getByRole('button', { name: `${label}, 25.4 cm` })).toBeVisible();
+    await expect(coordinator.getByRole('button', { name: `${label}, 25.4 cm` })).toBeFocused();
     await expect(note(coordinator).filter({ hasText: 'Answered' })).toContainText('Corrected: Misread when copied from the worksheet');
     await expect(note(coordinator).filter({ hasText: 'History' })).toContainText('“Misread when copied from the worksheet”');
     await coordinator.goto(`${visitPath}/limb`);
