@@ -18,6 +18,8 @@ export const VisitSchema = defineEntity({
     state: p.enum(['to come', 'in progress', 'complete', 'missed']),
     missedReason: p.string().nullable(),
     unscheduledReason: p.string().nullable(),
+    /** Why it took place out of its window. */
+    windowReason: p.string().nullable(),
     protocolVersionId: p.uuid(),
   },
 });
@@ -28,6 +30,14 @@ export function beginVisit(visit: Visit, on: string): void {
   lawful(visit.state === 'to come' || visit.state === 'in progress', 'This visit has already ended.', 'locked');
   visit.state = 'in progress';
   visit.doneOn ??= on;
+}
+
+/** The visit was begun by mistake: it is to come. */
+export function undoBegin(visit: Visit): void {
+  lawful(visit.state === 'in progress', 'Only a visit in progress can be set back.');
+  visit.state = 'to come';
+  visit.doneOn = null;
+  visit.windowReason = null;
 }
 
 /** The visit is complete. */

@@ -22,9 +22,9 @@ export class TheRecord extends Migration {
     this.addSql('alter table role_grant add foreign key (of_participant_id) references participant');
     this.addSql(`create table visit (${record},
       key text not null, name text not null, target_on date not null, opens_on date not null, closes_on date not null, booked_at timestamptz, done_on date,
-      state text not null default 'to come' check (state in ('to come', 'in progress', 'complete', 'missed')), missed_reason text, unscheduled_reason text,
+      state text not null default 'to come' check (state in ('to come', 'in progress', 'complete', 'missed')), missed_reason text, unscheduled_reason text, window_reason text,
       protocol_version_id uuid not null references protocol_version, version integer not null default 1,
-      check (opens_on <= target_on and target_on <= closes_on), check ((state = 'missed') = (missed_reason is not null)), check (state not in ('in progress', 'complete') or done_on is not null))`);
+      check (opens_on <= target_on and target_on <= closes_on), check ((state = 'missed') = (missed_reason is not null)), check ((state in ('in progress', 'complete')) = (done_on is not null)))`);
     this.addSql(`create unique index visit_scheduled_once on visit (participant_id, key) where unscheduled_reason is null`);
     this.addSql('create index visit_site_due on visit (site_id, state, closes_on)');
     this.addSql('create index visit_participant on visit (participant_id, target_on)');
@@ -69,6 +69,7 @@ export class TheRecord extends Migration {
     this.consentFirst();
     this.reasonForChange();
     this.submitCloses();
+    this.visitInStudy();
   }
 
   /** Nothing is recorded before consent is complete, whoever asks. */
@@ -81,7 +82,7 @@ export class TheRecord extends Migration {
     this.addSql(`create constraint trigger participant_consent_first after insert on participant deferrable initially deferred for each row execute function consent_first()`);
   }
 
-  /** A value that was saved changes only with a reason: a completed limb assessment, its trials, a finished visit, the fixed facts of a participant. */
+  /** A value that was saved changes only with a reason: a completed limb assessment, its trials, a finished visit, the fixed facts of a participant, the identity of somebody who signed, an answer that eligibility was confirmed on. */
   private reasonForChange(): void {
     this.addSql(`create function reason_for_change() returns trigger language plpgsql security definer set search_path = public as $$
     declare
@@ -93,6 +94,8 @@ export class TheRecord extends Migration {
         select a.state = 'complete' into settled from limb_assessment a where a.id = new.assessment_id;
       elsif tg_table_name = 'limb_assessment' then settled := old.state = 'complete';
       elsif tg_table_name = 'visit' then settled := old.state in ('complete', 'missed');
+      elsif tg_table_name = 'participant_identity' then settled := exists (select from consent c where c.screening_id = new.screening_id and c.state in ('signed by participant', 'complete'));
+      elsif tg_table_name = 'eligibility_answer' then select s.eligibility_confirmed_at is not null into settled from screening s where s.id = new.screening_id;
       end if;
       if settled and app_reason() is null then
         select jsonb_object_agg(key, value) into before_image from jsonb_each(to_jsonb(old)) where key = any (kept);
@@ -106,10 +109,31 @@ export class TheRecord extends Migration {
       limb_trial: 'circumferences_mm',
       limb_assessment: 'body_weight_g,impedance_ratio,impedance_rest_min,position,sleeve_worn,hours_since_training,remarks,measured_at',
       visit: 'done_on,missed_reason,state',
+      participant_identity: 'name,email,phone,born_on',
+      eligibility_answer: 'answer',
       participant: 'affected_side,dominant_side,surgery_on,surgery,axillary_procedure,nodes_removed,radiotherapy,systemic_therapy,height_mm,age_years',
     };
     for (const [table, columns] of Object.entries(watch))
       this.addSql(`create trigger ${table}_reason before update on ${table} for each row execute function reason_for_change('${columns}')`);
+  }
+
+  /** What takes place, is booked or is added lies between the enrolment and a year after the last window of the schedule. */
+  private visitInStudy(): void {
+    this.addSql(`create function visit_in_study() returns trigger language plpgsql security definer set search_path = public as $$
+    declare
+      first_on date; last_on date; booked_on date := (new.booked_at at time zone 'UTC')::date;
+    begin
+      select enrolled_on into first_on from participant where id = new.participant_id;
+      select max(closes_on) into last_on from visit where participant_id = new.participant_id and unscheduled_reason is null;
+      last_on := greatest(last_on, case when new.unscheduled_reason is null then new.closes_on end) + 365;
+      -- An appointment is a moment: by the clock of the site its day may lie one off.
+      if new.done_on < first_on or new.done_on > last_on or booked_on < first_on - 1 or booked_on > last_on + 1
+        or (new.unscheduled_reason is not null and (new.target_on < first_on or new.target_on > last_on)) then
+        raise exception 'The day lies outside the participant''s time in the study.' using errcode = 'TM004';
+      end if;
+      return new; end $$`);
+    this.addSql(`create trigger visit_in_study before insert or update of done_on, booked_at, target_on, unscheduled_reason on visit for each row
+      when (new.done_on is not null or new.booked_at is not null or new.unscheduled_reason is not null) execute function visit_in_study()`);
   }
 
   /** Submit closes a questionnaire: its answers never change after it. */

@@ -51,6 +51,7 @@ import * as visitsBeginRoute from './visits/[id]/begin/route';
 import * as visitsBookRoute from './visits/[id]/book/route';
 import * as visitsCompleteRoute from './visits/[id]/complete/route';
 import * as visitsMissRoute from './visits/[id]/miss/route';
+import * as visitsUndoRoute from './visits/[id]/undo/route';
 import * as armRoute from './arm/route';
 import * as armCheckRoute from './arm/check/route';
 import * as flagsRoute from './flags/route';
@@ -121,6 +122,7 @@ export const routes: RouteTable = {
   '/api/visits/{id}/book': { POST: visitsBookRoute.POST },
   '/api/visits/{id}/complete': { POST: visitsCompleteRoute.POST },
   '/api/visits/{id}/miss': { POST: visitsMissRoute.POST },
+  '/api/visits/{id}/undo': { POST: visitsUndoRoute.POST },
   '/api/arm': { GET: armRoute.GET },
   '/api/arm/check': { POST: armCheckRoute.POST },
   '/api/flags': { GET: flagsRoute.GET },

@@ -7,6 +7,7 @@ import { useSend } from '../api/use-send';
 import { Button, ButtonLink } from '../ui/button';
 import { DateField } from '../ui/date-field';
 import { Dialog } from '../ui/dialog';
+import { formatDateRange } from '../ui/format';
 import { ReasonDialog } from '../ui/reason-dialog';
 import { useToast } from '../ui/toast';
 
@@ -15,17 +16,20 @@ export interface VisitStepsProps {
   limbHref: string;
   /** An assessment is open. */
   isUnderWay: boolean;
-  rights: { readonly measure: boolean; readonly book: boolean; readonly miss: boolean; readonly end: boolean };
+  rights: { readonly measure: boolean; readonly book: boolean; readonly miss: boolean; readonly end: boolean; readonly undo: boolean };
+  /** Today by the clock of the site. */
+  today: string;
 }
 
 /** What can be done with a visit that has not ended: measure, book, mark as missed, end without measuring. */
-export function VisitSteps({ visit, limbHref, isUnderWay, rights }: VisitStepsProps) {
-  const [open, setOpen] = useState<'book' | 'miss' | null>(null);
+export function VisitSteps({ visit, limbHref, isUnderWay, rights, today }: VisitStepsProps) {
+  const [open, setOpen] = useState<'book' | 'miss' | 'undo' | null>(null);
   const router = useRouter();
   const { say } = useToast();
   const version = { version: visit.version };
   const miss = useSend<VisitView, { missedReason: string }>('POST', `/api/visits/${visit.id}/miss`, version);
   const end = useSend<VisitView>('POST', `/api/visits/${visit.id}/complete`, version);
+  const undo = useSend<VisitView, { reason: string }>('POST', `/api/visits/${visit.id}/undo`, version);
   const done = (word: string) => {
     setOpen(null);
     say({ kind: 'fine', word });
@@ -40,7 +44,7 @@ export function VisitSteps({ visit, limbHref, isUnderWay, rights }: VisitStepsPr
         </ButtonLink>
       ) : null}
       {visit.state === 'to come' && rights.book ? <Button onClick={() => setOpen('book')}>{visit.bookedAt ? 'Book another time' : 'Book the visit'}</Button> : null}
-      {visit.state === 'to come' && rights.miss ? (
+      {visit.state === 'to come' && rights.miss && visit.closesOn < today ? (
         <Button kind="link" onClick={() => setOpen('miss')}>
           It did not take place
         </Button>
@@ -50,12 +54,29 @@ export function VisitSteps({ visit, limbHref, isUnderWay, rights }: VisitStepsPr
           End it without measuring
         </Button>
       ) : null}
+      {visit.state === 'in progress' && rights.undo ? (
+        <Button kind="link" onClick={() => setOpen('undo')}>
+          It was begun by mistake
+        </Button>
+      ) : null}
       {end.error ? (
         <p role="alert" className="is-needs basis-full">
           {end.error.problem.detail}
         </p>
       ) : null}
-      {open === 'book' ? <BookDialog visit={visit} onClose={() => setOpen(null)} onDone={() => done('Booked.')} /> : null}
+      {open === 'book' ? <BookDialog visit={visit} today={today} onClose={() => setOpen(null)} onDone={() => done('Booked.')} /> : null}
+      <ReasonDialog
+        open={open === 'undo'}
+        onClose={() => setOpen(null)}
+        title={`${visit.name} was begun by mistake?`}
+        explains="It is to come again, as long as nothing was written down at it. That it was begun stays in the trail, with your reason."
+        confirmLabel="Set it back"
+        keepLabel="Leave it begun"
+        reasons={['Begun at the wrong visit', 'Begun for the wrong participant', 'The participant left before measuring']}
+        onConfirm={({ reason }) => undo.mutate({ reason }, { onSuccess: () => done('Set back: the visit is to come.') })}
+        atWork={undo.isPending ? 'Setting back' : false}
+        error={undo.error?.problem.detail}
+      />
       <ReasonDialog
         open={open === 'miss'}
         onClose={() => setOpen(null)}
@@ -72,7 +93,13 @@ export function VisitSteps({ visit, limbHref, isUnderWay, rights }: VisitStepsPr
   );
 }
 
-function BookDialog({ visit, onClose, onDone }: { visit: VisitView; onClose: () => void; onDone: () => void }) {
+/** What a day out of the window means for the visit; nothing within it. */
+function windowWords({ opensOn, closesOn }: VisitView, on: string): string | undefined {
+  if (on === '' || (on >= opensOn && on <= closesOn)) return undefined;
+  return `Out of the window ${formatDateRange(opensOn, closesOn)}: the visit will count as ${on < opensOn ? 'early' : 'late'}, and asks for a reason when it begins.`;
+}
+
+function BookDialog({ visit, today, onClose, onDone }: { visit: VisitView; today: string; onClose: () => void; onDone: () => void }) {
   const [at, setAt] = useState('');
   const [isEmpty, setIsEmpty] = useState(false);
   const book = useSend<VisitView>('POST', `/api/visits/${visit.id}/book`, { version: visit.version });
@@ -97,7 +124,7 @@ function BookDialog({ visit, onClose, onDone }: { visit: VisitView; onClose: () 
       }
     >
       <form id="book-form" noValidate onSubmit={submit}>
-        <DateField label="Day and time, by the clock of the site" withTime value={at} error={isEmpty && !at ? 'Give the day and the time.' : book.error?.problem.detail} onChange={(event) => setAt(event.target.value)} />
+        <DateField label="Day and time, by the clock of the site" withTime min={`${today}T00:00`} value={at} hint={windowWords(visit, at.slice(0, 10))} error={isEmpty && !at ? 'Give the day and the time.' : book.error?.problem.detail} onChange={(event) => setAt(event.target.value)} />
       </form>
     </Dialog>
   );

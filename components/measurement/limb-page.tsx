@@ -8,6 +8,8 @@ import type { OpenAssessmentView } from '@/lib/measurement/view-open';
 import { useSend } from '../api/use-send';
 import { Button, ButtonLink } from '../ui/button';
 import { Caution } from '../ui/caution';
+import { formatDateRange } from '../ui/format';
+import { TextField } from '../ui/text-field';
 import { ArmDifference } from './arm-difference';
 import { ArmDrawing } from './arm-drawing';
 import { DrawingHead, ArmChoice } from './entry-parts';
@@ -22,14 +24,17 @@ export function LimbPage({ page, mayMeasure }: { page: LimbPageView; mayMeasure:
   const router = useRouter();
   const [view, setView] = useState(page.assessment);
   const formHref = `/participants/${page.code}/visits/${page.visit.id}`;
-  if (view === null) return <Begin visitId={page.visit.id} mayMeasure={mayMeasure} onBegun={setView} />;
+  if (view === null) return <Begin visit={page.visit} today={page.today} mayMeasure={mayMeasure} onBegun={setView} />;
   if (view.state === 'complete') return <SavedSitting view={view} formHref={formHref} />;
   if (!mayMeasure) return <p className="mt-8">The arms are being measured. The values can be read once both trials are saved.</p>;
   return <LimbEntry view={view} page={page} onComplete={setView} onLeave={() => router.push(formHref)} />;
 }
 
-function Begin({ visitId, mayMeasure, onBegun }: { visitId: string; mayMeasure: boolean; onBegun: (view: OpenAssessmentView) => void }) {
-  const begin = useSend<OpenAssessmentView>('POST', `/api/visits/${visitId}/assessment`);
+function Begin({ visit, today, mayMeasure, onBegun }: { visit: LimbPageView['visit']; today: string; mayMeasure: boolean; onBegun: (view: OpenAssessmentView) => void }) {
+  const [windowReason, setWindowReason] = useState('');
+  const begin = useSend<OpenAssessmentView, { windowReason?: string }>('POST', `/api/visits/${visit.id}/assessment`);
+  const refused = begin.error?.problem;
+  const isOutside = visit.state === 'to come' && (today < visit.opensOn || today > visit.closesOn);
   return (
     <div className="mt-8 grid max-w-[640px] gap-5">
       <p className="t-lede">
@@ -37,14 +42,24 @@ function Begin({ visitId, mayMeasure, onBegun }: { visitId: string; mayMeasure: 
         third is taken. Earlier values stay hidden until both trials are saved.
       </p>
       <Caution title="Arm hot, red, suddenly swollen, or fever:">stop, and send for urgent care.</Caution>
-      {begin.error ? (
+      {refused && !(isOutside && refused.fields?.some(({ field }) => field === 'windowReason')) ? (
         <p role="alert" className="is-needs">
-          {begin.error.problem.detail}
+          {refused.detail}
         </p>
+      ) : null}
+      {isOutside && mayMeasure ? (
+        <TextField
+          label={`Why it takes place ${today < visit.opensOn ? 'before' : 'after'} its window`}
+          hint={`The window is ${formatDateRange(visit.opensOn, visit.closesOn)}. The visit will count as ${today < visit.opensOn ? 'early' : 'late'}.`}
+          maxLength={300}
+          value={windowReason}
+          error={refused?.fields?.find(({ field }) => field === 'windowReason')?.sentence}
+          onChange={(event) => setWindowReason(event.target.value)}
+        />
       ) : null}
       {mayMeasure ? (
         <p>
-          <Button kind="primary" atWork={begin.isPending ? 'Beginning' : false} onClick={() => begin.mutate({}, { onSuccess: onBegun })}>
+          <Button kind="primary" atWork={begin.isPending ? 'Beginning' : false} onClick={() => begin.mutate(windowReason.trim() ? { windowReason: windowReason.trim() } : {}, { onSuccess: onBegun })}>
             Begin measuring
           </Button>
         </p>

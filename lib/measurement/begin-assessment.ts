@@ -1,20 +1,25 @@
 import { LimbAssessmentSchema } from '@/entities/limb-assessment';
-import { beginVisit } from '@/entities/visit';
 import { findProtocol } from '@/lib/protocol/find-protocol';
-import { findVisit, timeZoneOf } from '@/lib/schedule/view-visit';
+import { startVisit } from '@/lib/schedule/start-visit';
+import { findVisit } from '@/lib/schedule/view-visit';
 import { Refusal } from '@/lib/work/refusal';
-import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import { trialsOf } from './find-assessment';
 import { viewOpen, type OpenAssessmentView } from './view-open';
 
 /** Opens the limb assessment of a visit with the map of its protocol version, or takes up the one that was left unfinished. */
-export async function beginAssessment(work: Work, { id }: { id: string }): Promise<OpenAssessmentView> {
+export async function beginAssessment(work: Work, { id, windowReason }: { id: string; windowReason?: string | undefined }): Promise<OpenAssessmentView> {
   const visit = await findVisit(work, id);
   const found = await work.em.findOne(LimbAssessmentSchema, { visitId: id });
   if (found?.state === 'complete') throw new Refusal('locked', 'The limb assessment of this visit is saved.');
-  if (found) return viewOpen(found, await trialsOf(work, found.id));
-  beginVisit(visit, localDate(work.now, await timeZoneOf(work, visit.siteId)));
+  const isFresh = visit.state === 'to come';
+  await startVisit(work, visit, windowReason);
+  if (found) {
+    // The form was opened once by mistake and is empty: it belongs to who measures now.
+    if (isFresh) Object.assign(found, { assessorId: work.actor.accountId, measuredAt: work.now });
+    await work.em.flush();
+    return viewOpen(found, await trialsOf(work, found.id));
+  }
   const { measurement } = (await findProtocol(work, visit.protocolVersionId)).document;
   const assessment = work.em.create(LimbAssessmentSchema, {
     siteId: visit.siteId,

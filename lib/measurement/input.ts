@@ -1,11 +1,12 @@
 import { outsideRatio } from '@/instruments/measurement/parse';
 import { z } from 'zod';
 import { fieldTargetInput } from '@/lib/queries/input';
+import { windowReason } from '@/lib/schedule/input';
 
 /** What limb assessments take from people: the same schema in the browser and on the server. */
 const girthMm = z.int('Girths are whole millimetres.').min(100, 'A girth under 10 cm cannot be right.').max(700, 'A girth over 70 cm cannot be right.').nullable();
 
-export const beginAssessmentInput = z.strictObject({ id: z.uuid() });
+export const beginAssessmentInput = z.strictObject({ id: z.uuid(), windowReason });
 
 export const saveTrialInput = z.strictObject({
   id: z.uuid(),

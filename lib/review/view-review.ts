@@ -75,7 +75,7 @@ export async function viewReview(work: Work, { visitId, code }: { visitId: strin
     visit: toVisitView(visit),
     participant: { id: whose.id, code: whose.code, affectedSide: whose.affected_side, siteName: whose.site_name, timeZone: whose.time_zone },
     assessment: complete ? await viewComplete(work, taken) : null,
-    underWay: taken && !complete ? { passes: trials.filter(({ trial, circumferencesMm }) => trial < 3 && circumferencesMm.every((girth) => girth !== null)).length } : null,
+    underWay: taken && !complete && visit.state === 'in progress' ? { passes: trials.filter(({ trial, circumferencesMm }) => trial < 3 && circumferencesMm.every((girth) => girth !== null)).length } : null,
     assessorLabel: whose.assessor_label,
     struck: await earlierValues(work, rows),
     queries: await queriesOfVisit(work, visitId),

@@ -3,6 +3,7 @@ import { VisitSchema } from '@/entities/visit';
 import { addDays } from '@/instruments/calendar';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
+import { requireDay, studyDaysOf } from './study-days';
 import { toVisitView, type VisitView } from './view-visit';
 
 /** Days after its day in which an unscheduled visit is still taken for it. Common practice, no source. */
@@ -12,7 +13,8 @@ const graceDays = 7;
 export async function addUnscheduledVisit(work: Work, { participantId, on, why }: { participantId: string; on: string; why: string }): Promise<VisitView> {
   const participant = await work.em.findOne(ParticipantSchema, { id: participantId });
   if (!participant) throw new Refusal('not-found', 'There is no such participant in your reach.');
-  if (on < participant.enrolledOn) throw new Refusal('invalid', `${on} is before the enrolment on ${participant.enrolledOn}.`, 'on');
+  const { enrolledOn, lastOn } = await studyDaysOf(work, participantId);
+  requireDay(on, { from: enrolledOn, fromWords: 'the enrolment', lastOn }, 'on');
   if (participant.state !== 'enrolled' && participant.leftGrade !== 'stops training')
     throw new Refusal('locked', 'This participant has left, so no visit can be added.');
   const visit = work.em.create(VisitSchema, {

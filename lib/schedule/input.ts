@@ -4,7 +4,10 @@ import { calendarDay } from '@/lib/work/calendar-day';
 /** What visits take from people: the same schema in the browser and on the server. */
 const why = (sentence: string) => z.string().trim().min(3, sentence).max(300, 'Use at most 300 characters.');
 
-export const beginVisitInput = z.strictObject({ id: z.uuid() });
+/** Out of its window a visit begins only with the reason. */
+export const windowReason = why('Say why it takes place out of its window.').optional();
+export const beginVisitInput = z.strictObject({ id: z.uuid(), windowReason });
+export const undoBeginInput = z.strictObject({ id: z.uuid(), reason: why('Say how it came to be begun.') });
 export const completeVisitInput = z.strictObject({ id: z.uuid() });
 export const bookVisitInput = z.strictObject({
   id: z.uuid(),

@@ -18,6 +18,8 @@ export interface VisitView {
   readonly state: Visit['state'];
   readonly missedReason: string | null;
   readonly unscheduledReason: string | null;
+  /** Why it took place out of its window. */
+  readonly windowReason: string | null;
   /** Where the visit lies against its window; null while it has no date. */
   readonly place: { readonly status: 'in' | 'early' | 'late'; readonly deltaDays: number } | null;
   readonly version: number;
@@ -36,6 +38,7 @@ export const toVisitView = (visit: Visit): VisitView => ({
   state: visit.state,
   missedReason: visit.missedReason ?? null,
   unscheduledReason: visit.unscheduledReason ?? null,
+  windowReason: visit.windowReason ?? null,
   place: visit.doneOn ? placeInWindow(visit, visit.doneOn) : null,
   version: visit.version,
 });

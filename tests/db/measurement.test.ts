@@ -71,7 +71,7 @@ describe('a limb assessment', () => {
     const who = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
     await complete(await measure(who, 'baseline', { left: vol03, right: vol03 }));
     const next = Object.keys(who.visits).find((key) => key !== 'baseline') as string;
-    await measure(who, next, { left: vol10, right: vol03 });
+    await measure(who, next, { left: vol10, right: vol03 }, '2027-04-01');
     const open = await withWork(assessor, 'assessment.view', (work) => viewAssessment(work, { visitId: visitOf(who, next) }));
     expect(open?.state).toBe('open');
     expect(JSON.stringify(open)).not.toMatch(/volume|rvc|earlier|verdict|baseline|interLimb/i);

@@ -26,7 +26,7 @@ beforeAll(async () => {
 beforeEach(async () => {
   who = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
   visitId = who.visits['baseline'] ?? '';
-  await withWork(scene.coordinator, 'visit.begin', (work) => beginVisit(work, { id: visitId }), { expectedVersion: 1 });
+  await withWork(scene.coordinator, 'visit.begin', (work) => beginVisit(work, { id: visitId }), { expectedVersion: 1, now: new Date('2027-01-08T10:00:00Z') });
 });
 
 const target = () => ({ table: 'visit' as const, id: visitId, field: 'done_on' });

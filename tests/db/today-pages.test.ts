@@ -20,8 +20,10 @@ const groupOf = ({ groups }: TodayView, key: WorkGroupKey) => {
   return group;
 };
 
+/** A schedule that asks for nothing for two years. */
+const nothingYet = { visits: [{ key: 'baseline', name: 'Baseline', offsetDays: 730, earlyDays: 0, lateDays: 28, questionnaires: [] }] };
 /** Somebody whose own schedule asks for nothing yet. */
-const givenNobodyDue = (): Promise<GivenParticipant> => givenParticipant(scene.site, scene.protocol, scene.coordinator, { enrolledOn: '2029-01-01' });
+const givenNobodyDue = (): Promise<GivenParticipant> => givenParticipant(scene.site, scene.protocol, scene.coordinator, { enrolledOn: '2027-01-01' });
 
 /** All rows of a group, page after page, until a page says it is not the one asked for. */
 async function pagesOf(input: { kind?: (typeof todayKinds)[number]; group: WorkGroupKey }): Promise<string[][]> {
@@ -69,7 +71,7 @@ describe('the day a visit asks for', () => {
   let bookings: string[] = [];
 
   beforeAll(async () => {
-    scene = await givenScene();
+    scene = await givenScene(nothingYet);
     const participant = await givenNobodyDue();
     for (const [index, plan] of plans.entries()) {
       const { id } = await givenVisit(participant, scene.protocol, { ...plan, key: `plan-${index}`, bookedAt: plan.bookedOn === null ? null : `${plan.bookedOn}T09:30:00Z` });
@@ -117,7 +119,7 @@ describe('a long day', () => {
   let overdue: string[] = [];
 
   beforeAll(async () => {
-    scene = await givenScene();
+    scene = await givenScene(nothingYet);
     const [one, two] = [await givenNobodyDue(), await givenNobodyDue()];
     for (const [days, count, group] of plan) {
       // Two people share each day's queries; every one of them has the same due day, no hour and one of two codes.

@@ -52,10 +52,11 @@ test('two sites on two sides of midnight each have their own today', async () =>
   const study = await givenStudy();
   const auckland = await givenSite(study, { name: 'Auckland', timeZone: 'Pacific/Auckland' });
   const london = await givenSite(study, { name: 'London', timeZone: 'Europe/London' });
-  const protocol = await givenProtocol(study);
+  // Their own schedule asks for nothing yet.
+  const protocol = await givenProtocol(study, { visits: [{ key: 'baseline', name: 'Baseline', offsetDays: 730, earlyDays: 0, lateDays: 28, questionnaires: [] }] });
   const both = await givenStaff('site-coordinator', [auckland, london]);
   for (const site of [auckland, london]) {
-    const participant = await givenParticipant(site, protocol, both, { enrolledOn: '2029-01-01' });
+    const participant = await givenParticipant(site, protocol, both, { enrolledOn: '2027-01-01' });
     await givenQueries(participant, both, { count: 1, dueOn: '2027-07-01' });
     await givenVisit(participant, protocol, { key: 'extra', targetOn: '2027-07-01', closesOn: '2027-07-20', bookedAt: '2027-07-01T22:30:00Z' });
   }

@@ -90,7 +90,7 @@ describe('the review of a visit', () => {
 
   test('holds nothing of an assessment that is still being taken', async () => {
     const other = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
-    const open = await withWork(assessor, 'assessment.begin', (work) => beginAssessment(work, { id: other.visits['baseline'] ?? '' }));
+    const open = await withWork(assessor, 'assessment.begin', (work) => beginAssessment(work, { id: other.visits['baseline'] ?? '' }), { now: new Date('2027-01-08T10:00:00Z') });
     await withWork(assessor, 'assessment.save-trial', (work) => saveTrial(work, { id: open.id, side: 'left', trial: 1, circumferencesMm: left }), { expectedVersion: open.version });
     const view = await withWork(assessor, 'visit.view', (work) => viewReview(work, { visitId: open.visitId, code: other.code }));
     expect(view).toMatchObject({ assessment: null, underWay: { passes: 1 }, struck: [] });

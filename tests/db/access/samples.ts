@@ -94,5 +94,6 @@ export const samples: Readonly<Record<string, (s: Subject) => Sample>> = {
   'POST /api/visits/{id}/book': byId((s) => s.laterVisitId, { on: '2026-12-30', time: '09:30' }),
   'POST /api/visits/{id}/complete': byId((s) => s.visitId, {}),
   'POST /api/visits/{id}/miss': byId((s) => s.laterVisitId, { missedReason: 'Was ill.' }),
+  'POST /api/visits/{id}/undo': byId((s) => s.visitId, { reason: 'Begun at the wrong line.' }),
   'GET /api/week': list,
 };

@@ -35,7 +35,7 @@ export async function subjectAt(scene: GivenScene, site: GivenSite, staff: Actor
   const [visitId, laterVisitId] = Object.values(participant.visits) as [string, string];
   const open = await givenScreening(site, scene.protocol, { confirmedBy: staff });
   const consent = await givenConsent(open, scene.protocol, staff, 'reading');
-  const assessment = await withWork(staff, 'assessment.begin', (work) => beginAssessment(work, { id: visitId }));
+  const assessment = await withWork(staff, 'assessment.begin', (work) => beginAssessment(work, { id: visitId, windowReason: 'The scene is set on whatever day it is.' }));
   const record = [site.id, participant.id];
   const queryId = await made(
     `insert into data_query (site_id, participant_id, visit_id, target_table, target_id, field, field_label, origin, state, raised_by, raised_at, due_on, answered_at)

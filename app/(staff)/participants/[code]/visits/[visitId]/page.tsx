@@ -45,7 +45,8 @@ export default async function Page({ params }: Props) {
         visit={visit}
         limbHref={limbHref}
         isUnderWay={view.underWay !== null}
-        rights={{ measure: mayDo('assessment.begin'), book: mayDo('visit.book'), miss: mayDo('visit.miss'), end: mayDo('visit.complete') }}
+        rights={{ measure: mayDo('assessment.begin'), book: mayDo('visit.book'), miss: mayDo('visit.miss'), end: mayDo('visit.complete'), undo: mayDo('visit.correct') }}
+        today={view.today}
       />
       <ReviewSheet
         view={view}
@@ -69,7 +70,8 @@ function ledeOf({ visit, assessment, underWay, assessorLabel, participant }: Rev
   if (visit.state === 'missed') return `Missed: ${visit.missedReason ?? ''}. The ${window}.`;
   if (!visit.doneOn) return `To come, ${window}${booked}.${why}`;
   const entered = assessment && assessorLabel ? ` Entered by ${assessorLabel}.` : underWay ? ` Being measured: ${countOf(underWay.passes, 'pass', 'passes')} of four saved.` : '';
-  return `${formatDate(visit.doneOn)}, ${placeWords(visit)}.${entered}${why}`;
+  const outside = visit.windowReason ? ` Out of window: ${visit.windowReason}` : '';
+  return `${formatDate(visit.doneOn)}, ${placeWords(visit)}.${entered}${outside}${why}`;
 }
 
 function placeWords({ place, opensOn, closesOn }: ReviewView['visit']): string {
