@@ -102,6 +102,7 @@ export const smallProtocol: ProtocolDocument = {
     { key: 'at-risk', name: 'At risk of swelling' },
     { key: 'living-with', name: 'Living with swelling' },
   ],
+  daysSinceSurgery: 28,
   eligibility: [
     { key: 'adult', text: 'Is 18 years or older', lets: 'yes' },
     { key: 'treated', text: 'Had surgery for breast cancer on one side', lets: 'yes' },

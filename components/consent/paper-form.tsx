@@ -69,7 +69,7 @@ function AddForm({ consentId, hasForm }: { consentId: string; hasForm: boolean }
             {...joined}
             type="file"
             accept="application/pdf,image/jpeg,image/png"
-            className="py-2"
+            className="rounded-[3px] border border-edge bg-raised p-2 file:mr-4 file:min-h-9 file:cursor-pointer file:rounded-[3px] file:border file:border-solid file:border-ink file:bg-ground file:px-3.5 file:font-semibold"
             onChange={(event) => {
               setFile(event.target.files?.[0] ?? null);
               setError(undefined);

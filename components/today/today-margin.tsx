@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import type { TodayView } from '@/lib/today/view-today';
 import { RecruitmentChart } from '../chart/recruitment-chart';
 import { countOf, formatCount, formatDate, formatNearDate, formatNumber, formatTime } from '../ui/format';
@@ -26,6 +27,11 @@ export function TodayMargin({ view }: { view: TodayView }) {
         </p>
         <RecruitmentChart {...{ from, to, today, target, enrolled, pacePerDay }} label={`${count} of ${target} recruited.`} />
         <p className="t-small mt-2 text-ink-2">{paceWords(recruitment)} The thin line spreads the target evenly over the study.</p>
+        <p className="mt-2">
+          <Link className="font-semibold" href="/screening">
+            Screening log
+          </Link>
+        </p>
       </MarginPart>
       <MarginPart title={`Consent to form ${consent.number}`}>
         <Gauge state={consent.current === consent.of ? 'done' : 'part'} level={consent.of > 0 ? consent.current / consent.of : 0} size={84} word={`${formatCount(consent.current)} of ${formatCount(consent.of)} in the study`} />

@@ -1,9 +1,11 @@
 import { signByParticipant } from '@/entities/consent';
+import { plainDate } from '@/lib/people/plain-date';
 import { Refusal } from '@/lib/work/refusal';
 import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import { addSignature } from './add-signature';
 import { contentHash } from './consent-content';
+import { plainDate } from '@/lib/people/plain-date';
 import { checkPermissions, checkStatements, findConsent } from './find-consent';
 import { stepOf, type ConsentStep } from './view-consent';
 
@@ -18,7 +20,8 @@ export async function recordPaperSignature(
   const { consent, form, site } = await findConsent(work, id);
   work.expect(consent);
   if (consent.mode !== 'paper' || !consent.paperFileId) throw new Refusal('conflict', 'Add the signed form first.', 'file');
-  if (signedOn > localDate(work.now, site.timeZone)) throw new Refusal('invalid', `${signedOn} is still to come. Give the day that stands beside the signature.`, 'signedOn');
+  if (signedOn > localDate(work.now, site.timeZone)) throw new Refusal('invalid', `${plainDate(signedOn)} is still to come. Give the day that stands beside the signature.`, 'signedOn');
+  if (signedOn < form.effectiveOn) throw new Refusal('invalid', `Form ${form.number} is in effect from ${plainDate(form.effectiveOn)}, so it was not signed before that. Check the day and the year.`, 'signedOn');
   checkStatements(form, statements);
   checkPermissions(form, permissions);
   consent.permissions = permissions;

@@ -1,3 +1,4 @@
+import { plainDate } from '@/lib/people/plain-date';
 import { Refusal } from '@/lib/work/refusal';
 
 /** Whole years from a birth date to a day, both 'YYYY-MM-DD'; a birthday on 29 February is reached on 1 March of other years. */
@@ -8,7 +9,7 @@ export function ageYears(bornOn: string, on: string): number {
 
 /** @throws Refusal 'invalid' for a date of birth to come, or an age no participant has. */
 export function checkBirthDate(bornOn: string, today: string): void {
-  if (bornOn > today) throw new Refusal('invalid', `${bornOn} is still to come. Check the year of birth.`, 'bornOn');
+  if (bornOn > today) throw new Refusal('invalid', `${plainDate(bornOn)} is still to come. Check the year of birth.`, 'bornOn');
   const age = ageYears(bornOn, today);
-  if (age > 110) throw new Refusal('invalid', `${bornOn} would make ${age} years. Check the year of birth.`, 'bornOn');
+  if (age > 110) throw new Refusal('invalid', `${plainDate(bornOn)} would make ${age} years. Check the year of birth.`, 'bornOn');
 }

@@ -1,9 +1,11 @@
+import { daysBetween } from '@/instruments/calendar';
 import { participantCode } from '@/instruments/participant-code';
 import { ConsentSchema } from '@/entities/consent';
 import { ParticipantIdentitySchema } from '@/entities/participant-identity';
 import { ParticipantSchema, type Participant } from '@/entities/participant';
 import { assertEnrollable, endInEnrolment, type Screening } from '@/entities/screening';
 import { participantInvite } from '@/lib/jobs/handlers/participant-invite';
+import { plainDate } from '@/lib/people/plain-date';
 import { findProtocol, type Protocol } from '@/lib/protocol/find-protocol';
 import { layOutSchedule } from '@/lib/schedule/lay-out-schedule';
 import { Refusal } from '@/lib/work/refusal';
@@ -87,9 +89,12 @@ function describe(input: EnrolInput, is: { number: number; code: string; age: nu
 }
 
 /** Facts that contradict each other are refused with both values. */
-function checkFacts(input: EnrolInput, enrolledOn: string): void {
-  if (input.surgeryOn > enrolledOn) throw new Refusal('invalid', `Surgery on ${input.surgeryOn} is still to come. People are enrolled after it.`, 'surgeryOn');
-  if (input.surgeryOn < '1960-01-01') throw new Refusal('invalid', `Surgery on ${input.surgeryOn} is long ago. Check the year.`, 'surgeryOn');
+function checkFacts(input: EnrolInput, enrolledOn: string, daysSinceSurgery: number): void {
+  const surgery = `Surgery on ${plainDate(input.surgeryOn)}`;
+  if (input.surgeryOn > enrolledOn) throw new Refusal('invalid', `${surgery} is still to come. People are enrolled after it.`, 'surgeryOn');
+  const days = daysBetween({ from: input.surgeryOn, to: enrolledOn });
+  if (days < daysSinceSurgery) throw new Refusal('invalid', `${surgery} was ${days} days ago; the protocol asks for ${daysSinceSurgery} or more. Check the date, or wait with enrolment.`, 'surgeryOn');
+  if (input.surgeryOn < '1960-01-01') throw new Refusal('invalid', `${surgery} is long ago. Check the year.`, 'surgeryOn');
   if (input.axillaryProcedure === 'none' && input.nodesRemoved > 0)
     throw new Refusal('invalid', `${input.nodesRemoved} nodes removed does not go with no axillary procedure. Check both.`, 'nodesRemoved');
 }
@@ -105,9 +110,9 @@ export async function enrolParticipant(work: Work, input: EnrolInput): Promise<E
   assertEnrollable(screening, consents > 0);
   const { number, siteCode, studyId, zone } = await nextNumber(work, screening.siteId);
   const enrolledOn = localDate(work.now, zone);
-  checkFacts(input, enrolledOn);
-  const age = await ageFrom(work, screening.id, enrolledOn);
   const protocol = await findProtocol(work, screening.protocolVersionId);
+  checkFacts(input, enrolledOn, protocol.document.daysSinceSurgery);
+  const age = await ageFrom(work, screening.id, enrolledOn);
   const code = participantCode(siteCode, number);
   const anchorOn = anchorOf(protocol, { enrolledOn, surgeryOn: input.surgeryOn });
   const participant = work.em.create(ParticipantSchema, describe(input, { number, code, age, screening, enrolledOn, anchorOn, protocol }));

@@ -2,6 +2,7 @@ import { addDays } from '@/instruments/calendar';
 import { ParticipantIdentitySchema } from '@/entities/participant-identity';
 import { ScreeningSchema } from '@/entities/screening';
 import { currentProtocol } from '@/lib/protocol/find-protocol';
+import { plainDate } from '@/lib/people/plain-date';
 import { Refusal } from '@/lib/work/refusal';
 import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
@@ -32,8 +33,8 @@ export async function openScreening(work: Work, input: OpenScreeningInput): Prom
   const [site] = await work.sql<{ number: number; zone: string }>('update site set screening_count = screening_count + 1 where id = ? returning screening_count as number, time_zone as zone', [siteId]);
   if (!site) throw new Refusal('not-found', 'There is no such site.');
   const today = localDate(work.now, site.zone);
-  if (input.screenedOn > today) throw new Refusal('invalid', `${input.screenedOn} is still to come. Give the day of screening.`, 'screenedOn');
-  if (input.screenedOn < addDays(today, -365)) throw new Refusal('invalid', `${input.screenedOn} is more than a year ago. Check the year.`, 'screenedOn');
+  if (input.screenedOn > today) throw new Refusal('invalid', `${plainDate(input.screenedOn)} is still to come. Give the day of screening.`, 'screenedOn');
+  if (input.screenedOn < addDays(today, -365)) throw new Refusal('invalid', `${plainDate(input.screenedOn)} is more than a year ago. Check the year.`, 'screenedOn');
   if (input.bornOn) checkBirthDate(input.bornOn, today);
   const protocol = await currentProtocol(work, site.zone);
   if (!protocol.document.cohorts.some(({ key }) => key === input.cohort)) throw new Refusal('invalid', 'The protocol has no such cohort.', 'cohort');

@@ -26,6 +26,8 @@ export const scheduledVisitSchema = z.strictObject({
 export const protocolSchema = z.strictObject({
   cohorts: z.array(z.strictObject({ key, name: z.string() })).min(1),
   eligibility: z.array(criterionSchema).min(1),
+  /** Days between surgery and enrolment, at least; the criterion in words and this figure are set together. */
+  daysSinceSurgery: days.default(0),
   /** What day zero is. */
   anchor: z.enum(['enrolment', 'surgery', 'first session']),
   visits: z.array(scheduledVisitSchema).min(1),

@@ -8,4 +8,5 @@ const [first, last] = [1900, 2100];
  * @param sentence what to give, when it is not a day.
  */
 export const calendarDay = (sentence: string) =>
-  z.iso.date(sentence).refine((day) => Number(day.slice(0, 4)) >= first && Number(day.slice(0, 4)) <= last, { error: `The year must lie between ${first} and ${last}.` });
+  // What is no day at all has its sentence already.
+  z.iso.date(sentence).refine((day) => !/^\d{4}-/.test(day) || (Number(day.slice(0, 4)) >= first && Number(day.slice(0, 4)) <= last), { error: `The year must lie between ${first} and ${last}.` });

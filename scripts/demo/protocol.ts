@@ -16,6 +16,7 @@ export const protocolDocument: ProtocolDocument = protocolSchema.parse({
     { key: 'at-risk', name: 'At risk of swelling' },
     { key: 'swelling', name: 'Living with swelling' },
   ],
+  daysSinceSurgery: 28,
   eligibility: [
     { key: 'adult', text: 'Aged 18 or over', lets: 'yes' },
     { key: 'treated', text: 'Treated for breast cancer on one side', lets: 'yes' },

@@ -16,6 +16,7 @@ import { asOwner, givenConsent, givenScene, givenScreening, givenSite, givenStaf
 let signedIn: Actor | null = null;
 vi.mock('@/lib/web/session', () => ({ currentSession: () => Promise.resolve(signedIn ? { actor: signedIn } : null) }));
 const { POST: openRoute } = await import('@/app/api/screenings/route');
+const { PUT: answersRoute } = await import('@/app/api/screenings/[id]/answers/route');
 const { POST: enrolRoute } = await import('@/app/api/screenings/[id]/enrol/route');
 
 let scene: GivenScene;
@@ -143,6 +144,56 @@ describe('screening', () => {
   });
 });
 
+describe('after the signature', () => {
+  const correct = (id: string, change: { name?: string; bornOn?: string | null }, reason?: string) =>
+    withWork(scene.coordinator, 'identity.correct', (work) => correctIdentity(work, { id, name: 'Ada Example', email: 'ada@home.example', phone: null, bornOn: '1968-04-12', ...change }), reason ? { reason } : {});
+
+  test('name and contact change with a reason only, which the trail keeps; before it they need none', async () => {
+    const before = await givenScreening(scene.site, scene.protocol);
+    await expect(correct(before.id, {})).resolves.toBeDefined();
+    const { id } = await readyToEnrol();
+    expect(await withWork(scene.coordinator, 'identity.view', (work) => viewIdentity(work, { id }))).toMatchObject({ needsReason: true });
+    await expect(correct(id, {})).rejects.toMatchObject({ code: 'invalid', field: 'reason' });
+    await correct(id, {}, 'Written wrongly');
+    const trail = await asOwner(`select reason from audit_entry where act = 'identity.correct' and op = 'UPDATE' and after ->> 'screening_id' = $1`, [id]);
+    expect(trail).toEqual([{ reason: 'Written wrongly' }]);
+  });
+
+  test('the data base asks for the reason too, of identity and of an answer that was confirmed', async () => {
+    const { id } = await readyToEnrol();
+    await expect(withWork(scene.coordinator, 'identity.correct', (work) => work.sql(`update participant_identity set born_on = '2015-01-01' where screening_id = ?`, [id]))).rejects.toMatchObject({ code: 'invalid', field: 'reason' });
+    await expect(withWork(scene.coordinator, 'screening.answer', (work) => work.sql(`update eligibility_answer set answer = 'no' where screening_id = ? and criterion = 'adult'`, [id]))).rejects.toMatchObject({ code: 'invalid', field: 'reason' });
+  });
+
+  test('nobody becomes a minor, and the age at enrolment follows the date of birth', async () => {
+    const { id } = await readyToEnrol();
+    await expect(correct(id, { bornOn: '2015-01-01' }, 'Written wrongly')).rejects.toMatchObject({ code: 'invalid', field: 'bornOn' });
+    const { participantId } = await enrol(scene.coordinator, id);
+    const age = async () => (await asOwner<{ age_years: number }>('select age_years from participant where id = $1', [participantId]))[0]?.age_years;
+    // Enrolled on 1 March 2027: born on 12 April 1968 that is 58 years; on 1 March 1967 it is the 60th birthday, a day later 59.
+    expect(await age()).toBe(58);
+    await correct(id, { bornOn: '1967-03-01' }, 'Written wrongly');
+    expect(await age()).toBe(60);
+    await correct(id, { bornOn: '1967-03-02' }, 'Written wrongly');
+    expect(await age()).toBe(59);
+    await expect(correct(id, { bornOn: null }, 'Taken away')).rejects.toMatchObject({ code: 'invalid', field: 'bornOn' });
+    await expect(correct(id, { bornOn: '2015-01-01' }, 'Written wrongly')).rejects.toMatchObject({ code: 'invalid', field: 'bornOn' });
+    expect(await age()).toBe(59);
+  });
+});
+
+test('an answer changes only from the version that was seen', async () => {
+  const { id } = await givenScreening(scene.site, scene.protocol);
+  const answerSeeing = (value: 'yes' | 'no', expectedVersion: number) => withWork(scene.coordinator, 'screening.answer', (work) => answerCriterion(work, { id, criterion: 'adult', answer: value }), { expectedVersion });
+  const first = await Promise.allSettled([answerSeeing('yes', 0), answerSeeing('no', 0)]);
+  expect(first.map(({ status }) => status).sort()).toEqual(['fulfilled', 'rejected']);
+  await expect(answerSeeing('no', 0)).rejects.toMatchObject({ code: 'stale' });
+  expect(await answerSeeing('no', 1)).toMatchObject({ answer: 'no', version: 2 });
+  signedIn = scene.coordinator;
+  const blind = await answersRoute(new Request(`${address}/api/screenings/${id}/answers`, { method: 'PUT', body: JSON.stringify({ criterion: 'adult', answer: 'yes' }), headers: { origin: address } }), { params: Promise.resolve({ id }) });
+  expect(blind.status).toBe(428);
+});
+
 describe('enrolment', () => {
   test('issues a code, lays out the visits in their windows with their questionnaires, opens an account and asks for the letter', async () => {
     const { id } = await readyToEnrol();
@@ -220,6 +271,7 @@ describe('enrolment', () => {
 
   test.each([
     ['surgeryOn', { surgeryOn: '2027-03-02' }],
+    ['surgeryOn', { surgeryOn: '2027-02-02' }],
     ['nodesRemoved', { axillaryProcedure: 'none', nodesRemoved: '3' }],
   ])('facts that contradict each other are refused at %s', async (field, change) => {
     const { id } = await readyToEnrol();

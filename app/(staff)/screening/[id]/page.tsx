@@ -7,6 +7,7 @@ import { IdentityForm } from '@/components/screening/identity-form';
 import { LeaveScreeningForm } from '@/components/screening/leave-screening-form';
 import { formatDate, formatMoment } from '@/components/ui/format';
 import { Columns, FactStrip, MarginPart, PageHead } from '@/components/ui/page';
+import { upperFirst } from '@/instruments/words';
 import { may } from '@/lib/auth/policy';
 import { findSigner } from '@/lib/consent/find-signer';
 import { viewScreeningConsent } from '@/lib/consent/view-consent';
@@ -42,8 +43,8 @@ export default async function ScreeningPage({ params }: { params: Promise<{ id: 
           { term: 'Referred by', value: screening.referredBy ?? 'Not said' },
           { term: 'Protocol', value: screening.protocolNumber },
           { term: 'Eligibility', value: eligibility ? 'Confirmed' : 'Open' },
-          ...(leads ? [{ term: 'Consent', value: signedWords(consent) }] : []),
-          { term: 'State', value: screening.participantCode ? <Link href={`/participants/${screening.participantCode}`}>Enrolled as {screening.participantCode}</Link> : state },
+          ...(leads ? [{ term: 'Consent', value: upperFirst(signedWords(consent)) }] : []),
+          { term: 'State', value: screening.participantCode ? <Link href={`/participants/${screening.participantCode}`}>Enrolled as {screening.participantCode}</Link> : upperFirst(state) },
         ]}
       />
       <Columns margin={identity ? <MarginPart title="Name and contact"><IdentityForm key={identity.version} screeningId={id} identity={identity} today={today} /></MarginPart> : <MarginPart title="Name and contact"><p className="text-ink-2">Seen by the site only.</p></MarginPart>}>
