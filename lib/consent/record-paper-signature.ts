@@ -5,7 +5,6 @@ import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
 import { addSignature } from './add-signature';
 import { contentHash } from './consent-content';
-import { plainDate } from '@/lib/people/plain-date';
 import { checkPermissions, checkStatements, findConsent } from './find-consent';
 import { stepOf, type ConsentStep } from './view-consent';
 

@@ -35,6 +35,7 @@ export async function currentProtocol(work: Work, timeZone = 'UTC'): Promise<Pro
 export interface ConsentFormView {
   readonly id: string;
   readonly number: string;
+  readonly effectiveOn: string;
   readonly form: ConsentForm;
 }
 
@@ -46,12 +47,12 @@ export async function currentConsentForm(work: Work, timeZone = 'UTC'): Promise<
     { orderBy: { effectiveOn: 'desc', number: 'desc' }, limit: 1 },
   );
   if (!found) throw new Refusal('conflict', 'No consent form is in effect yet.');
-  return { id: found.id, number: found.number, form: consentFormSchema.parse(found.document) };
+  return { id: found.id, number: found.number, effectiveOn: found.effectiveOn, form: consentFormSchema.parse(found.document) };
 }
 
 /** The consent form of a version. @throws Refusal 'not-found'. */
 export async function findConsentForm(work: Work, id: string): Promise<ConsentFormView> {
   const found = await work.em.findOne(ConsentFormVersionSchema, { id });
   if (!found) throw new Refusal('not-found', 'There is no such consent form.');
-  return { id, number: found.number, form: consentFormSchema.parse(found.document) };
+  return { id, number: found.number, effectiveOn: found.effectiveOn, form: consentFormSchema.parse(found.document) };
 }

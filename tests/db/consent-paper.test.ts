@@ -114,11 +114,14 @@ test('another site, a monitor, a foreign page and nobody send nothing', async ()
   expect((await send(id, onePagePdf, { origin: 'https://elsewhere.example' })).status).toBe(403);
 });
 
-test('no form, a day to come, or a signature already recorded is refused', async () => {
+test('no form, a day to come or before the form was in effect, or a signature already recorded is refused', async () => {
   const { id } = await startPaper();
   await expect(record(scene.coordinator, id)).rejects.toMatchObject({ code: 'conflict', field: 'file' });
   await receivePaperForm(scene.coordinator, { id }, onePagePdf);
   await expect(record(scene.coordinator, id, { signedOn: '2999-01-01' })).rejects.toMatchObject({ code: 'invalid', field: 'signedOn' });
+  // The form of the scene is in effect from 1 Jan 2026.
+  for (const signedOn of ['1999-01-01', '2025-12-31'])
+    await expect(record(scene.coordinator, id, { signedOn })).rejects.toMatchObject({ code: 'invalid', field: 'signedOn', message: expect.stringContaining('in effect from 1 Jan 2026') as string });
   await record(scene.coordinator, id);
   await expect(receivePaperForm(scene.coordinator, { id }, onePagePdf)).rejects.toMatchObject({ code: 'conflict' });
 });
