@@ -30,10 +30,12 @@ export function EligibilityChecklist({ screeningId, version, criteria: given, ma
   const confirming = useSend('POST', `/api/screenings/${screeningId}/confirm`, { version });
 
   const answer = async (key: string, value: 'yes' | 'no') => {
-    setCriteria((all) => all.map((one) => (one.key === key ? { ...one, answer: value, stops: value !== one.lets } : one)));
+    const seen = criteria.find((one) => one.key === key)?.version ?? 0;
+    const place = (change: Partial<CriterionView>) => setCriteria((all) => all.map((one) => (one.key === key ? { ...one, ...change } : one)));
+    place({ answer: value, stops: value !== criteria.find((one) => one.key === key)?.lets });
     setRefusal(null);
     try {
-      await send('PUT', `/api/screenings/${screeningId}/answers`, { criterion: key, answer: value });
+      place(await send<CriterionView>('PUT', `/api/screenings/${screeningId}/answers`, { criterion: key, answer: value }, { version: seen }));
       setUnsaved(({ [key]: _saved, ...rest }) => rest);
     } catch (error) {
       if (!(error instanceof ProblemError)) throw error;

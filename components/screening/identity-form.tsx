@@ -11,9 +11,10 @@ import { useSend } from '../api/use-send';
 import { Button } from '../ui/button';
 import { ErrorSummary } from '../ui/error-summary';
 import { formatDate } from '../ui/format';
+import { ReasonDialog } from '../ui/reason-dialog';
 import { IdentityFields, type IdentityTyped } from './identity-fields';
 
-const input = correctIdentityInput.omit({ id: true });
+const input = correctIdentityInput.omit({ id: true, reason: true });
 
 export interface IdentityFormProps {
   screeningId: string;
@@ -57,26 +58,43 @@ function Correct({ screeningId, identity, today, onDone }: IdentityFormProps & {
     resolver: rawResolver(input),
     defaultValues: { name: identity.name, email: identity.email ?? '', phone: identity.phone ?? '', bornOn: identity.bornOn ?? '' },
   });
-  const saving = useSend<unknown, IdentityTyped>('PUT', `/api/screenings/${screeningId}/identity`, { version: identity.version });
-  const save = handleSubmit((typed) =>
+  const [asking, setAsking] = useState<IdentityTyped | null>(null);
+  const saving = useSend<unknown, IdentityTyped & { reason?: string }>('PUT', `/api/screenings/${screeningId}/identity`, { version: identity.version });
+  const keep = (typed: IdentityTyped & { reason?: string }) =>
     saving.mutate(typed, {
       onSuccess: () => {
         router.refresh();
         onDone();
       },
-      onError: ({ problem }) => placeRefusal(problem, setError, ['name', 'email', 'phone', 'bornOn']),
-    }),
-  );
+      onError: ({ problem }) => {
+        setAsking(null);
+        placeRefusal(problem, setError, ['name', 'email', 'phone', 'bornOn']);
+      },
+    });
+  const save = handleSubmit((typed) => (identity.needsReason ? setAsking(typed) : keep(typed)));
   return (
-    <form noValidate className="mt-2 grid gap-4" onSubmit={(event) => void save(event)}>
-      <ErrorSummary problems={listProblems(formState.errors, saving.error?.problem ?? null)} />
-      <IdentityFields register={register} errors={formState.errors} today={today} />
-      <div className="flex gap-3">
-        <Button kind="primary" type="submit" atWork={saving.isPending && 'Saving'}>
-          Save name and contact
-        </Button>
-        <Button onClick={onDone}>Leave</Button>
-      </div>
-    </form>
+    <>
+      <form noValidate className="mt-2 grid gap-4" onSubmit={(event) => void save(event)}>
+        <ErrorSummary problems={listProblems(formState.errors, saving.error?.problem ?? null)} />
+        <IdentityFields register={register} errors={formState.errors} today={today} />
+        <div className="flex gap-3">
+          <Button kind="primary" type="submit" atWork={saving.isPending && 'Saving'}>
+            Save name and contact
+          </Button>
+          <Button onClick={onDone}>Leave</Button>
+        </div>
+      </form>
+      <ReasonDialog
+        open={asking !== null}
+        onClose={() => setAsking(null)}
+        title="Why do name or contact change?"
+        explains="The person has signed under what stands there now."
+        confirmLabel="Change"
+        keepLabel="Keep what stands there"
+        reasons={['Written wrongly', 'The person has changed it']}
+        atWork={saving.isPending && 'Changing'}
+        onConfirm={({ reason }) => asking && keep({ ...asking, reason })}
+      />
+    </>
   );
 }

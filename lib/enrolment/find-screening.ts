@@ -17,6 +17,8 @@ export interface CriterionView {
   readonly text: string;
   readonly lets: 'yes' | 'no';
   readonly answer: 'yes' | 'no' | null;
+  /** Of the answer; 0 before there is one. */
+  readonly version: number;
   /** The answer keeps the person out. */
   readonly stops: boolean;
 }
@@ -25,7 +27,8 @@ export interface CriterionView {
 export async function listCriteria(work: Work, screeningId: string, document: ProtocolDocument): Promise<CriterionView[]> {
   const answers = await work.em.find(EligibilityAnswerSchema, { screeningId });
   return document.eligibility.map(({ key, text, lets }) => {
-    const answer = answers.find(({ criterion }) => criterion === key)?.answer ?? null;
-    return { key, text, lets, answer, stops: answer !== null && answer !== lets };
+    const given = answers.find(({ criterion }) => criterion === key);
+    const answer = given?.answer ?? null;
+    return { key, text, lets, answer, version: given?.version ?? 0, stops: answer !== null && answer !== lets };
   });
 }

@@ -61,7 +61,12 @@ export const openScreeningInput = z.strictObject({
 });
 export type OpenScreeningInput = z.output<typeof openScreeningInput>;
 
-export const correctIdentityInput = z.strictObject({ ...identityFields, id: z.uuid() });
+export const correctIdentityInput = z.strictObject({
+  ...identityFields,
+  id: z.uuid(),
+  /** Needed once the person has signed; kept with the old values. */
+  reason: z.string().trim().min(1, 'Say why it changes.').max(500, 'Use at most 500 characters.').optional(),
+});
 export type CorrectIdentityInput = z.output<typeof correctIdentityInput>;
 
 export const answerCriterionInput = z.strictObject({
