@@ -44,7 +44,7 @@ function Shares({ adherence }: { adherence: Adherence }) {
     share.count === null || weeks === null ? (
       <div key={words} className="border-b border-rule py-2">
         <p>{words}</p>
-        <p className="t-num text-ink-2">{'<5, not shown'}</p>
+        <p className="t-num text-ink-2">not shown</p>
       </div>
     ) : (
       <ShareBar key={words} words={words} count={share.count} of={weeks} {...(outside ? { outside } : {})} />
@@ -54,7 +54,7 @@ function Shares({ adherence }: { adherence: Adherence }) {
       {bar('No rule of progression broken', kept)}
       {kept.share === null ? null : (
         <p className="t-small mt-1.5 text-ink-2">
-          {formatPercent(kept.share)}, 95 % interval {limitWords(kept.lower, kept.upper)}
+          {formatPercent(kept.share)}, 95 % interval {limitWords(kept.lower, kept.upper)}
         </p>
       )}
       <p className="mt-5 text-ink-2">Weeks in which a rule was broken</p>

@@ -9,7 +9,7 @@ import { ChoiceInSentence } from '../ui/in-sentence';
 const confirmationWords: Record<(typeof confirmations)[number], string> = { 'first visit': 'at any visit', 'confirmed at the next visit': 'at two scheduled visits in a row' };
 
 /** Who the figures are about and how swelling is counted, edited where it is said. */
-export function ResultsSentence({ view }: { view: Pick<ResultsView, 'cohorts' | 'sites' | 'definitions' | 'chosen' | 'confirmation'> }) {
+export function ResultsSentence({ view }: { view: Pick<ResultsView, 'cohorts' | 'sites' | 'definitions' | 'chosen' | 'confirmation' | 'suppressBelow'> }) {
   const router = useRouter();
   const path = usePathname();
   const asked = useSearchParams();
@@ -32,12 +32,19 @@ export function ResultsSentence({ view }: { view: Pick<ResultsView, 'cohorts' | 
     });
   };
   const definitionChoices = definitions.map(({ code, name }) => ({ value: code, label: name }));
+  // One cohort at one site would be few: where small counts are hidden it is one or the other.
+  const isFree = view.suppressBelow === 0;
   const whole = sites.length === 1 ? (sites[0]?.name ?? 'the site') : `all ${sites.length} sites`;
   return (
     <span aria-busy={isWaiting} className="results-sentence leading-[2]">
       Everyone with a baseline in{' '}
-      <ChoiceInSentence label="cohort" value={shown.cohort ?? ''} onChange={(event) => choose('cohort', event.target.value)} choices={[{ value: '', label: 'every cohort' }, ...cohorts.map(({ key, name }) => ({ value: key, label: `‘${name}’` }))]} /> at{' '}
-      {sites.length > 1 ? (
+      {isFree || !shown.siteId ? (
+        <ChoiceInSentence label="cohort" value={shown.cohort ?? ''} onChange={(event) => choose('cohort', event.target.value)} choices={[{ value: '', label: 'every cohort' }, ...cohorts.map(({ key, name }) => ({ value: key, label: `‘${name}’` }))]} />
+      ) : (
+        'every cohort'
+      )}{' '}
+      at{' '}
+      {sites.length > 1 && (isFree || !shown.cohort) ? (
         <ChoiceInSentence label="site" value={shown.siteId ?? ''} onChange={(event) => choose('siteId', event.target.value)} choices={[{ value: '', label: whole }, ...sites.map(({ id, name }) => ({ value: id, label: name }))]} />
       ) : (
         whole

@@ -49,7 +49,7 @@ export function Swelling({ view }: { view: ResultsView }) {
       margin={
         <MarginPart title="How this was computed">
           <div className="grid gap-2 text-[13.5px] leading-[19.5px] text-ink-2">
-            <p>One minus the survival curve, from the baseline visit. {a.method}. Bands are pointwise 95 % intervals.</p>
+            <p>One minus the survival curve, from the baseline visit. {a.method}. Bands are pointwise 95 % intervals.</p>
             <LeftOut label="A" view={a} />
             <LeftOut label="B" view={b} />
             {[...a.notes, ...b.notes].map((note) => (
@@ -58,7 +58,7 @@ export function Swelling({ view }: { view: ResultsView }) {
             <p>The date of swelling is the visit it was first seen, so the steps gather at visits. Those who left are taken to be like those who stayed; nobody is recorded as having died before swelling, so no competing event is handled.</p>
             {view.chosen.cohort === undefined && view.cohorts.length > 1 ? <p className="is-margin">Every cohort is counted together, also people who lived with swelling when they joined, in whom a rise counts as well. For the incidence of new swelling choose the cohort at risk.</p> : null}
             <p>Both panels share one scale. The dashes in B repeat A. A month is 30.4 days.</p>
-            {view.suppressBelow > 0 ? <p>Your role is shown no count from 1 to {view.suppressBelow - 1} and no share that rests on one: the first {view.suppressBelow} people with swelling are drawn as one step, and a curve ends where fewer than {view.suppressBelow} are followed.</p> : null}
+            {view.suppressBelow > 0 ? <p>Your role is shown no count from 1 to {view.suppressBelow - 1}, none from which one could be had by subtraction, and no share that rests on one: the first {view.suppressBelow} people with swelling are drawn as one step, and a curve ends where fewer than {view.suppressBelow} are followed.</p> : null}
             <p className="text-[12.5px]">{a.reference}.</p>
             <p className="text-note">This is a group without a comparison arm. It cannot say that lifting causes or prevents swelling.</p>
           </div>
@@ -83,9 +83,9 @@ export function Swelling({ view }: { view: ResultsView }) {
           columns={[
             { id: 'by', header: 'Share with swelling by', cell: (row) => `${row.a.months} months` },
             { id: 'a', header: 'A', numeric: true, cell: (row) => shareWords(row.a.share, row.a.reason) },
-            { id: 'a-limits', header: 'A, 95 % interval', numeric: true, cell: (row) => limitWords(row.a.lower, row.a.upper) },
+            { id: 'a-limits', header: 'A, 95 % interval', numeric: true, cell: (row) => limitWords(row.a.lower, row.a.upper) },
             { id: 'b', header: 'B', numeric: true, cell: (row) => shareWords(row.b.share, row.b.reason) },
-            { id: 'b-limits', header: 'B, 95 % interval', numeric: true, cell: (row) => limitWords(row.b.lower, row.b.upper) },
+            { id: 'b-limits', header: 'B, 95 % interval', numeric: true, cell: (row) => limitWords(row.b.lower, row.b.upper) },
             { id: 'less', header: 'B less A', numeric: true, cell: ({ a: { share: inA }, b: { share: inB } }) => (inA === null || inB === null ? '' : `${formatSigned((inB - inA) * 100)} points`) },
             { id: 'people', header: 'People counted', numeric: true, cell: (row) => `${countWords(row.a.events)} and ${countWords(row.b.events)}` },
           ]}

@@ -31,7 +31,7 @@ export function WhoIsInIt({ view }: { view: ResultsView }) {
           <div className="grid gap-2 text-[13.5px] leading-[19.5px] text-ink-2">
             <p>A stage counts people of the stage before with a complete assessment of both arms at or after that month, up to 45 days early. Who was enrolled too lately is not yet due.</p>
             {left.length > 0 ? <p>Withdrawn since enrolment: {reasonWords(left)}. Their visits until then count.</p> : null}
-            {suppressBelow > 0 ? <p>Your role is shown no count from 1 to {suppressBelow - 1}. Stages that differ by so few are drawn as one.</p> : null}
+            {suppressBelow > 0 ? <p>Your role is shown no count from 1 to {suppressBelow - 1}, nor one from which such a count could be had by subtracting a site or a cohort from the whole. Stages that differ by so few are drawn as one.</p> : null}
             {reasons?.out ? (
               <details>
                 <summary className="btn-link cursor-pointer">All reasons after ‘{reasons.name}’</summary>

@@ -1,8 +1,8 @@
 import { lowerFirst } from '@/instruments/words';
 import { formatCount, formatLimits, formatPercent } from '../ui/format';
 
-/** '38'; '<5' where a small count is not shown. */
-export const countWords = (count: number | null): string => (count === null ? '<5' : formatCount(count));
+/** '38'; nothing is said of a count that is not shown: it may be small, or tell a small one by subtraction. */
+export const countWords = (count: number | null): string => (count === null ? 'not shown' : formatCount(count));
 
 /** '9.1 %', or why there is none. */
 export const shareWords = (share: number | null, reason: string | null): string => (share === null ? (reason ?? 'none yet') : formatPercent(share));

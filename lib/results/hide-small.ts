@@ -4,6 +4,22 @@ export type ShownCount = number | null;
 /** Hides a small count. A limit of 0 hides nothing. */
 export const showCount = (count: number, below: number): ShownCount => (count > 0 && count < below ? null : count);
 
+/**
+ * Which of the parts of a whole are hidden: the small ones, and the next smallest while those hidden are together still few,
+ * because the whole less the parts shown gives what the hidden ones come to.
+ */
+export function hiddenAmong(parts: readonly number[], below: number): ReadonlySet<number> {
+  const places = parts.map((count, place) => ({ count, place })).filter(({ count }) => count > 0).toSorted((a, b) => a.count - b.count || a.place - b.place);
+  const hidden = new Set<number>();
+  let sum = 0;
+  for (const { count, place } of places) {
+    if (count >= below && (sum === 0 || sum >= below)) break;
+    hidden.add(place);
+    sum += count;
+  }
+  return hidden;
+}
+
 export interface CountedReason {
   readonly reason: string;
   readonly count: number;

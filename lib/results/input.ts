@@ -12,3 +12,9 @@ export const viewResultsInput = z.strictObject({
   siteId: z.uuid().optional(),
 });
 export type ViewResultsInput = z.output<typeof viewResultsInput>;
+
+/** Is this a role that may not read rows, and so sees no small count? */
+export const hidesSmall = (role: string): boolean => role === 'investigator';
+
+/** Such a role may choose a cohort or a site, not both: one cohort at one site, less from the site, gives small counts. */
+export const isOffered = <Asked extends Pick<ViewResultsInput, 'cohort' | 'siteId'>>(asked: Asked | undefined, role: string): asked is Asked => asked !== undefined && !(hidesSmall(role) && asked.cohort && asked.siteId);

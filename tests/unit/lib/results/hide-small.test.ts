@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { viewFlow } from '@/lib/results/flow';
-import { foldSmall, showCount } from '@/lib/results/hide-small';
+import { foldSmall, hiddenAmong, showCount } from '@/lib/results/hide-small';
 
 const below = 5;
 const reasons = fc.array(fc.nat(30), { maxLength: 8 }).map((counts) => counts.map((count, index) => ({ reason: `reason ${index}`, count })));
@@ -48,6 +48,28 @@ describe('small counts', () => {
           const gone = stage.out?.reasons ?? [];
           if (next && gone.every(({ count }) => count !== null)) expect(gone.reduce((sum, { count }) => sum + (count ?? 0), 0)).toBe(stage.people - next.people);
         }
+      }),
+    );
+  });
+});
+
+describe('parts of a whole', () => {
+  test('by hand: 53 of 57 hides both, and three sites of which one is small hide two', () => {
+    expect([...hiddenAmong([53, 4], below)].toSorted()).toEqual([0, 1]);
+    expect([...hiddenAmong([20, 3, 9], below)].toSorted()).toEqual([1, 2]);
+    expect([...hiddenAmong([20, 3, 4, 0], below)].toSorted()).toEqual([1, 2]);
+    expect([...hiddenAmong([20, 9, 0], below)]).toEqual([]);
+    expect([...hiddenAmong([4, 1], 0)]).toEqual([]);
+  });
+
+  test('leave nothing small to be had from the whole less what is shown', () => {
+    fc.assert(
+      fc.property(fc.array(fc.nat(40), { maxLength: 7 }), (parts) => {
+        const hidden = hiddenAmong(parts, below);
+        expect(parts.every((count, place) => count === 0 || count >= below || hidden.has(place))).toBe(true);
+        const rest = [...hidden].reduce((sum, place) => sum + (parts[place] ?? 0), 0);
+        // Fewer than five in all: every part is hidden, and the whole itself is not shown.
+        if (parts.reduce((sum, count) => sum + count, 0) >= below) expect(rest === 0 || rest >= below).toBe(true);
       }),
     );
   });
