@@ -1,5 +1,4 @@
 import { useSyncExternalStore } from 'react';
-import type { QueryView } from '@/lib/queries/view-query';
 import { anchorOf, keyOfTarget, type ReviewItem } from './review-items';
 
 /** Puts the focus on a value: its own button, or that of its line. */
@@ -10,7 +9,7 @@ export function focusValue(key: string): void {
 }
 
 /** The value that a fragment leads to: '#at-…' names it, '#query-…' a note on it; null for any other. */
-export function keyAtFragment(fragment: string, items: readonly ReviewItem[], queries: readonly Pick<QueryView, 'id' | 'target'>[]): string | null {
+export function keyAtFragment(fragment: string, items: readonly ReviewItem[], queries: readonly { readonly id: string; readonly target: Parameters<typeof keyOfTarget>[0] }[]): string | null {
   const id = fragment.replace(/^#/, '');
   if (id === '') return null;
   const query = queries.find((one) => id === `query-${one.id}`);
