@@ -21,6 +21,7 @@ import * as extractsPreviewRoute from './extracts/preview/route';
 import * as historyRoute from './history/route';
 import * as participantsRoute from './participants/route';
 import * as participantRoute from './participants/[code]/route';
+import * as participantFactsRoute from './participants/[code]/facts/route';
 import * as participantIdentityRoute from './participants/[code]/identity/route';
 import * as peopleRoute from './people/route';
 import * as joinRoute from './join/route';
@@ -97,6 +98,7 @@ export const routes: RouteTable = {
   '/api/session/take-back': { POST: sessionTakeBackRoute.POST },
   '/api/participants': { GET: participantsRoute.GET },
   '/api/participants/{code}': { GET: participantRoute.GET },
+  '/api/participants/{code}/facts': { POST: participantFactsRoute.POST },
   '/api/participants/{code}/identity': { POST: participantIdentityRoute.POST },
   '/api/people': { GET: peopleRoute.GET },
   '/api/queries': { GET: queriesRoute.GET, POST: queriesRoute.POST },

@@ -2,9 +2,8 @@ import { LimbAssessmentSchema } from '@/entities/limb-assessment';
 import { LimbTrialSchema } from '@/entities/limb-trial';
 import { ParticipantSchema } from '@/entities/participant';
 import { VisitSchema } from '@/entities/visit';
-import { answerQuery } from '@/lib/queries/answer-query';
-import { findQuery } from '@/lib/queries/find-query';
-import { findTarget, type FieldTarget } from '@/lib/queries/targets';
+import { answerByCorrection } from '@/lib/queries/answer-by-correction';
+import { findTarget } from '@/lib/queries/targets';
 import { Refusal } from '@/lib/work/refusal';
 import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
@@ -13,8 +12,8 @@ import { z } from 'zod';
 import { calendarDay } from '@/lib/work/calendar-day';
 import { findAssessment } from './find-assessment';
 import { findDoubts } from './find-doubts';
-import type { CorrectValueInput } from './input';
-import { saveCircumstancesInput } from './input';
+import { settleLevel, type OtherReadings } from './correct-level';
+import { correctedGirth, saveCircumstancesInput, type CorrectValueInput } from './input';
 import { recompute } from './recompute';
 import { settleDoubts } from './settle-doubts';
 
@@ -30,8 +29,6 @@ const correctable: Readonly<Record<string, { property: keyof typeof circumstance
   remarks: { property: 'remarks', rule: circumstance.remarks },
 };
 
-const girth = z.int('A girth is given in whole millimetres.').min(100, 'A girth under 10 cm cannot be right.').max(700, 'A girth over 70 cm cannot be right.');
-
 const notHere = () => new Refusal('invalid', 'This value is not corrected here.', 'value');
 
 /** Only what was saved is corrected; an open form is simply typed again. */
@@ -42,12 +39,13 @@ async function requireSaved(work: Work, id: string): Promise<string> {
 }
 
 /** Each answers with the assessment whose doubts change, where there is one. */
-async function correctTrial(work: Work, id: string, field: string, value: unknown): Promise<string | null> {
+async function correctTrial(work: Work, id: string, field: string, value: unknown, also: OtherReadings = {}): Promise<string | null> {
   const row = await work.em.findOneOrFail(LimbTrialSchema, { id });
   work.expect(row);
   const level = Number(/^circumferences_mm\.(\d+)$/.exec(field)?.[1]);
   if (!(level < row.circumferencesMm.length)) throw notHere();
-  row.circumferencesMm = row.circumferencesMm.with(level, girth.parse(value));
+  row.circumferencesMm = row.circumferencesMm.with(level, correctedGirth.parse(value));
+  await settleLevel(work, row, level, also);
   return requireSaved(work, row.assessmentId);
 }
 
@@ -74,31 +72,22 @@ async function correctVisit(work: Work, id: string, field: string, value: unknow
   return (await work.em.findOne(LimbAssessmentSchema, { visitId: id, state: 'complete' }))?.id ?? null;
 }
 
-/** @throws Refusal 'invalid' unless the query asks about the value that is corrected, 'stale' when it moved on since it was read. */
-async function answerWith(work: Work, target: FieldTarget, { id, version }: { id: string; version: number }, answer: string): Promise<void> {
-  const query = await findQuery({ ...work, expect: () => undefined }, id);
-  if (query.targetTable !== target.table || query.targetId !== target.id || query.field !== target.field)
-    throw new Refusal('invalid', 'That query asks about another value. Correct this one without it, then answer the query at its own value.', 'query');
-  if (query.version !== version) throw new Refusal('stale', 'The query changed in the meantime. Your correction is still here: read the query again, then save.', 'query');
-  await answerQuery({ ...work, expect: () => undefined }, { id, answer });
-}
-
 /**
  * Corrects a saved value with a reason: the old one stays in the trail, the mark on it falls, the edit checks run anew, results
  * are computed anew, and the query that asked may be answered in the same breath. If-Match names the version of the row.
  * @throws Refusal 'invalid' for a value that cannot be right, or with the doubts that need a reason.
  */
-export async function correctValue(work: Work, { target, value, reason, kept = [], query }: CorrectValueInput): Promise<{ corrected: true }> {
+export async function correctValue(work: Work, { target, value, reason, also, kept = [], query }: CorrectValueInput): Promise<{ corrected: true }> {
   const found = await findTarget(work, target);
   if (JSON.stringify(found.value) === JSON.stringify(value)) throw new Refusal('invalid', 'That is the value already there.', 'value');
   const { participantId } = found;
   const before = await findDoubts(work, participantId);
   const correct = { visit: correctVisit, limb_assessment: correctAssessment, limb_trial: correctTrial, questionnaire_response: null, participant: null }[target.table];
   if (!correct) throw notHere();
-  const correctedId = await correct(work, target.id, target.field, value);
+  const correctedId = await correct(work, target.id, target.field, value, also);
   await settleDoubts(work, correctedId, { participantId, before, kept });
   await recompute(work, participantId);
   await work.em.flush();
-  if (query) await answerWith(work, target, query, `Corrected: ${reason}`);
+  if (query) await answerByCorrection(work, target, query, reason);
   return { corrected: true };
 }

@@ -5,6 +5,7 @@ import { findExercise } from '@/instruments/training/exercises';
 import { rvcMeasurementError } from '@/instruments/measurement/rvc-measurement-error';
 import { highWater, type HighWater } from '@/instruments/swelling';
 import { findProtocol } from '@/lib/protocol/find-protocol';
+import { queriesOfFacts, type QueryView } from '@/lib/queries/view-query';
 import { reportWords } from '@/lib/safety/report-words';
 import { Refusal } from '@/lib/work/refusal';
 import { localDate } from '@/lib/work/time';
@@ -39,6 +40,7 @@ export interface ParticipantVisit {
 /** What one participant page shows. Codes and health data; no identity. */
 export interface ParticipantView {
   readonly id: string;
+  readonly version: number;
   readonly code: string;
   readonly siteId: string;
   readonly siteName: string;
@@ -70,6 +72,8 @@ export interface ParticipantView {
   readonly exercises: readonly { readonly code: string; readonly name: string }[];
   /** Flags of a safety or deviation rule. */
   readonly flags: readonly { readonly on: string; readonly title: string; readonly exercise: string | null }[];
+  /** What is asked about the facts and not yet closed. */
+  readonly factQueries: readonly QueryView[];
   readonly consent: { readonly number: string; readonly mode: string; readonly signedAt: string | null } | null;
   readonly threshold: HighWater;
   readonly errorPoints: number;
@@ -79,6 +83,7 @@ export interface ParticipantView {
 
 interface Head {
   id: string;
+  version: number;
   code: string;
   site_id: string;
   site_name: string;
@@ -94,7 +99,7 @@ interface Head {
 
 async function findHead(work: Work, code: string): Promise<Head> {
   const [head] = await work.sql<Head>(
-    `select p.id, p.code, p.site_id, s.name as site_name, s.time_zone, p.state, p.left_on::text, p.left_grade, p.training_held, p.protocol_version_id,
+    `select p.id, p.version, p.code, p.site_id, s.name as site_name, s.time_zone, p.state, p.left_on::text, p.left_grade, p.training_held, p.protocol_version_id,
        jsonb_build_object('affectedSide', p.affected_side, 'dominantSide', p.dominant_side, 'surgery', p.surgery, 'surgeryOn', p.surgery_on, 'axillaryProcedure', p.axillary_procedure,
          'nodesRemoved', p.nodes_removed, 'radiotherapy', p.radiotherapy, 'systemicTherapy', p.systemic_therapy, 'ageYears', p.age_years, 'heightMm', p.height_mm, 'cohort', p.cohort, 'enrolledOn', p.enrolled_on,
          'baselineWeightG', (select a.body_weight_g from limb_assessment a join visit v on v.id = a.visit_id where a.participant_id = p.id and v.key = 'baseline' and a.state = 'complete' limit 1)) as facts,
@@ -145,7 +150,7 @@ function weeksOf(rows: readonly LoadRow[]): ParticipantView['weeks'] {
   return [...weeks.values()].sort((a, b) => (a.starts < b.starts ? -1 : 1));
 }
 
-/** One participant by code, with visits, symptoms and load: six statements. @throws Refusal 'not-found' out of reach. */
+/** One participant by code, with visits, symptoms and load: a constant number of statements. @throws Refusal 'not-found' out of reach. */
 export async function viewParticipant(work: Work, { code }: { code: string }): Promise<ParticipantView> {
   const head = await findHead(work, code);
   const { document } = await findProtocol(work, head.protocol_version_id);
@@ -166,6 +171,8 @@ export async function viewParticipant(work: Work, { code }: { code: string }): P
   const baseline = visits.find(({ key, rvc, sides }) => key === 'baseline' && sides !== null && rvc === null);
   return {
     id: head.id,
+    version: head.version,
+    factQueries: await queriesOfFacts(work, head.id),
     code: head.code,
     siteId: head.site_id,
     siteName: head.site_name,

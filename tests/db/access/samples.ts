@@ -51,6 +51,7 @@ export const samples: Readonly<Record<string, (s: Subject) => Sample>> = {
   'GET /api/lifting': list,
   'GET /api/participants': () => ({ isList: true, query: { pageSize: '100' } }),
   'GET /api/participants/{code}': (s) => ({ params: { code: s.participant.code } }),
+  'POST /api/participants/{code}/facts': (s) => ({ params: { code: s.participant.code }, body: { field: 'surgery', value: 'mastectomy', reason: 'Read from the letter.' } }),
   'POST /api/participants/{code}/identity': (s) => ({ params: { code: s.participant.code }, body: {} }),
   'GET /api/people': list,
   'GET /api/queries': () => ({ isList: true, query: { pageSize: '100' } }),

@@ -1,6 +1,7 @@
 import type { Metadata } from 'next';
 import { TideChart } from '@/components/chart/tide-chart';
 import { AddVisit } from '@/components/participants/add-visit';
+import { CorrectFact } from '@/components/participants/correct-fact';
 import { ParticipantFacts } from '@/components/participants/participant-facts';
 import { ParticipantMargin } from '@/components/participants/participant-margin';
 import { armStanding, tideFinding, tideOf } from '@/components/participants/tide-of';
@@ -45,6 +46,11 @@ export default async function ParticipantPage({ params }: Props) {
         }
       />
       <ParticipantFacts view={view} />
+      {may(role, 'participant.correct') ? (
+        <p className="mt-2">
+          <CorrectFact view={view} />
+        </p>
+      ) : null}
       <div className="mt-8">
         <TideChart data={tideOf(view)} finding={tideFinding(view)} />
       </div>
