@@ -24,7 +24,7 @@ export async function findOwnResponse(work: Work, id: string): Promise<OwnRespon
 
 /** Answers are taken inside the window only, and until they were submitted. @throws Refusal 'locked' or 'expired'. */
 export function assertOpen({ own, response }: OwnResponse): void {
-  if (response.state === 'submitted') throw new Refusal('locked', 'This questionnaire was submitted and is closed. Ask your site to correct it.');
+  if (response.state === 'submitted') throw new Refusal('locked', 'This questionnaire was submitted and is closed. If an answer is wrong, tell your site; the answers stay as they were sent.');
   if (own.today < response.opensOn) throw new Refusal('conflict', `This questionnaire opens on ${plainDate(response.opensOn)}.`);
   if (own.today > response.closesOn || response.state === 'missed')
     throw new Refusal('expired', `This questionnaire closed on ${plainDate(response.closesOn)}, so answers are no longer taken. You did nothing wrong; the next one comes with your next visit.`);

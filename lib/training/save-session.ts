@@ -33,7 +33,7 @@ async function findSaved(work: Work, own: OwnRecord, input: LogSessionInput): Pr
      from training_session s where s.participant_id = ? and s.client_key = ?`,
     [JSON.stringify([input.on, input.armCheck, input.soreness, input.effort, input.note ?? '', input.sets.map(({ exercise, equipment, basis, side, typed, unit, repetitions, setCount, effort }) => [exercise, equipment, basis, side, typed, unit, repetitions, setCount, effort])]), own.participant.id, input.clientKey],
   );
-  if (saved && !saved.same) throw new Refusal('conflict', 'This session was already saved with other figures. Ask your site to correct it, or log another session.');
+  if (saved && !saved.same) throw new Refusal('conflict', 'This session was already saved with other figures. The first figures stand; if they are wrong, tell your site, or log another session.');
   return saved?.id ?? null;
 }
 

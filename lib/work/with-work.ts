@@ -59,7 +59,7 @@ function translate(error: unknown): unknown {
   const code = (error as { code?: unknown } | null)?.code;
   if (code === 'TM001') return new Refusal('invalid', 'Say why the value changes.', 'reason');
   if (code === 'TM002') return new Refusal('conflict', 'Consent is not complete, so nothing can be recorded yet.');
-  if (code === 'TM003') return new Refusal('locked', 'This questionnaire was submitted and is closed. Ask your site to correct it.');
+  if (code === 'TM003') return new Refusal('locked', 'This questionnaire was submitted and is closed. If an answer is wrong, tell your site; the answers stay as they were sent.');
   if (code === 'TM004') return new Refusal('invalid', 'The day lies outside this participant’s time in the study. Check the year.', 'on');
   if (code === '23505') return new Refusal('conflict', 'This was already saved.');
   if (code === '40001' || code === '40P01') return new Refusal('conflict', 'Two people saved at the same moment. Save again.');
