@@ -32,8 +32,11 @@ async function authorise(credentials: { email?: string; password?: string } | un
   return account === null ? null : { id: account };
 }
 
-/** next-auth, kept to what it is good at: the form's double-submit token and the cookie. */
-export const authOptions = (): NextAuthOptions => ({
+/**
+ * next-auth, kept to what it is good at: the form's double-submit token and the cookie.
+ * @param before the session that this browser's cookie holds; signing in anew ends it.
+ */
+export const authOptions = (before: string | null = null): NextAuthOptions => ({
   secret: env().NEXTAUTH_SECRET,
   session: { strategy: 'jwt', maxAge: sessionSeconds },
   pages: { signIn: '/sign-in', error: '/sign-in' },
@@ -46,8 +49,9 @@ export const authOptions = (): NextAuthOptions => ({
   callbacks: {
     jwt: async ({ token, user, trigger }) => {
       // 'update' brings data chosen by the browser: nothing of it is taken.
-      if (trigger === 'signIn') return { sid: await openSession(user.id), sub: user.id };
-      return token;
+      if (trigger !== 'signIn') return token;
+      if (before) await endSession(before);
+      return { sid: await openSession(user.id), sub: user.id };
     },
     session: ({ session }) => ({ expires: session.expires }),
   },

@@ -85,7 +85,8 @@ export async function liveSession(token: string): Promise<LiveSession | null> {
     const row = await liveRow(work, token);
     if (!row) return null;
     const grants = await grantsOf(work, row.account_id);
-    const grant = grants.find(({ id }) => id === row.role_grant_id) ?? grants[0];
+    // A chosen role that has ended takes the session along: nobody goes on in another role without having chosen it.
+    const grant = row.role_grant_id === null ? grants[0] : grants.find(({ id }) => id === row.role_grant_id);
     if (!grant) return null;
     return {
       actor: handedOver(row) ?? {
@@ -105,10 +106,11 @@ export async function liveSession(token: string): Promise<LiveSession | null> {
   });
 }
 
-/** Takes up another of the person's own roles. */
+/** Takes up another of the person's own roles. @throws Refusal 'forbidden' while the tablet is with a participant: it is taken back first. */
 export async function chooseRole(token: string, grantId: string): Promise<void> {
   await withWork(systemActor(), 'session.choose-role', async (work) => {
     const row = await liveRow(work, token);
+    if (row?.handed_over_screening_id) throw new Refusal('forbidden', 'This tablet is handed over. Take it back first.');
     const grant = row && (await grantsOf(work, row.account_id)).find(({ id }) => id === grantId);
     if (!row || !grant) throw new Refusal('not-found', 'You do not hold that role now.');
     await work.sql('update app_session set role_grant_id = ? where id = ?', [grantId, row.id]);
