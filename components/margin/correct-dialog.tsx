@@ -45,11 +45,25 @@ function read(kind: ValueKind, typed: string): { value: ReviewItem['value'] } | 
   return { value: kind === 'ratio' ? Math.round(stored * 1000) / 1000 : Math.round(stored) };
 }
 
+/** The other readings of a level, in whole millimetres; an empty field leaves the reading as it is. */
+function readAlso(typed: Readonly<Record<'other' | 'third', string>>): { value: Partial<Record<'other' | 'third', number>>; missing: Partial<Record<'other' | 'third', string>> } {
+  const value: Partial<Record<'other' | 'third', number>> = {};
+  const missing: Partial<Record<'other' | 'third', string>> = {};
+  for (const name of ['other', 'third'] as const) {
+    if (typed[name].trim() === '') continue;
+    const found = read('girth', typed[name]);
+    if ('sentence' in found) missing[name] = found.sentence;
+    else value[name] = Number(found.value);
+  }
+  return { value, missing };
+}
+
 /** A saved value and the reason for its change, in one dialog: the old value stays, struck. */
 export function CorrectDialog({ item, query, onClose, onDone }: CorrectDialogProps) {
   const [typed, setTyped] = useState(() => typedFrom(item));
   const [reason, setReason] = useState('');
-  const [missing, setMissing] = useState<{ value?: string; reason?: string }>({});
+  const [also, setAlso] = useState({ other: '', third: '' });
+  const [missing, setMissing] = useState<{ value?: string; reason?: string; other?: string; third?: string }>({});
   const [keeping, setKeeping] = useState<Readonly<Record<string, string>>>({});
   const correct = useSend<{ corrected: true }>('POST', '/api/corrections', { version: item.version });
   const refused = correct.error?.problem;
@@ -60,9 +74,10 @@ export function CorrectDialog({ item, query, onClose, onDone }: CorrectDialogPro
     if (correct.isPending) return;
     const found = read(item.kind, typed);
     const why = reason.trim().length < 5 ? 'Say why the value changes; it is kept with the old one.' : undefined;
-    setMissing({ ...('sentence' in found ? { value: found.sentence } : {}), ...(why ? { reason: why } : {}) });
-    if ('sentence' in found || why) return;
-    correct.mutate({ target: item.target, value: found.value, reason: reason.trim(), kept: keptOf(keeping), ...(query ? { query: { id: query.id, version: query.version } } : {}) }, { onSuccess: onDone });
+    const others = readAlso(also);
+    setMissing({ ...others.missing, ...('sentence' in found ? { value: found.sentence } : {}), ...(why ? { reason: why } : {}) });
+    if ('sentence' in found || why || Object.keys(others.missing).length > 0) return;
+    correct.mutate({ target: item.target, value: found.value, reason: reason.trim(), ...(Object.keys(others.value).length > 0 ? { also: others.value } : {}), kept: keptOf(keeping), ...(query ? { query: { id: query.id, version: query.version } } : {}) }, { onSuccess: onDone });
   };
   return (
     <Dialog
@@ -81,6 +96,13 @@ export function CorrectDialog({ item, query, onClose, onDone }: CorrectDialogPro
       <p>The old value stays in the form, struck, with your reason. Results are computed anew, and a mark on the value falls.</p>
       <form id="correct-form" noValidate onSubmit={submit} className="mt-3 grid gap-3.5">
         <NewValue item={item} typed={typed} onType={(text) => { setTyped(text); setKeeping({}); }} error={missing.value ?? at('value')} />
+        {at('also') || also.other || also.third ? (
+          <fieldset className="grid gap-3.5">
+            <legend className="is-needs mb-2">{at('also') ?? 'The other readings of this level'}</legend>
+            <NumberField label="The other trial" optional unit="cm" value={also.other} error={missing.other} onChange={(event) => setAlso({ ...also, other: event.target.value })} />
+            <NumberField label="Third reading" optional unit="cm" value={also.third} error={missing.third} onChange={(event) => setAlso({ ...also, third: event.target.value })} />
+          </fieldset>
+        ) : null}
         <TextArea label="Reason" hint="What went wrong, in your words" rows={2} maxLength={500} value={reason} error={missing.reason ?? at('reason')} onChange={(event) => setReason(event.target.value)} />
         {doubts.map(({ field, sentence }) => (
           <TextArea
@@ -94,7 +116,7 @@ export function CorrectDialog({ item, query, onClose, onDone }: CorrectDialogPro
             onChange={(event) => setKeeping((before) => ({ ...before, [field]: event.target.value }))}
           />
         ))}
-        {refused && !at('value') && !at('reason') && doubts.length === 0 ? (
+        {refused && !at('value') && !at('reason') && !at('also') && doubts.length === 0 ? (
           <p role="alert" className="is-needs">
             {refused.detail}
           </p>

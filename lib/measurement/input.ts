@@ -43,10 +43,15 @@ export const keptFindingSchema = z.strictObject({
 export const completeAssessmentInput = z.strictObject({ id: z.uuid(), kept: z.array(keptFindingSchema).max(100) });
 export type CompleteAssessmentInput = z.output<typeof completeAssessmentInput>;
 
+/** A girth of a saved trial, in millimetres. */
+export const correctedGirth = z.int('A girth is given in whole millimetres.').min(100, 'A girth under 10 cm cannot be right.').max(700, 'A girth over 70 cm cannot be right.');
+
 export const correctValueInput = z.strictObject({
   target: fieldTargetInput,
   value: z.union([z.string().max(500), z.number(), z.boolean(), z.null()]),
   reason: z.string().trim().min(5, 'Say why the value changes.').max(500, 'Use at most 500 characters.'),
+  /** Of a girth: the other trial of the same level, and a third reading, where the correction touches them too. */
+  also: z.strictObject({ other: correctedGirth.optional(), third: correctedGirth.optional() }).optional(),
   /** Doubts that the new value raises, each with the reason for which it stands. */
   kept: z.array(keptFindingSchema).max(20).optional(),
   /** The query that the correction answers, in the version that was read. */

@@ -13,7 +13,7 @@ import { fieldHistory } from '@/lib/review/field-history';
 import { markVerified } from '@/lib/review/mark-verified';
 import { marksOfVisit } from '@/lib/review/marks-of-visit';
 import { withWork } from '@/lib/work/with-work';
-import { givenParticipant, givenScene, givenStaff, type GivenParticipant, type GivenScene } from '../given';
+import { asOwner, givenParticipant, givenScene, givenStaff, type GivenParticipant, type GivenScene } from '../given';
 
 let scene: GivenScene;
 let assessor: Actor;
@@ -89,6 +89,22 @@ describe('a limb assessment', () => {
     await complete(open);
     expect((await history(monitor)).map(({ value }) => value)).toEqual([71_400]);
     expect(await withWork(monitor, 'assessment.view', (work) => viewAssessment(work, { visitId: open.visitId }))).toMatchObject({ state: 'complete' });
+  });
+
+  test('mends both trials of a level at once, or takes the third reading of the source, and is no dead end', async () => {
+    const who = await givenParticipant(scene.site, scene.protocol, scene.coordinator);
+    const saved = await complete(await measure(who, 'baseline', { left: vol03, right: vol03 }));
+    const [first] = await asOwner<{ id: string; version: number; circumferences_mm: number[] }>(`select id, version, circumferences_mm from limb_trial where assessment_id = $1 and side = 'left' and trial = 1`, [saved.id]);
+    const before = first?.circumferences_mm[2] ?? 0;
+    const reason = 'Copied from the line below.';
+    const correct = (value: number, also?: { other?: number; third?: number }, version = first?.version ?? 0) =>
+      withWork(assessor, 'assessment.correct', (work) => correctValue(work, { target: { table: 'limb_trial', id: first?.id ?? '', field: 'circumferences_mm.2' }, value, reason, ...(also ? { also } : {}) }), { expectedVersion: version, reason });
+    const readings = () => asOwner<{ trial: number; mm: number | null }>(`select trial, circumferences_mm[3] as mm from limb_trial where assessment_id = $1 and side = 'left' order by trial`, [saved.id]);
+    await expect(correct(before - 20)).rejects.toMatchObject({ code: 'invalid', field: 'also', message: expect.stringContaining('apart') as string });
+    await correct(before - 20, { other: before - 19 });
+    expect(await readings()).toEqual([{ trial: 1, mm: before - 20 }, { trial: 2, mm: before - 19 }]);
+    await correct(before, { third: before - 1 }, (first?.version ?? 0) + 1);
+    expect(await readings()).toEqual([{ trial: 1, mm: before }, { trial: 2, mm: before - 19 }, { trial: 3, mm: before - 1 }]);
   });
 
   test('corrects a value with a reason: results follow, the mark falls, the history keeps the old value', async () => {
