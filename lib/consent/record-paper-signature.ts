@@ -1,6 +1,5 @@
 import { signByParticipant } from '@/entities/consent';
 import { plainDate } from '@/lib/people/plain-date';
-import { plainDate } from '@/lib/people/plain-date';
 import { Refusal } from '@/lib/work/refusal';
 import { localDate } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
