@@ -2,7 +2,8 @@ import type { ExtractColumn } from './define-extract-file';
 
 export type Cell = number | string | null;
 
-const plainKey = /^[a-z0-9.-]{1,60}$/i;
+/** Begins with a letter or digit: a spreadsheet reads what begins with a dash as a formula. */
+const plainKey = /^[a-z0-9][a-z0-9.-]{0,59}$/i;
 const studyNumber = /^P\d{7}$/;
 
 /**
