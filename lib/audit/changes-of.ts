@@ -25,14 +25,22 @@ function girthChanges(before: unknown, after: unknown): FieldChange[] {
   );
 }
 
+const isBareKey = (value: unknown): value is string => typeof value === 'string' && /^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}$/.test(value);
+
+/** Keys of other rows that an image holds: whoever reads the trail looks up what they are called. */
+export const bareKeysOf = (...images: readonly Image[]): string[] => images.flatMap((image) => Object.entries(image ?? {}).flatMap(([column, value]) => (!isPlumbing(column) && isBareKey(value) ? [value] : [])));
+
+/** A key by the code of what it names; one that has none says nothing to a reader. */
+const inWords = (value: unknown, names: ReadonlyMap<string, string>): unknown => (isBareKey(value) ? (names.get(value) ?? 'a record without a code') : value);
+
 /** What an entry changed, field by field. An insert shows what was first entered; a column the reader cannot use is left out. */
-export function changesOf(before: Image, after: Image): FieldChange[] {
+export function changesOf(before: Image, after: Image, names: ReadonlyMap<string, string> = new Map()): FieldChange[] {
   const columns = [...new Set([...Object.keys(before ?? {}), ...Object.keys(after ?? {})])].filter((column) => !isPlumbing(column));
   return columns.flatMap((column) => {
     const [was, is] = [before?.[column] ?? null, after?.[column] ?? null];
     if (same(was, is) || (isEmpty(was) && isEmpty(is))) return [];
     if (column === 'circumferences_mm' && before && after) return girthChanges(was, is);
     const { label, kind } = fieldWords(column);
-    return [{ column, label, kind: typeof is === 'object' && is !== null && kind === 'text' ? ('json' as const) : kind, before: was, after: is }];
+    return [{ column, label, kind: typeof is === 'object' && is !== null && kind === 'text' ? ('json' as const) : kind, before: inWords(was, names), after: inWords(is, names) }];
   });
 }

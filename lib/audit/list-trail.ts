@@ -1,6 +1,6 @@
 import { moment } from '@/lib/work/time';
 import type { Work } from '@/lib/work/work';
-import { changesOf, type FieldChange } from './changes-of';
+import { bareKeysOf, changesOf, type FieldChange } from './changes-of';
 import type { ListTrailInput, TrailFilter } from './input';
 import { leafHash } from './merkle';
 import { leafSql } from './seal-trail';
@@ -83,7 +83,20 @@ function subjectOf({ table_name: table, visit_name: visitName, account, before, 
   return [...parts, ...(account ? [account] : [])].join(', ') || name;
 }
 
-const toEntry = (row: Row): TrailEntry => ({
+/** What keys in the images name, where it has a code: accounts by their label, screenings by their participant's. */
+async function readNames(work: Work, rows: readonly Row[]): Promise<ReadonlyMap<string, string>> {
+  const keys = [...new Set(rows.flatMap(({ before, after }) => bareKeysOf(before, after)))];
+  if (keys.length === 0) return new Map();
+  const list = `{${keys.join(',')}}`;
+  const named = await work.sql<{ id: string; name: string }>(
+    `select id::text as id, label as name from account where id = any (?::uuid[])
+     union all select s.id::text, 'screening of ' || p.code from screening s join participant p on p.id = s.participant_id where s.id = any (?::uuid[])`,
+    [list, list],
+  );
+  return new Map(named.map(({ id, name }) => [id, name]));
+}
+
+const toEntry = (row: Row, names: ReadonlyMap<string, string>): TrailEntry => ({
   id: row.id,
   at: moment(row.at).toISOString(),
   who: row.who ?? 'unknown',
@@ -95,7 +108,7 @@ const toEntry = (row: Row): TrailEntry => ({
   subject: subjectOf(row),
   code: row.code,
   siteName: row.site_name,
-  changes: changesOf(row.before, row.after),
+  changes: changesOf(row.before, row.after, names),
   reason: row.reason,
   request: row.request,
   hash: leafHash(row.leaf).toString('hex'),
@@ -117,10 +130,11 @@ export async function readEntries(work: Work, filter: TrailFilter, { before, lim
      order by n.id desc`,
     [...values, ...(before ? [before] : []), limit],
   );
-  return rows.map(toEntry);
+  const names = await readNames(work, rows);
+  return rows.map((row) => toEntry(row, names));
 }
 
-/** One page of the trail that the reach allows. Two statements, however long the trail is. */
+/** One page of the trail that the reach allows. Three statements, however long the trail is. */
 export async function listTrail(work: Work, { before, limit, ...filter }: ListTrailInput): Promise<TrailPage> {
   const entries = await readEntries(work, filter, { before, limit });
   const { text, values } = conditionsOf(filter);

@@ -96,6 +96,9 @@ const special: Readonly<Record<string, readonly [string, ValueKind]>> = {
   right_volume_ml: ['right volume', 'volume'],
   rvc: ['relative volume change', 'change'],
   height_mm: ['height', 'length'],
+  handedOver: ['handed over for', 'text'],
+  takenBack: ['taken back from', 'text'],
+  sha256: ['SHA-256', 'text'],
 };
 
 /** The label of a column and how its values are read, from the way columns are named. */
