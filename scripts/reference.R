@@ -542,6 +542,51 @@ f <- coxph(Surv(futime, fustat) ~ age + ecog.ps, data = ov, control = ctl); zc <
 bl <- survival::bladder1; bl2 <- survival::bladder2; fb <- csv(bl2, "bladder2"); f <- coxph(Surv(start, stop, event) ~ rx + size + number + strata(enum), data = bl2, cluster = id, control = ctl); add("cox-bladder-wlw-type", "Recurrent events, stratified by event number, clustered by id (conditional model)", list(file = fb), cox_out(f, zph = FALSE), source = "Wei, Lin, Weissfeld 1989; survival::bladder2", rel = 1e-7)
 topic_end(here)
 
+## ============================================================ 15 Firth's penalised Cox regression
+# No package: coxph itself gives log L and the inverse information at any fixed
+# beta (iter.max = 0). log L + 1/2 log det I is raised by steps V g, g by central
+# differences of the sixth order; limits and p by root finding on its profile.
+topic_begin("15-firth-cox", "Cox regression by Firth's penalised likelihood: estimates, profile limits, penalised likelihood-ratio tests")
+firth_out <- function(fm, d, ties = "efron") {
+  held <- coxph.control(iter.max = 0, toler.chol = 1e-15)
+  f0 <- suppressWarnings(coxph(fm, d, ties = ties, control = coxph.control(iter.max = 1), x = TRUE, model = TRUE)); run <- if (ncol(f0$y) == 3) agreg.fit else coxph.fit   # the fitters inside coxph: the same numbers, without reading the formula again
+  st <- if (is.null(f0$strata)) NULL else as.integer(f0$model[[grep("^strata", names(f0$model))]])
+  at <- function(b) { f <- suppressWarnings(run(f0$x, f0$y, st, NULL, b, held, NULL, ties, NULL)); list(pl = f$loglik[2] - .5*as.numeric(determinant(f$var)$modulus), V = f$var) }
+  pl <- function(b) at(b)$pl
+  nm <- names(coef(f0)); p <- length(nm); nl <- at(rep(0, p)); z <- qnorm(.975)
+  grad <- function(b, V, free) sapply(free, function(j) { h <- .05*sqrt(V[j, j]); s <- function(k) { b[j] <- b[j] + k*h; pl(b) }; (45*(s(1) - s(-1)) - 9*(s(2) - s(-2)) + s(3) - s(-3))/(60*h) })
+  top <- function(b, free) { if (!length(free)) return(b)
+    for (i in 1:500) { o <- at(b); g <- grad(b, o$V, free); st <- as.vector(solve(solve(o$V)[free, free, drop = FALSE], g)); k <- 1
+      repeat { nb <- b; nb[free] <- b[free] + k*st; if (k < 1e-4 || isTRUE(pl(nb) >= o$pl - 1e-9)) break; k <- k/2 }
+      b <- nb; if (max(abs(k*st)/sqrt(diag(o$V))[free]) < 1e-9) return(b) }
+    stop("no convergence") }
+  b <- top(rep(0, p), seq_len(p)); o <- at(b); se <- sqrt(diag(o$V))
+  sc <- sqrt(diag(nl$V)); nm_at <- b/sc + .3; for (i in 1:6) { by_nm <- suppressWarnings(optim(nm_at, function(u) { v <- -pl(u*sc); if (is.finite(v)) v else 1e6 }, control = list(reltol = 1e-15, maxit = 5000))); nm_at <- by_nm$par }
+  ck <- chk("Nelder and Mead's search reaches the same maximum", c(-by_nm$value, by_nm$par*sc/se), c(o$pl, b/se), c(1e-8, rep(1e-3, p)))
+  prof <- function(j, v) { u <- b + (v - b[j])*o$V[, j]/o$V[j, j]; u[j] <- v; pl(top(u, setdiff(seq_len(p), j))) }
+  lim <- function(j, side) { g <- function(v) 2*(o$pl - prof(j, v)) - z^2; far <- b[j] + side*2*se[j]; while (g(far) < 0) far <- far + side*se[j]; uniroot(g, sort(c(b[j] + side*.5*se[j], far)), tol = 1e-11*se[j])$root }
+  lo <- sapply(seq_len(p), lim, -1); hi <- sapply(seq_len(p), lim, 1); ch <- sapply(seq_len(p), function(j) 2*(o$pl - prof(j, 0))); L <- function(x) setNames(as.list(x), nm)
+  lr <- 2*(o$pl - nl$pl)
+  whole <- suppressWarnings(coxph(fm, d, init = b, ties = ties, control = held)); c0 <- chk("coxph itself at the maximum", whole$loglik[2] - .5*as.numeric(determinant(whole$var)$modulus), o$pl, 1e-9)
+  list(out = list(n = f0$n, n_event = f0$nevent, coef = L(b), se = L(se), vcov = unname(o$V), hr = L(exp(b)), log_lower = L(lo), log_upper = L(hi), hr_lower = L(exp(lo)), hr_upper = L(exp(hi)),
+       chisq = L(ch), p = L(pchisq(ch, 1, lower.tail = FALSE)), penalised_loglik_null = nl$pl, penalised_loglik = o$pl, lrt = c(chisq = lr, df = p, p = pchisq(lr, p, lower.tail = FALSE))), checks = list(ck, c0)) }
+firth_add <- function(id, what, data, fm, d, ties = "efron", source, params = NULL, checks = NULL) { r <- firth_out(fm, d, ties); add(id, what, data, r$out, call = "maximum of coxph's log-likelihood + 1/2 log det of its information (init = beta, iter.max = 0)", params = c(list(ties = ties), params), source = source, rel = 1e-6, abs = 1e-8, checks = c(r$checks, checks)); invisible(r$out) }
+firth_src <- function(s) paste0(s, "; method of Firth 1993 (Biometrika 80:27) and Heinze & Schemper 2001 (Biometrics 57:114), computed here")
+firth_add("firth-lung", "age + sex + ph.ecog, Efron ties", list(file = fl, rows = "ph.ecog not missing"), Surv(time, status) ~ age + sex + ph.ecog, lu, source = firth_src(SRC$surv))
+firth_add("firth-lung-strata", "age + sex, stratified by ph.ecog", list(file = fl, rows = "ph.ecog not missing"), Surv(time, status) ~ age + sex + strata(ph.ecog), lu, source = firth_src(SRC$surv), params = list(strata = "ph.ecog"))
+firth_add("firth-ovarian", "age + ecog.ps, Efron ties", list(file = fo), Surv(futime, fustat) ~ age + ecog.ps, ov, source = firth_src(SRC$surv))
+ve$ct_smallcell <- as.integer(ve$celltype == "smallcell"); ve$ct_adeno <- as.integer(ve$celltype == "adeno"); ve$ct_large <- as.integer(ve$celltype == "large"); ve$trt2 <- as.integer(ve$trt == 2)
+for (tt in c("efron", "breslow")) firth_add(paste0("firth-veteran-", tt), paste0("karno + celltype (reference squamous) + trt2, ", tt, " ties"), list(file = fv), Surv(time, status) ~ karno + ct_smallcell + ct_adeno + ct_large + trt2, ve, tt, source = firth_src(SRC$surv))
+firth_add("firth-6mp-breslow", "control v 6-MP, heavy ties, Breslow", list(file = fg, x = "g6 = 1 if treat is control"), Surv(time, status) ~ g6, data.frame(gh, g6 = g6), "breslow", source = firth_src("as Freireich"))
+hp$tx <- as.integer(hp$transplant) - 1; firth_add("firth-heart-timevarying", "time-varying transplant in (start, stop] rows", list(file = fh), Surv(start, stop, event) ~ age + year + surgery + tx, hp, source = firth_src(SRC$surv))
+mono <- data.frame(time = c(1,2,2,3,4,5,5,6,7,8,9,10), status = c(1,1,1,0,1,1,0,0,1,0,0,0), flag = c(1,1,1,1,1,1,0,0,1,0,0,0), size = c(2.1,3.4,1.2,2.2,4.1,2.8,1.9,3.3,0.7,2.5,1.1,3.0))
+firth_add("firth-monotone", "every event carries the flag: ordinary Cox has no finite maximum", list(inline_rows = as.list(mono)), Surv(time, status) ~ flag + size, mono, source = firth_src("made up for this base"))
+firth_add("firth-monotone-breslow", "the same, Breslow ties", list(inline_rows = as.list(mono)), Surv(time, status) ~ flag + size, mono, "breslow", source = firth_src("made up for this base"))
+pr <- data.frame(pair = rep(1:4, each = 2), time = rep(1:2, 4), status = rep(1:0, 4), exposed = rep(1:0, 4)); k <- 4
+firth_add("firth-pairs", "four pairs as strata, the exposed one has the event in each: (k + 1/2) log p + 1/2 log(1 - p), so that the ratio is 2k + 1 = 9 exactly", list(inline_rows = as.list(pr)), Surv(time, status) ~ exposed + strata(pair), pr, source = firth_src("made up for this base"), params = list(strata = "pair"),
+  checks = list(chk("log(2k + 1)", firth_out(Surv(time, status) ~ exposed + strata(pair), pr)$out$coef$exposed, log(2*k + 1), 1e-8)))
+topic_end(here)
+
 ## ============================================================ 07 mixed model
 topic_begin("07-mixed-model", "Linear mixed model: random intercept and slope, REML and ML")
 ss <- as.data.frame(lme4::sleepstudy); ss$Subject <- as.character(ss$Subject); fs <- csv(ss, "sleepstudy"); X <- cbind(1, ss$Days)

@@ -78,6 +78,7 @@ export { cox } from './survival/cox';
 export { cumulativeHazard } from './survival/cox-baseline';
 export { proportionalHazardsTest } from './survival/cox-ph-test';
 export { cumulativeIncidence } from './survival/cumulative-incidence';
+export { firthCox } from './survival/firth-cox';
 export { grayTest } from './survival/gray';
 export { intervalOnset } from './survival/interval-onset';
 export { intervalRegression } from './survival/interval-regression';

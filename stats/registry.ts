@@ -64,6 +64,11 @@ const comparisons = [
     reference: 'Garwood F. Biometrika 1936;28:437-442',
   }),
   defineStatistic({
+    name: 'firthCox',
+    method: 'Cox proportional-hazards regression by Firth’s penalised likelihood, profile penalised-likelihood limits and tests',
+    reference: 'Firth D. Biometrika 1993;80:27-38; Heinze G, Schemper M. Biometrics 2001;57:114-119',
+  }),
+  defineStatistic({
     name: 'fisherExact',
     method: 'Fisher’s exact test; two-sided by summing tables no more probable than the observed',
     reference: 'Fisher RA. J R Stat Soc 1935;98:39-54; mid-P: Lancaster HO. J Am Stat Assoc 1961;56:223-234',

@@ -29,7 +29,7 @@ const RESTLESS = 1e-3;
 /** Share of its information at 0 below which a coefficient has none left. */
 const DRAINED = 1e-10;
 
-interface Look {
+export interface Look {
   readonly value: number;
   readonly score: Float64Array;
   readonly information: Float64Array;
@@ -84,7 +84,7 @@ export function fitCox(design: CoxDesign, ties: Ties): ScaledFit {
   };
 }
 
-function lookAt(sweep: CoxSweep, beta: Float64Array): Look {
+export function lookAt(sweep: CoxSweep, beta: Float64Array): Look {
   const { p } = sweep.design;
   const score = new Float64Array(p);
   const triangle = new Float64Array((p * (p + 1)) / 2);
@@ -109,14 +109,14 @@ function halvedStep(sweep: CoxSweep, beta: Float64Array, step: Float64Array, loo
 }
 
 /** A variance that is rounding only (a covariate constant within every risk set) counts as none. */
-function steady(information: Float64Array, p: number, events: number): Float64Array {
+export function steady(information: Float64Array, p: number, events: number): Float64Array {
   const out = information.slice();
   for (let j = 0; j < p; j++) if (out[j * p + j]! < 1e-10 * events) out[j * p + j] = 0;
   return out;
 }
 
 /** Factor of the information of the coefficients that have an estimate. */
-function restricted(information: Float64Array, p: number, missing: readonly (Missing | undefined)[]): Factor {
+export function restricted(information: Float64Array, p: number, missing: readonly (Missing | undefined)[]): Factor {
   const out = information.slice();
   missing.forEach((why, j) => {
     if (why === undefined) return;
@@ -137,7 +137,7 @@ function markDrained(missing: (Missing | undefined)[], now: Float64Array, first:
   for (let j = 0; j < p; j++) if (missing[j] === undefined && !(now[j * p + j]! > DRAINED * first[j * p + j]!)) missing[j] = 'monotone';
 }
 
-function dot(a: Float64Array, b: Float64Array): number {
+export function dot(a: Float64Array, b: Float64Array): number {
   let sum = 0;
   for (let i = 0; i < a.length; i++) sum += a[i]! * b[i]!;
   return sum;

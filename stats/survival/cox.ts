@@ -50,9 +50,9 @@ export interface CoxFit extends Provenance {
   readonly converged: boolean;
 }
 
-const REASONS: Record<Missing, string> = {
+export const REASONS: Record<Missing, string> = {
   aliased: 'constant, or a combination of other covariates, in every risk set',
-  monotone: 'monotone likelihood: it keeps rising as the coefficient grows without end',
+  monotone: 'monotone likelihood: it keeps rising as the coefficient grows without end; firthCox, the penalised fit, has a finite estimate',
 };
 
 /**
@@ -136,7 +136,7 @@ function robustCovariance(design: CoxDesign, ties: Ties, fit: ScaledFit, data: C
   return { covariance: unscale(out, design), clusters };
 }
 
-function unscale(matrix: Float64Array, { p, spread }: CoxDesign): Float64Array {
+export function unscale(matrix: Float64Array, { p, spread }: CoxDesign): Float64Array {
   return matrix.map((value, at) => value / (spread[Math.floor(at / p)]! * spread[at % p]!));
 }
 

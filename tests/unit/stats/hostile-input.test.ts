@@ -112,6 +112,7 @@ describe('no column makes an estimator answer NaN or Infinity, throw anything bu
       run('grayTest', () => stats.grayTest({ time, cause, group }));
       run('cox', () => stats.cox({ ...data, x }, { robust: true }));
       run('cox, strata and one cluster', () => stats.cox({ ...data, x, stratum: group, cluster: new Uint8Array(n) }));
+      run('firthCox', () => stats.firthCox({ ...data, x, stratum: group }));
       const right = time.map((t, i) => (event[i] === 1 ? t + (i % 3) : Infinity));
       run('intervalRegression', () => stats.intervalRegression({ left: time, right, x: [x[0]!] }));
       answersOrRefuses('intervalOnset', [time, right], () => stats.intervalOnset({ left: time, right }), /right\[\]/);
