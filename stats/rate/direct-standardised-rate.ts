@@ -15,17 +15,18 @@ export interface StandardisedRate extends RateEstimate {
  * with gamma limits (Fay & Feuer 1997), which cover for few events and are
  * Garwood's with one stratum.
  *
- * @param strata events, person-time and standard weights, one entry a stratum; person-time positive, weights from 0 with a positive sum
+ * @param strata events, person-time and standard weights, one entry a stratum; person-time positive, weights from 0 with a positive sum; `people` of each, where told, add up to `n`
  * @param options `per` the amount of person-time to report by (1), `level` (0.95)
+ * @throws RangeError on columns of different length, events or people that are no count, person-time not positive, weights below 0 or all 0
  */
 export function directStandardisedRate(
-  strata: { readonly events: ArrayLike<number>; readonly personTime: ArrayLike<number>; readonly weights: ArrayLike<number> },
+  strata: { readonly events: ArrayLike<number>; readonly personTime: ArrayLike<number>; readonly weights: ArrayLike<number>; readonly people?: ArrayLike<number> },
   { per = 1, level = 0.95 }: { readonly per?: number; readonly level?: number } = {},
 ): StandardisedRate {
-  const { events, personTime, weights } = strata;
+  const { events, personTime, weights, people } = strata;
   requireLevel(level);
   requireRange(per > 0 && per < Number.POSITIVE_INFINITY, `A rate is reported per a positive amount, not ${per}.`);
-  requireRange(events.length === personTime.length && events.length === weights.length, 'The columns of strata differ in length.');
+  requireRange(events.length === personTime.length && events.length === weights.length && (people ?? events).length === events.length, 'The columns of strata differ in length.');
   let all = 0;
   for (let i = 0; i < weights.length; i++) {
     const weight = weights[i] as number;
@@ -37,6 +38,7 @@ export function directStandardisedRate(
   let variance = 0;
   let heaviest = 0;
   let count = 0;
+  let persons = 0;
   let time = 0;
   for (let i = 0; i < events.length; i++) {
     const seen = events[i] as number;
@@ -48,6 +50,10 @@ export function directStandardisedRate(
     variance += share * share * seen;
     heaviest = Math.max(heaviest, share);
     count += seen;
+    if (people) {
+      requireCount(people[i] as number, 'The number of people');
+      persons += people[i] as number;
+    }
     time += watched;
   }
   const tail = (1 - level) / 2;
@@ -59,7 +65,7 @@ export function directStandardisedRate(
     level,
     variance: variance * per * per,
     method: methodOf('directStandardisedRate'),
-    n: count,
+    n: people ? persons : null,
     events: count,
     leftOut: [],
     personTime: time,

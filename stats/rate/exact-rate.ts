@@ -1,21 +1,23 @@
 import { gammaDist } from '../distributions';
 import { methodOf } from '../registry';
-import { requireLevel, type Estimate } from '../result';
-import { requireOneRate, type OneRate } from './counts';
+import { requireLevel } from '../result';
+import { requireOneRate, type OneRate, type RateResult } from './counts';
 
-/** A rate, with `n` the events it rests on and its person-time. */
-export interface RateEstimate extends Estimate {
+/** A rate with its person-time. */
+export interface RateEstimate extends RateResult {
+  /** In the unit it was given in. */
   readonly personTime: number;
+  /** Person-time the rate is told by. */
   readonly per: number;
 }
 
 /**
  * Events per person-time with exact Poisson limits (Garwood 1936), by gamma
  * quantiles. The lower limit is exactly 0 without events.
- * `n` counts events: a rate has no other records.
+ * @throws RangeError where events are no count, or person-time or `per` is not positive
  */
 export function exactRate(rate: OneRate): RateEstimate {
-  const { events, personTime, per = 1, level = 0.95 } = rate;
+  const { events, personTime, people = null, per = 1, level = 0.95 } = rate;
   requireOneRate(rate);
   requireLevel(level);
   const tail = (1 - level) / 2;
@@ -26,7 +28,7 @@ export function exactRate(rate: OneRate): RateEstimate {
     upper: gammaDist.isf(tail, events + 1) * scale,
     level,
     method: methodOf('exactRate'),
-    n: events,
+    n: people,
     events,
     leftOut: [],
     personTime,

@@ -8,7 +8,8 @@ import { exactRate, type RateEstimate } from './exact-rate';
 /**
  * Events per person-time with mid-P limits: the means at which the tail, the
  * observed count counted half, is half of 1 - level. Solved on the log of the
- * tail within the exact limits, which always hold them.
+ * tail within the exact limits, which always hold them (Lancaster 1961).
+ * @throws RangeError as `exactRate`
  */
 export function midPRate(rate: OneRate): RateEstimate {
   const { events, personTime, per = 1, level = 0.95 } = rate;

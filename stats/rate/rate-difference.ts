@@ -1,13 +1,16 @@
 import { criticalValue } from '../critical-value';
 import { methodOf } from '../registry';
-import type { Estimate } from '../result';
-import { requireTwoRates, type TwoRates } from './counts';
+import { peopleOf, requireTwoRates, type RateResult, type TwoRates } from './counts';
 
-export interface RateDifference extends Estimate {
+export interface RateDifference extends RateResult {
   readonly standardError: number;
 }
 
-/** Rate 1 less rate 2, per unit of person-time, with Wald limits. */
+/**
+ * Rate 1 less rate 2, per unit of person-time, with Wald limits (Rothman,
+ * Greenland & Lash 2008, ch. 14).
+ * @throws RangeError where events are no count or person-time is not positive
+ */
 export function rateDifference(rates: TwoRates): RateDifference {
   const { events1, personTime1, events2, personTime2, level = 0.95 } = rates;
   requireTwoRates(rates);
@@ -22,7 +25,7 @@ export function rateDifference(rates: TwoRates): RateDifference {
     standardError,
     level,
     method: methodOf('rateDifference'),
-    n: total,
+    n: peopleOf(rates),
     events: total,
     leftOut: [],
   };

@@ -1,9 +1,9 @@
 import { binomial, fisherF } from '../distributions';
 import { methodOf } from '../registry';
-import { requireLevel, type Estimate } from '../result';
-import { NO_EVENTS, requireTwoRates, type TwoRates } from './counts';
+import { requireLevel } from '../result';
+import { NO_EVENTS, peopleOf, requireTwoRates, type RateResult, type TwoRates } from './counts';
 
-export interface RateRatioExact extends Estimate {
+export interface RateRatioExact extends RateResult {
   /** Twice the smaller exact tail, at most 1: agrees with the limits. */
   readonly pCentral: number;
   /** Sum of all splits no more probable than the observed; differs from `pCentral` in general. */
@@ -14,13 +14,14 @@ export interface RateRatioExact extends Estimate {
  * Rate 1 over rate 2 given the total of events, which makes events 1 a
  * binomial count (Przyborowski & Wilenski 1940). Limits are Clopper-Pearson's
  * on the odds, exactly 0 or infinite at the ends. No events at all: null.
+ * @throws RangeError where events are no count or person-time is not positive
  */
 export function rateRatioExact(rates: TwoRates): RateRatioExact {
   const { events1, personTime1, events2, personTime2, level = 0.95 } = rates;
   requireTwoRates(rates);
   requireLevel(level);
   const total = events1 + events2;
-  const about = { level, method: methodOf('rateRatioExact'), n: total, events: total, leftOut: [] };
+  const about = { level, method: methodOf('rateRatioExact'), n: peopleOf(rates), events: total, leftOut: [] };
   if (total === 0) return { estimate: null, lower: null, upper: null, reason: NO_EVENTS, pCentral: 1, pMinimumLikelihood: 1, ...about };
   const tail = (1 - level) / 2;
   const times = personTime2 / personTime1;

@@ -1,24 +1,25 @@
 import { binomial, fisherF } from '../distributions';
 import { methodOf } from '../registry';
-import { requireLevel, type Estimate } from '../result';
+import { requireLevel } from '../result';
 import { findRoot } from '../special/find-root';
-import { NO_EVENTS, requireTwoRates, type TwoRates } from './counts';
+import { NO_EVENTS, peopleOf, requireTwoRates, type RateResult, type TwoRates } from './counts';
 
-export interface RateRatioMidP extends Estimate {
+export interface RateRatioMidP extends RateResult {
   /** Twice the smaller mid-P tail, at most 1. */
   readonly p: number;
 }
 
 /**
  * Rate 1 over rate 2 given the total of events, with mid-P limits and p: the
- * observed split is counted half. Exactly 0 or infinite at the ends.
+ * observed split is counted half (Berry & Armitage 1995). Exactly 0 or infinite at the ends.
+ * @throws RangeError where events are no count or person-time is not positive
  */
 export function rateRatioMidP(rates: TwoRates): RateRatioMidP {
   const { events1, personTime1, events2, personTime2, level = 0.95 } = rates;
   requireTwoRates(rates);
   requireLevel(level);
   const total = events1 + events2;
-  const about = { level, method: methodOf('rateRatioMidP'), n: total, events: total, leftOut: [] };
+  const about = { level, method: methodOf('rateRatioMidP'), n: peopleOf(rates), events: total, leftOut: [] };
   if (total === 0) return { estimate: null, lower: null, upper: null, reason: NO_EVENTS, p: 1, ...about };
   const tail = (1 - level) / 2;
   const times = personTime2 / personTime1;

@@ -1,21 +1,25 @@
 import { criticalValue } from '../critical-value';
 import { normal } from '../distributions';
-import type { RatioEstimate } from '../proportion/katz-risk-ratio';
 import { ratioOf } from '../proportion/katz-risk-ratio';
 import { methodOf } from '../registry';
-import { requireTwoRates, type TwoRates } from './counts';
+import { peopleOf, requireTwoRates, type RateRatioEstimate, type TwoRates } from './counts';
 
-export interface RateRatioWald extends RatioEstimate {
+export interface RateRatioWald extends RateRatioEstimate {
   readonly p: number | null;
 }
 
-/** Rate 1 over rate 2 with Wald limits on the log. Without events in either group the log does not exist: limits and p are null. */
+/**
+ * Rate 1 over rate 2 with Wald limits on the log (Rothman, Greenland & Lash
+ * 2008, ch. 14). Without events in either group the log does not exist:
+ * limits and p are null.
+ * @throws RangeError where events are no count or person-time is not positive
+ */
 export function rateRatioWald(rates: TwoRates): RateRatioWald {
   const { events1, personTime1, events2, personTime2, level = 0.95 } = rates;
   requireTwoRates(rates);
   const z = criticalValue(level);
   const total = events1 + events2;
-  const about = { level, method: methodOf('rateRatioWald'), n: total, events: total, leftOut: [] };
+  const about = { level, method: methodOf('rateRatioWald'), n: peopleOf(rates), events: total, leftOut: [] };
   const estimate = ratioOf(events1 / personTime1, events2 / personTime2);
   if (events1 === 0 || events2 === 0) {
     return { estimate, lower: null, upper: null, standardErrorLog: null, p: null, reason: 'A group without events has no log rate.', ...about };

@@ -159,6 +159,28 @@ describe('strata of rates', () => {
   });
 });
 
+describe('n counts people, events events', () => {
+  test('people are named where told, and null where not', () => {
+    const two = { events1: 4, personTime1: 10, events2: 2, personTime2: 12 };
+    expect(exactRate({ events: 3, personTime: 8, people: 2 })).toMatchObject({ n: 2, events: 3 });
+    expect(midPRate({ events: 3, personTime: 8 })).toMatchObject({ n: null, events: 3 });
+    for (const method of [rateRatioExact, rateRatioMidP, rateRatioWald, rateDifference]) {
+      expect(method({ ...two, people1: 5, people2: 7 })).toMatchObject({ n: 12, events: 6 });
+      expect(method({ ...two, people1: 5 })).toMatchObject({ n: null, events: 6 });
+      expect(() => method({ ...two, people1: 0.5 })).toThrow(RangeError);
+    }
+    const strata = { events1: [4, 1], personTime1: [10, 3], events2: [2, 0], personTime2: [12, 0] };
+    expect(mantelHaenszelRateRatio(strata)).toMatchObject({ n: null, events: 6 });
+    // The second stratum is left out, and its people with it.
+    expect(mantelHaenszelRateRatio({ ...strata, people1: [5, 1], people2: [6, 2] })).toMatchObject({ n: 11, events: 6 });
+    const standard = { events: [2, 5], personTime: [10, 20], weights: [1, 1] };
+    expect(directStandardisedRate(standard)).toMatchObject({ n: null, events: 7 });
+    expect(directStandardisedRate({ ...standard, people: [3, 4] })).toMatchObject({ n: 7, events: 7 });
+    expect(() => directStandardisedRate({ ...standard, people: [3] })).toThrow(RangeError);
+    expect(() => directStandardisedRate({ ...standard, people: [3, -1] })).toThrow(RangeError);
+  });
+});
+
 describe('checks of what is given', () => {
   test('person-time is summed in days and divided once', () => {
     expect(personTime(Float64Array.of(365.25, 730.5))).toEqual({ days: 1095.75, years: 3, n: 2 });
