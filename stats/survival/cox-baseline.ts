@@ -11,8 +11,9 @@ export interface HazardCurve {
   /** Code of the stratum, 0 when there are none. */
   readonly stratum: number;
   readonly time: Float64Array;
+  /** NaN where it is beyond the largest number, at covariates far from the data; survival is 0 there. */
   readonly hazard: Float64Array;
-  /** Standard error of the cumulative hazard. */
+  /** Standard error of the cumulative hazard; NaN where that or the hazard is beyond the largest number. */
   readonly se: Float64Array;
 }
 
@@ -48,11 +49,16 @@ export function cumulativeHazard(data: CoxData, fit: CoxFit, x: readonly number[
       own += steps.h2[g]!;
       for (let j = 0; j < p; j++) drift[j]! += steps.drift[g * p + j]!;
       out.time[k] = design.time[g]!;
-      out.hazard[k] = risk * hazard;
-      out.se[k] = risk * Math.sqrt(own + quadratic(drift, covariance));
+      out.hazard[k] = written(risk * hazard);
+      out.se[k] = Number.isNaN(out.hazard[k]) ? NaN : written(risk * Math.sqrt(own + quadratic(drift, covariance)));
     });
     return out;
   });
+}
+
+/** Infinity is no hazard, and a product of it with 0 no number. */
+function written(value: number): number {
+  return value < Infinity ? value : NaN;
 }
 
 /** Steps of the hazard at each distinct time, of its variance, and of its drift with the coefficients. */
@@ -92,8 +98,9 @@ export function predictSurvival(
   return times.map((time) => {
     const k = lastNotAfter(curve.time, time);
     if (k < 0) return { time, estimate: 1, se: 0, lower: 1, upper: 1, level };
-    const estimate = Math.exp(-curve.hazard[k]!);
+    const hazard = curve.hazard[k]!;
     const hazardSe = curve.se[k]!;
+    const estimate = Number.isNaN(hazard) ? 0 : Math.exp(-hazard);
     if (estimate === 0) return { time, estimate, se: null, lower: null, upper: null, level, reason: 'predicted survival has reached 0' };
     return {
       time,

@@ -270,6 +270,18 @@ describe('Cox regression', () => {
     expect(curve!.se[1]).toBeCloseTo(Math.sqrt(1 / 64 + 1 / 49), 14);
   });
 
+  test('a hazard beyond the largest number is NaN, never infinite, and survival there is 0', () => {
+    const data = { time, event, x: [f(1, 0, 2, 1, 0, 3, 1, 2)] };
+    const fit = cox(data);
+    const away = Math.sign(fit.coefficients[0]!.estimate!) * 1e6;
+    const [curve] = cumulativeHazard(data, fit, [away]);
+    expect([...curve!.hazard, ...curve!.se].every(Number.isNaN)).toBe(true);
+    expect(predictSurvival(data, fit, [away], [8])[0]).toMatchObject({ estimate: 0, se: null, lower: null, upper: null, reason: 'predicted survival has reached 0' });
+    // On the other side the hazard is 0 to the last digit, which is a number.
+    const [calm] = cumulativeHazard(data, fit, [-away]);
+    expect([...calm!.hazard]).toEqual([...calm!.hazard].map(() => 0));
+  });
+
   test('everyone tied at one time has no information', () => {
     const fit = cox({ time: f(3, 3, 3), event: u(1, 1, 1), x: [f(1, 2, 3)] }, { ties: 'breslow' });
     expect(fit.coefficients[0]!.estimate).toBeCloseTo(0, 12);
