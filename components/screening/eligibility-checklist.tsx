@@ -14,6 +14,8 @@ export interface EligibilityChecklistProps {
   version: number;
   criteria: readonly CriterionView[];
   mayAnswer: boolean;
+  /** Confirming is the site investigator's: the others answer and leave it to them. */
+  mayConfirm: boolean;
 }
 
 const choices = [
@@ -22,7 +24,7 @@ const choices = [
 ] as const;
 
 /** The protocol's criteria, one by one; each answer is saved as it is given. */
-export function EligibilityChecklist({ screeningId, version, criteria: given, mayAnswer }: EligibilityChecklistProps) {
+export function EligibilityChecklist({ screeningId, version, criteria: given, mayAnswer, mayConfirm }: EligibilityChecklistProps) {
   const router = useRouter();
   const [criteria, setCriteria] = useState(given);
   const [unsaved, setUnsaved] = useState<Readonly<Record<string, string>>>({});
@@ -71,11 +73,13 @@ export function EligibilityChecklist({ screeningId, version, criteria: given, ma
       </ul>
       {mayAnswer ? (
         <div className="flex flex-wrap items-center gap-4">
-          <Button kind="primary" atWork={confirming.isPending && 'Confirming'} onClick={confirm}>
-            Confirm eligibility
-          </Button>
+          {mayConfirm ? (
+            <Button kind="primary" atWork={confirming.isPending && 'Confirming'} onClick={confirm}>
+              Confirm eligibility
+            </Button>
+          ) : null}
           <p role="status" className="t-small text-ink-2">
-            {answered} of {criteria.length} answered. Each answer is saved as it is given.
+            {answered} of {criteria.length} answered. Each answer is saved as it is given.{mayConfirm ? '' : ' The site investigator confirms eligibility on this page.'}
           </p>
         </div>
       ) : null}

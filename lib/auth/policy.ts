@@ -42,7 +42,7 @@ export const policy = {
   'screening.view': read(...siteTeam, 'monitor', 'data-manager', 'auditor'),
   'screening.open': withIdentity(write(...consenting)),
   'screening.answer': write(...consenting),
-  'screening.confirm': write(...consenting),
+  'screening.confirm': write('site-investigator'),
   'screening.leave': write(...consenting),
   'identity.view': withIdentity(write(...consenting)),
   'identity.correct': withIdentity(write(...consenting)),

@@ -142,7 +142,7 @@ const nodeCount = z.union([z.string(), z.number()]).transform((typed, context) =
 
 export const enrolInput = z.strictObject({
   id: z.uuid(),
-  affectedSide: z.enum(['left', 'right'], { error: 'Choose the treated side.' }),
+  affectedSide: z.enum(['left', 'right'], { error: 'Choose the affected side.' }),
   dominantSide: z.enum(['left', 'right', 'both'], { error: 'Choose the dominant hand.' }),
   surgeryOn: date('Give the date of surgery.'),
   surgery: oneOf(surgeries, 'Choose the surgery.'),

@@ -84,18 +84,20 @@ describe('screening', () => {
 
   test('a wrong answer says which criterion stops it, and confirming keeps who and when', async () => {
     const { id } = await givenScreening(scene.site, scene.protocol);
-    await expect(confirm(scene.coordinator, id)).rejects.toMatchObject({ code: 'invalid', message: expect.stringContaining('3 criteria are not answered yet') as string });
+    const investigator = await givenStaff('site-investigator', scene.site);
+    await expect(confirm(scene.coordinator, id)).rejects.toMatchObject({ code: 'forbidden' });
+    await expect(confirm(investigator, id)).rejects.toMatchObject({ code: 'invalid', message: expect.stringContaining('3 criteria are not answered yet') as string });
     await answer(scene.coordinator, id, 'adult', 'yes');
     await answer(scene.coordinator, id, 'treated', 'yes');
     expect(await answer(scene.coordinator, id, 'metastases', 'yes')).toMatchObject({ stops: true });
-    await expect(confirm(scene.coordinator, id)).rejects.toMatchObject({
+    await expect(confirm(investigator, id)).rejects.toMatchObject({
       message: 'Not eligible. ‘Has distant metastases’ is answered yes, and the protocol asks for no.',
       field: 'criterion-metastases',
     });
     expect(await answer(scene.coordinator, id, 'metastases', 'no')).toMatchObject({ stops: false });
-    await confirm(scene.coordinator, id);
+    await confirm(investigator, id);
     const view = await withWork(scene.coordinator, 'screening.view', (work) => viewScreening(work, { id }));
-    expect(view.eligibility).toMatchObject({ confirmedBy: scene.coordinator.label });
+    expect(view.eligibility).toMatchObject({ confirmedBy: investigator.label });
     await expect(answer(scene.coordinator, id, 'metastases', 'yes')).rejects.toMatchObject({ code: 'locked' });
   });
 

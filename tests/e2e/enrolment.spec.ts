@@ -3,7 +3,8 @@ import { demoAccounts, demoPassword } from '../../lib/people/demo-accounts.mjs';
 import { letterTo, linkIn } from './setup/letters';
 import { ask, dayFromToday, open, sendTo, signIn, test } from './setup/pages';
 
-const coordinator = demoAccounts.find(({ key }) => key === 'coordinator') ?? { email: '', password: '', name: '' };
+const account = (wanted: string) => demoAccounts.find(({ key }) => key === wanted) ?? { email: '', password: '', name: '' };
+const coordinator = account('coordinator');
 // A run of its own each time, so that the journey can be repeated over the same data base.
 const newcomer = { name: 'Thora Wainscott', email: `thora.wainscott.${Date.now()}@post.example` };
 const ownPassword = 'quiet harbour walks 27';
@@ -67,15 +68,24 @@ test('a person is screened, consents on the tablet, is enrolled and opens the in
     expect(refused.ok()).toBe(false);
   });
 
-  await test.step('eligibility is answered and confirmed', async () => {
+  await test.step('eligibility is answered by the coordinator and confirmed by the site investigator', async () => {
     for (const one of criteria.slice(0, -1)) await answer(page, one);
-    await page.getByRole('button', { name: 'Confirm eligibility' }).click();
-    await expect(page.getByRole('alert').filter({ hasText: 'Not confirmed' })).toContainText('Not answered yet: Lymph nodes removed on the other side as well.');
+    await expect(page.getByRole('button', { name: 'Confirm eligibility' })).toHaveCount(0);
+    const other = await browser.newContext();
+    const investigator = await other.newPage();
+    await signIn(investigator, account('site-investigator'));
+    await open(investigator, screeningPath);
+    await investigator.getByRole('button', { name: 'Confirm eligibility' }).click();
+    await expect(investigator.getByRole('alert').filter({ hasText: 'Not confirmed' })).toContainText('Not answered yet: Lymph nodes removed on the other side as well.');
     await answer(page, ['Lymph nodes removed on the other side as well', 'Yes']);
     await expect(page.getByText('This stops it: the protocol asks for no.')).toBeVisible();
     await answer(page, ['Lymph nodes removed on the other side as well', 'No']);
-    await page.getByRole('button', { name: 'Confirm eligibility' }).click();
-    await expect(page.getByText(/^Confirmed by C-03, /)).toBeVisible();
+    await open(investigator, screeningPath);
+    await investigator.getByRole('button', { name: 'Confirm eligibility' }).click();
+    await expect(investigator.getByText(/^Confirmed by R-01, /)).toBeVisible();
+    await other.close();
+    await open(page, screeningPath);
+    await expect(page.getByText(/^Confirmed by R-01, /)).toBeVisible();
   });
 
   await test.step('the tablet is handed over and opens nothing else', async () => {
@@ -129,7 +139,7 @@ test('a person is screened, consents on the tablet, is enrolled and opens the in
   });
 
   const code = await test.step('the facts enrol the person under a code', async () => {
-    await page.getByRole('group', { name: 'Treated side' }).getByRole('radio', { name: 'Left' }).check();
+    await page.getByRole('group', { name: 'Affected side' }).getByRole('radio', { name: 'Left' }).check();
     await page.getByRole('group', { name: 'Dominant hand' }).getByRole('radio', { name: 'Right' }).check();
     await page.getByLabel('Date of surgery').fill(dayFromToday(-180));
     await page.getByLabel('Surgery', { exact: true }).selectOption({ label: 'Mastectomy' });

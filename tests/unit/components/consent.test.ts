@@ -52,5 +52,5 @@ test('the rule for a password is said before anything is typed', () => {
 test('the facts of enrolment have no preset either', () => {
   const markup = show(createElement(EnrolForm, { screeningId: consent.id, today: '2027-03-01' }));
   expect(markup).not.toMatch(/checked=""/);
-  expect(markup).toContain('Treated side');
+  expect(markup).toContain('Affected side');
 });

@@ -62,7 +62,7 @@ export default async function ScreeningPage({ params }: { params: Promise<{ id: 
               Confirmed by {eligibility.confirmedBy}, {formatMoment(eligibility.confirmedAt, site.timeZone)}.
             </p>
           ) : null}
-          <EligibilityChecklist key={version} screeningId={id} version={version} criteria={screening.criteria} mayAnswer={isOpen && !eligibility && may(role, 'screening.answer')} />
+          <EligibilityChecklist key={version} screeningId={id} version={version} criteria={screening.criteria} mayAnswer={isOpen && !eligibility && may(role, 'screening.answer')} mayConfirm={may(role, 'screening.confirm')} />
         </section>
         {signer && (isOpen || consent) ? (
           <section className="mt-8">
