@@ -51,13 +51,17 @@ export interface FirthCoxFit extends Provenance {
 }
 
 const UNSETTLED = 'the penalised likelihood was not brought to its maximum';
-const OPEN = 'the penalised likelihood does not fall far enough for a limit';
+const OPEN = 'the profile of the penalised likelihood could not be followed to a limit';
 
 /**
  * Cox proportional-hazards regression by Firth's penalised likelihood, for few
  * events and where the likelihood is monotone: the estimates stay finite.
  * Limits and p come from the profile of the penalised likelihood. Efron's or
  * Breslow's ties, (entry, time] rows and strata as in `cox`.
+ *
+ * The profile is followed from the estimate outwards. With hardly more events
+ * than covariates it can have a second, higher branch, which is not searched for;
+ * a limit is then too near. Trust no such fit.
  * @param data columns of equal length, one entry a row, as for `cox`; times in any one unit
  * @throws RangeError on columns of different length, codes out of range, infinite
  *   covariates, and on clusters, for which the method has no standard errors
@@ -162,8 +166,8 @@ function profileLimit(likelihood: FirthLikelihood, peak: Point, j: number, side:
     const isInside = newton > near && newton < Math.min(far, 4 * at + 1);
     if (Math.abs(newton - at) < 1e-8 && next.converged) return centre + side * newton * se;
     at = isInside ? newton : far === Infinity ? 2 * at : (near + far) / 2;
-    if (far - near < 1e-14 * far) return next.converged ? centre + side * at * se : null;
-    if (at > 1e4) return null;
+    // A bracket that closes on no root closes on a fit that did not settle: no limit to give.
+    if (at > 1e4 || far - near < 1e-14 * far) return null;
   }
   return null;
 }

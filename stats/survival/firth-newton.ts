@@ -84,6 +84,8 @@ export class FirthLikelihood {
 
   private look(beta: Float64Array) {
     const look = lookAt(this.sweep, beta);
+    // Above 0 no partial likelihood gets: there a whole risk set has lost its weight to one outside it.
+    if (look.value > 1e-6) return { ...look, ...this.penalised({ ...look, value: -Infinity }) };
     return { ...look, ...this.penalised(look) };
   }
 
