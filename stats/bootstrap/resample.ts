@@ -48,7 +48,12 @@ export function bootstrapReplicates(statistic: ResampledStatistic, drawing: Draw
   return out;
 }
 
-/** The statistic with each row (or cluster) left out in turn, for the acceleration of BCa limits. */
+/**
+ * The statistic with each row (or cluster) left out in turn, for the acceleration of BCa limits.
+ * @returns one value a row, or a cluster
+ * @throws RangeError for no rows or cluster numbers with gaps
+ * @see Efron, J Am Stat Assoc 1987;82:171
+ */
 export function jackknife(statistic: ResampledStatistic, drawing: Drawing): Float64Array {
   const { units, members } = unitsOf(drawing);
   const counts = new Int32Array(drawing.rows);
@@ -58,7 +63,9 @@ export function jackknife(statistic: ResampledStatistic, drawing: Drawing): Floa
   });
 }
 
-/** The statistic of the data as they are. */
+/**
+ * The statistic of the data as they are.
+ */
 export function observed(statistic: ResampledStatistic, { rows }: Drawing): number {
   return statistic(new Int32Array(rows).fill(1));
 }

@@ -2,7 +2,11 @@ import { requireRange } from '../result';
 import { orderOf } from '../survival/sort';
 import type { ResampledStatistic } from './resample';
 
-/** Mean of the drawn values. */
+/**
+ * Mean of the drawn values.
+ * @param values one a row, in any unit
+ * @throws RangeError on values that are not finite
+ */
 export function resampledMean(values: ArrayLike<number>): ResampledStatistic {
   const column = finite(values);
   return (counts) => {
@@ -16,7 +20,11 @@ export function resampledMean(values: ArrayLike<number>): ResampledStatistic {
   };
 }
 
-/** Median of the drawn values (the mean of the middle two for an even number); one sort for all resamples. */
+/**
+ * Median of the drawn values (the mean of the middle two for an even number); one sort for all resamples.
+ * @param values one a row, in any unit
+ * @throws RangeError on values that are not finite
+ */
 export function resampledMedian(values: ArrayLike<number>): ResampledStatistic {
   const column = finite(values);
   const order = orderOf(column);
@@ -42,6 +50,7 @@ export function resampledMedian(values: ArrayLike<number>): ResampledStatistic {
  * people still free of the event, as `rmst` has it.
  *
  * @param time at or above 0; @param event 1 = event, 0 = censored; @param tau above 0.
+ * @throws RangeError on tau not above 0, columns of different length, or negative times
  */
 export function resampledRmst(time: ArrayLike<number>, event: ArrayLike<number>, tau: number): ResampledStatistic {
   requireRange(tau > 0 && tau < Infinity, `A restricted mean needs a finite time above 0, not ${tau}.`);

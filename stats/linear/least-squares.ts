@@ -29,6 +29,8 @@ export interface LeastSquares extends Provenance {
  * @param y outcomes, finite
  * @param columns predictors, each as long as y, finite
  * @param options `intercept` (true), `level` (0.95)
+ * @throws RangeError on columns of different length, values that are not finite, or fewer values than coefficients
+ * @see Golub, Numer Math 1965;7:206
  */
 export function leastSquares(
   y: ArrayLike<number>,

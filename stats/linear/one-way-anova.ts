@@ -22,6 +22,8 @@ export interface OneWayAnova extends Provenance {
  *
  * @param values finite numbers
  * @param group one whole-number label a value; labels need not be consecutive
+ * @throws RangeError on no values, values that are not finite, or columns of different length
+ * @see Fisher, Statistical Methods for Research Workers, 1925
  */
 export function oneWayAnova(values: ArrayLike<number>, group: ArrayLike<number>): OneWayAnova {
   const n = values.length;

@@ -25,6 +25,7 @@ const SLACK = 1e-9;
  *
  * @param weeks at or above 0; several logs in a week are allowed, the largest counts.
  * @throws RangeError for a week below 0 or a target that is not above zero.
+ * @see Kalbfleisch & Prentice 2002 (first passage, right censoring)
  */
 export function loadOnset(
   participants: ArrayLike<number>,

@@ -29,6 +29,7 @@ export interface QuantileBands extends Provenance {
  * @param weeks the week of each value (any numbers; equal numbers are one week).
  * @param probs proportions in [0, 1], e.g. [0.1, 0.25, 0.5, 0.75, 0.9].
  * @throws RangeError for unequal columns, an infinite value or a probability outside [0, 1].
+ * @see Hyndman & Fan, Am Stat 1996;50:361
  */
 export function quantileBands(
   values: ArrayLike<number>,

@@ -43,6 +43,7 @@ export function quantileSorted(sorted: ArrayLike<number>, p: number, type: Quant
  * Quantiles of unordered values.
  *
  * @throws RangeError for a value that is missing or infinite, or a probability outside [0, 1].
+ * @see Hyndman & Fan, Am Stat 1996;50:361
  */
 export function quantile(values: ArrayLike<number>, probs: readonly number[], type: QuantileType = 7): (number | null)[] {
   const sorted = Float64Array.from(values);

@@ -22,6 +22,7 @@ const SLACK = 1e-9;
  * steps, `events` those that keep to the rule.
  *
  * @throws RangeError as `weeklySteps`, and for a bound that is not above zero.
+ * @see Cochran, Sampling Techniques 1977, ch. 6 and 9
  */
 export function ruleAdherence(
   participants: ArrayLike<number>,

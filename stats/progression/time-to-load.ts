@@ -20,6 +20,7 @@ export interface TimeToLoad extends Provenance {
  * was truly reached between two logs; `loadIntervals` gives that view.
  *
  * @throws RangeError as `loadOnset`, or for a level outside (0, 1).
+ * @see Kaplan & Meier, J Am Stat Assoc 1958;53:457
  */
 export function timeToLoad(
   participants: ArrayLike<number>,
@@ -46,6 +47,8 @@ export interface LoadIntervals extends Provenance {
 /**
  * Intervals for an interval-censored estimator, without those who were at the
  * load from week 0: for them there is no interval before the first log.
+ * @param onset columns of one entry a participant, in weeks
+ * @see Turnbull, J R Stat Soc B 1976;38:290 (interval censoring)
  */
 export function loadIntervals(onset: LoadOnset): LoadIntervals {
   const kept = Int32Array.from(onset.right.keys()).filter((row) => onset.right[row]! > 0);

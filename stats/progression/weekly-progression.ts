@@ -22,6 +22,7 @@ export interface WeeklyProgression {
  *
  * @param loads one a week, in week order, above zero, in any one unit.
  * @throws RangeError for a load that is not a number above zero.
+ * @see Draper & Smith, Applied Regression Analysis 1998, ch. 1
  */
 export function weeklyProgression(loads: ArrayLike<number>): WeeklyProgression {
   const weeks = loads.length;

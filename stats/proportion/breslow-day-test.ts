@@ -18,6 +18,9 @@ export interface BreslowDayTest extends Provenance {
  * margin say nothing about it and are left out, and said. Without two
  * informative strata, or where the common odds ratio is 0 or infinite, the
  * test does not exist.
+ * @param strata columns of cells, one entry a stratum
+ * @throws RangeError on columns of different length or cells that are no counts
+ * @see Breslow & Day 1980, ch. 4. Tarone, Biometrika 1985;72:91
  */
 export function breslowDayTest(strata: Strata): BreslowDayTest {
   requireStrata(strata);

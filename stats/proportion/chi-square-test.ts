@@ -18,7 +18,12 @@ export interface TestStatistic {
   readonly p: number | null;
 }
 
-/** Tests of no association in a 2 by 2 table, three ways, named apart because papers differ. An empty margin gives nulls. */
+/**
+ * Tests of no association in a 2 by 2 table, three ways, named apart because papers differ. An empty margin gives nulls.
+ * @param table four counts
+ * @throws RangeError where a cell is no count (a whole number from 0 up)
+ * @see Pearson 1900. Yates 1934
+ */
 export function chiSquareTest(table: FourfoldTable): ChiSquareTest {
   const { a, b, c, d } = table;
   requireTable(table);

@@ -14,6 +14,7 @@ export interface ConditionalOddsRatio extends Estimate {
  * 1956) in lower and upper and mid-P limits beside them. At an end of the
  * support the estimate and the limit on that side are exactly 0 or infinite;
  * margins that allow one table only say nothing, and the limits are null.
+ * @throws RangeError where a cell is no count (a whole number from 0 up) or the level is not inside (0, 1)
  */
 export function conditionalOddsRatio(table: FourfoldTable): ConditionalOddsRatio {
   const { a, b, c, d, level = 0.95 } = table;

@@ -21,6 +21,7 @@ const MOST_PATHS = 5_000_000;
  * grows with the table; past a bound the answer is null with a reason.
  *
  * @param rows equal-length rows of counts
+ * @throws RangeError on rows of different length or cells that are no counts
  */
 export function fisherExactTable(rows: readonly (readonly number[])[]): FisherExactTable {
   const width = rows[0]?.length ?? 0;

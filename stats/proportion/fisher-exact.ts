@@ -19,7 +19,12 @@ export interface FisherExact extends Provenance {
 /** Probabilities that differ by less are ties in exact arithmetic: without it p depends on rounding. */
 const TIE_SLACK = 1 + 1e-7;
 
-/** Fisher's exact test of a 2 by 2 table. The several p-values differ in general and are named apart. */
+/**
+ * Fisher's exact test of a 2 by 2 table. The several p-values differ in general and are named apart.
+ * @param table four counts
+ * @throws RangeError where a cell is no count (a whole number from 0 up) or the level is not inside (0, 1)
+ * @see Fisher 1935. Mid-P: Lancaster 1961
+ */
 export function fisherExact(table: FourfoldTable): FisherExact {
   requireTable(table);
   const { logWeights, observed } = supportOf(table);

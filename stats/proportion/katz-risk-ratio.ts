@@ -12,6 +12,8 @@ export interface RatioEstimate extends Estimate {
  * p1 / p2 with log limits (Katz 1978). Where a group has no event the log
  * does not exist: limits are null with a reason, and nothing is added to any
  * cell. `riskRatio` falls back to score limits there.
+ * @param groups events among n in each of two groups
+ * @throws RangeError where events or numbers are no counts, events pass n, or the level is not inside (0, 1)
  */
 export function katzRiskRatio(groups: TwoGroups): RatioEstimate {
   const { events1, n1, events2, n2, level = 0.95 } = groups;

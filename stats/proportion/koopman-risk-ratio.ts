@@ -9,6 +9,8 @@ import { ratioOf } from './katz-risk-ratio';
  * p1 / p2 with score limits (Koopman 1984), which exist at zero cells too:
  * the lower limit is 0 without events in group 1, the upper infinite without
  * events in group 2.
+ * @param groups events among n in each of two groups
+ * @throws RangeError where events or numbers are no counts, events pass n, or the level is not inside (0, 1)
  */
 export function koopmanRiskRatio(groups: TwoGroups): Estimate {
   const { events1, n1, events2, n2, level = 0.95 } = groups;

@@ -23,6 +23,8 @@ export interface MantelHaenszel extends Provenance {
  * leaves the ratio's limits null with a reason.
  *
  * @param strata columns of cells, one entry a stratum
+ * @throws RangeError on columns of different length or cells that are no counts
+ * @see Mantel & Haenszel 1959. Robins, Breslow & Greenland 1986. Greenland & Robins 1985. Sato 1989
  */
 export function mantelHaenszel(strata: Strata, { level = 0.95 }: { readonly level?: number } = {}): MantelHaenszel {
   requireStrata(strata);

@@ -8,6 +8,8 @@ import { NOBODY_IN_A_GROUP, requireTwoGroups, type TwoGroups } from './counts';
  * p1 - p2 with score limits (Miettinen & Nurminen 1985): the differences whose
  * score test, with the variance at the constrained maximum-likelihood
  * proportions times N / (N - 1), does not reject. Limits end at -1 and 1.
+ * @param groups events among n in each of two groups
+ * @throws RangeError where events or numbers are no counts, events pass n, or the level is not inside (0, 1)
  */
 export function miettinenNurminenDifference(groups: TwoGroups): Estimate {
   const { events1, n1, events2, n2, level = 0.95 } = groups;

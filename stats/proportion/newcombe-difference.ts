@@ -7,6 +7,8 @@ import { wilsonLower } from './wilson-interval';
 /**
  * p1 - p2 with hybrid score limits (Newcombe 1998, method 10): the Wilson
  * limits of the two proportions, put together by the square-and-add rule.
+ * @param groups events among n in each of two groups
+ * @throws RangeError where events or numbers are no counts, events pass n, or the level is not inside (0, 1)
  */
 export function newcombeDifference(groups: TwoGroups): Estimate {
   const { events1, n1, events2, n2, level = 0.95 } = groups;

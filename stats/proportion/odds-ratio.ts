@@ -6,6 +6,8 @@ import { ratioOf, type RatioEstimate } from './katz-risk-ratio';
 /**
  * ad / bc with Woolf log limits (1955). A zero cell leaves the limits null
  * with a reason; no half is added. `conditionalOddsRatio` has limits there.
+ * @param table four counts
+ * @throws RangeError where a cell is no count (a whole number from 0 up) or the level is not inside (0, 1)
  */
 export function oddsRatio(table: FourfoldTable): RatioEstimate {
   const { a, b, c, d, level = 0.95 } = table;

@@ -10,7 +10,12 @@ export interface WaldDifference extends Estimate {
   readonly p: number | null;
 }
 
-/** p1 - p2 with Wald limits (unpooled variance), uncut. Kept to read papers that used it; prefer Newcombe or a score interval. */
+/**
+ * p1 - p2 with Wald limits (unpooled variance), uncut. Kept to read papers that used it; prefer Newcombe or a score interval.
+ * @param groups events among n in each of two groups
+ * @throws RangeError where events or numbers are no counts, events pass n, or the level is not inside (0, 1)
+ * @see Newcombe, Stat Med 1998;17:873, method 1
+ */
 export function waldDifference(groups: TwoGroups): WaldDifference {
   const { events1, n1, events2, n2, level = 0.95 } = groups;
   requireTwoGroups(groups);

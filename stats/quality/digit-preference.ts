@@ -17,6 +17,8 @@ export interface DigitPreference extends Provenance {
  * Whether measurements were read to the last digit or rounded.
  *
  * @param counts how many readings end in 0, 1, ... 9
+ * @throws RangeError unless there are ten counts
+ * @see Pearson 1900; the thresholds of the flag are common practice, no source
  */
 export function digitPreference(counts: ArrayLike<number>): DigitPreference {
   requireRange(counts.length === 10, `There are ten terminal digits, not ${counts.length}.`);

@@ -17,6 +17,7 @@ const WORD = 4294967296;
  * Uniform integer 0..n-1 without bias, for n from 1 to 2^32: multiply-shift
  * with rejection (Lemire D. ACM Trans Model Comput Simul 2019;29:3). Almost
  * always one draw and no division.
+ * @throws RangeError where n is no whole number in that range
  */
 export function nextBelow(source: RandomSource, n: number): number {
   if (!(Number.isInteger(n) && n >= 1 && n <= WORD)) throw new RangeError(`Choices are counted from 1 to 2^32, not ${n}.`);

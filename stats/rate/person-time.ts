@@ -15,6 +15,7 @@ export interface PersonTime {
  * once, so that no rounding of single persons enters.
  *
  * @param days one entry a person, from 0 up; anything else throws RangeError
+ * @see Rothman, Greenland & Lash, Modern Epidemiology 2008, ch. 3
  */
 export function personTime(days: ArrayLike<number>): PersonTime {
   let sum = 0;

@@ -23,6 +23,7 @@ export interface FalseChange {
  * @param trueChangePercent what the change really is; 0 for a false positive.
  * @param multiplier for the 95% figure; published figures often carry 1.96.
  * @throws RangeError for an SEM that is not above zero or fewer than one reading.
+ * @see common practice, no source; propagation of error as in Bland & Altman, BMJ 1996;313:744
  */
 export function falseChange({
   semPercent,
@@ -52,6 +53,7 @@ export function falseChange({
  * which a change of the threshold's size is beyond error at the level asked.
  *
  * @throws RangeError for a threshold that is not above zero.
+ * @see de Vet et al., J Clin Epidemiol 2006;59:1033
  */
 export function maxSemForThreshold(
   thresholdPercent: number,

@@ -28,6 +28,7 @@ export interface PhTest extends Provenance {
  * 'rank' ranks among all observation times in the score form and among event
  * rows in the classic form, as the two forms are published and used.
  * @see Grambsch & Therneau, Biometrika 1994;81:515. Therneau & Grambsch 2000, ch. 6
+ * @param data the data of the fit
  */
 export function proportionalHazardsTest(data: CoxData, fit: CoxFit, options: { readonly form?: PhForm; readonly transform?: TimeTransform } = {}): PhTest {
   const { form = 'score', transform = 'km' } = options;

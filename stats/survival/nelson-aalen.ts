@@ -3,6 +3,7 @@ import type { RiskTable } from './risk-table';
 /**
  * Cumulative hazard at each distinct time, with Aalen's standard error (sum of d / n²).
  * @see Nelson, Technometrics 1972;14:945. Aalen, Ann Stat 1978;6:701
+ * Takes the columns of a risk table, one entry a distinct time; the hazard has no unit
  */
 export function nelsonAalen({ time, atRisk, eventsAt }: RiskTable): { time: Float64Array; hazard: Float64Array; se: Float64Array } {
   const hazard = new Float64Array(time.length);

@@ -49,7 +49,12 @@ function areaBackwards({ time, survival, atRisk, eventsAt }: SurvivalCurve, tau:
   return { area: area + right, variance, events };
 }
 
-/** Difference a - b of two restricted means of independent groups to the same tau. */
+/**
+ * Difference a - b of two restricted means of independent groups to the same tau.
+ * In the unit of the times, with a normal test.
+ * @throws RangeError when the two have another tau or level
+ * @see Royston & Parmar, BMC Med Res Methodol 2013;13:152
+ */
 export function rmstDifference(a: RestrictedMean, b: RestrictedMean): Interval & { readonly se: number | null; readonly p: number | null } {
   requireRange(a.tau === b.tau && a.level === b.level, 'Restricted means are compared at one time and one level.');
   const { level } = a;
