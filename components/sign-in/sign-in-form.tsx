@@ -100,7 +100,7 @@ function DemoSignIns({
       <ul className="mt-3">
         {demo.map((who) => (
           <li key={who.email} className="flex items-baseline justify-between gap-4 border-b border-rule py-2">
-            <span>
+            <span className="min-w-0 [overflow-wrap:anywhere]">
               {who.role}
               <span className="block text-[13.5px] text-ink-2">{who.email}</span>
             </span>

@@ -49,7 +49,7 @@ export async function readJson(request: Request): Promise<unknown> {
 }
 
 /** What the request asks for: path parameters, the query of a GET, the body of a write. */
-export async function readInput(request: Request, params: Record<string, string | string[]>): Promise<Record<string, unknown>> {
+export async function readInput(request: Request, params: Record<string, string | string[]> = {}): Promise<Record<string, unknown>> {
   const query = Object.fromEntries(new URL(request.url).searchParams);
   for (const [name, value] of [...Object.entries(query), ...Object.entries(params)]) keepable(name, value);
   const body = await readJson(request);

@@ -38,7 +38,8 @@ export interface Declaration<I extends Input = Input, R = unknown> {
 }
 
 export interface RouteHandler {
-  (request: Request, context: { params: Promise<Record<string, string | string[]>> }): Promise<Response>;
+  /** An address without parameters is given none: not an empty object. */
+  (request: Request, context: { params: Promise<Record<string, string | string[]> | undefined> }): Promise<Response>;
   readonly declaration: Declaration;
 }
 
@@ -88,7 +89,7 @@ function answer(result: unknown, status: number, headers: Record<string, string>
  */
 export function route<I extends Input, R>(declaration: Declaration<I, R>): RouteHandler {
   const { act, create, change, confirms, open } = declaration;
-  const handle = async (request: Request, context: { params: Promise<Record<string, string | string[]>> }): Promise<Response> => {
+  const handle = async (request: Request, context: { params: Promise<Record<string, string | string[]> | undefined> }): Promise<Response> => {
     const reference = newReference();
     try {
       requireOwnOrigin(request);

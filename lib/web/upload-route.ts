@@ -41,14 +41,14 @@ async function readCounted(request: Request, bytesMost: number): Promise<Buffer>
 /** The wrapper for uploads: origin, session, policy before a byte is read, then the counted body. Answers 201. */
 export function uploadRoute<I extends z.ZodType<object>, R>(declaration: UploadDeclaration<I, R>): RouteHandler {
   const { act, summary, input, types, bytesMost } = declaration;
-  const handle = async (request: Request, context: { params: Promise<Record<string, string | string[]>> }): Promise<Response> => {
+  const handle = async (request: Request, context: { params: Promise<Record<string, string | string[]> | undefined> }): Promise<Response> => {
     const reference = newReference();
     try {
       requireOwnOrigin(request);
       const session = await currentSession();
       if (!session) throw new Refusal('unauthenticated', 'You are signed out. Sign in again in another tab, then send the file.');
       if (!may(session.actor.role, act)) throw new Refusal('forbidden', 'Your role does not include this.');
-      const parsed = input.parse(await context.params);
+      const parsed = input.parse((await context.params) ?? {});
       const content = await readCounted(request, bytesMost);
       const result = await declaration.receive(session.actor, parsed, content, { request: reference });
       log().info({ reference, act, role: session.actor.role });

@@ -142,7 +142,8 @@ const volumes = (result: ComputedAssessment): Row => ({
   formula_version: result.formulaVersion,
 });
 
-const arrived = (scene: Scene, { id, on }: { id: string; on: LocalDate }): Row => ({ id, state: 'in progress', done_on: on, site_id: scene.person.site.id, participant_id: scene.person.id });
+/** A visit begins; after its window it says why. */
+const arrived = (scene: Scene, { id, on, closesOn }: { id: string; on: LocalDate; closesOn: LocalDate }): Row => ({ id, state: 'in progress', done_on: on, window_reason: on > closesOn ? 'The participant cancelled; this was the next free appointment.' : null, site_id: scene.person.site.id, participant_id: scene.person.id });
 
 function assessmentRow({ plan, person }: Scene, visitId: string, sitting: Pick<Sitting, 'assessmentId' | 'at' | 'assessor'>): Row {
   const { measurement } = plan.protocol;
@@ -180,7 +181,7 @@ export function sittingEvents(scene: Scene, sitting: Sitting): DemoEvent[] {
     position: scene.plan.protocol.measurement.position, sleeve_worn: sitting.sleeveWorn, hours_since_training: sitting.hoursSinceTraining, findings: findingsOf(asEntered), ...volumes(sitting.enteredResult),
   };
   return [
-    eventBy(assessor, minutesAfter(at, -4), 'visit.begin', [updated('visit', arrived(scene, { id: visit.id, on: asEntered.on }))]),
+    eventBy(assessor, minutesAfter(at, -4), 'visit.begin', [updated('visit', arrived(scene, { id: visit.id, on: asEntered.on, closesOn: visit.closesOn }))]),
     eventBy(assessor, at, 'assessment.begin', [inserted('limb_assessment', begun)]),
     ...order.map((trial, index) => {
       const savedAt = minutesAfter(at, 4 * (index + 1));
@@ -202,7 +203,7 @@ export function underWayEvents(scene: Scene, visit: PlannedVisit, on: LocalDate)
     position: plan.protocol.measurement.position, sleeve_worn: false, hours_since_training: draw.whole(20, 60),
   };
   return [
-    eventBy(assessor, minutesAfter(at, -6), 'visit.begin', [updated('visit', arrived(scene, { id: visit.id, on }))]),
+    eventBy(assessor, minutesAfter(at, -6), 'visit.begin', [updated('visit', arrived(scene, { id: visit.id, on, closesOn: visit.closesOn }))]),
     eventBy(assessor, at, 'assessment.begin', [inserted('limb_assessment', begun)]),
     ...passes.map((trial, index) => {
       const savedAt = minutesAfter(at, 8 + 7 * index);
