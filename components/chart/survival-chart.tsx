@@ -72,8 +72,8 @@ export function stepAt(curve: Curve, time: number): CurveStep | null {
   return curve.steps.filter((step) => step.time <= time).at(-1) ?? null;
 }
 
-/** '113'; '<5' where a small count is not shown. */
-export const riskWords = (count: number | null | undefined): string => (count === null ? '<5' : formatCount(count ?? 0));
+/** '113'; a dash where a count is not shown, which may be a small one or one that would give a small one away. */
+export const riskWords = (count: number | null | undefined): string => (count === null ? '–' : formatCount(count ?? 0));
 
 function CurveTable({
   curves,

@@ -58,7 +58,7 @@ export function Swelling({ view }: { view: ResultsView }) {
             <p>The date of swelling is the visit it was first seen, so the steps gather at visits. Those who left are taken to be like those who stayed; nobody is recorded as having died before swelling, so no competing event is handled.</p>
             {view.chosen.cohort === undefined && view.cohorts.length > 1 ? <p className="is-margin">Every cohort is counted together, also people who lived with swelling when they joined, in whom a rise counts as well. For the incidence of new swelling choose the cohort at risk.</p> : null}
             <p>Both panels share one scale. The dashes in B repeat A. A month is 30.4 days.</p>
-            {view.suppressBelow > 0 ? <p>Your role is shown no count from 1 to {view.suppressBelow - 1}, none from which one could be had by subtraction, and no share that rests on one: the first {view.suppressBelow} people with swelling are drawn as one step, and a curve ends where fewer than {view.suppressBelow} are followed.</p> : null}
+            {view.suppressBelow > 0 ? <p>Your role is shown no count from 1 to {view.suppressBelow - 1}, none from which one could be had by subtraction, and no share that rests on one: the first {view.suppressBelow} people with swelling are drawn as one step, and a curve ends where fewer than {view.suppressBelow} are followed. A dash stands for a count that is not shown.</p> : null}
             <p className="text-[12.5px]">{a.reference}.</p>
             <p className="text-note">This is a group without a comparison arm. It cannot say that lifting causes or prevents swelling.</p>
           </div>
