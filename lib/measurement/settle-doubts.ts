@@ -6,8 +6,11 @@ import type { CompleteAssessmentInput } from './input';
 import { queryUnexplained } from './query-unexplained';
 import { isSame, requireReasons } from './require-reasons';
 
-/** The same doubt about the same figure: the sentence names the figure. */
-const isUnchanged = (a: Found, b: Found): boolean => isSame(a, b) && a.message === b.message;
+/** Doubts about an arm as a whole, whose figure moves a little with every reading that is corrected. */
+const wholeArms: readonly string[] = ['left', 'right', 'whole'];
+
+/** The same doubt about the same figure: the sentence names the figure. A doubt about a whole arm is the same while it holds. */
+const isUnchanged = (a: Found, b: Found): boolean => isSame(a, b) && (a.message === b.message || wholeArms.includes(a.place));
 
 /** Doubts that still hold keep the reason they were kept for, new ones get theirs; the others fall. */
 function keptNow(one: Doubted, arisen: readonly KeptFinding[]): KeptFinding[] {

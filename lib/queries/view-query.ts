@@ -76,10 +76,10 @@ export async function viewQuery(work: Work, id: string): Promise<QueryView> {
 
 /** The queries of one visit, oldest first: what stands in its margin. */
 export async function queriesOfVisit(work: Work, visitId: string): Promise<QueryView[]> {
-  return (await work.sql<Row>(`${select} where q.visit_id = ? order by q.raised_at, q.id`, [visitId])).map(toView);
+  return (await work.sql<Row>(`${select} where q.visit_id = ? order by q.raised_at, q.number`, [visitId])).map(toView);
 }
 
 /** What is asked about the facts of a participant and not yet closed, oldest first. */
 export async function queriesOfFacts(work: Work, participantId: string): Promise<QueryView[]> {
-  return (await work.sql<Row>(`${select} where q.target_table = 'participant' and q.target_id = ? and q.state in ('open', 'answered') order by q.raised_at, q.id`, [participantId])).map(toView);
+  return (await work.sql<Row>(`${select} where q.target_table = 'participant' and q.target_id = ? and q.state in ('open', 'answered') order by q.raised_at, q.number`, [participantId])).map(toView);
 }

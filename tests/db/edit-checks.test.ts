@@ -174,7 +174,7 @@ describe('a correction', () => {
   const again = (view: CompleteAssessmentView) => withWork(assessor, 'assessment.view', (work) => viewAssessment(work, { visitId: view.visitId })) as Promise<CompleteAssessmentView>;
 
   test('to what cannot be right is refused', async () => {
-    await expect(correct({ target: girthOf(second, 5), value: 521 })).rejects.toMatchObject({ code: 'invalid', field: 'value' });
+    await expect(correct({ target: girthOf(second, 5), value: 521, also: { other: 521 } })).rejects.toMatchObject({ code: 'invalid', field: 'value' });
     await expect(correct({ target: weightOf(second), value: 260_000 })).rejects.toThrow(/over 250 kg/);
   });
 
