@@ -12,6 +12,7 @@ import { getOrm } from '@/lib/work/orm';
 import { clock } from '@/lib/work/time';
 import { withWork } from '@/lib/work/with-work';
 import type { Work } from '@/lib/work/work';
+import { smallConsentForm, smallProtocol } from './given-protocol';
 
 /**
  * The only builders of the data base tests. Each gives the least that is lawful and returns ids and actors;
@@ -44,7 +45,7 @@ export async function asOwner<Row extends object>(text: string, values: readonly
 export const setScene = <T>(siteIds: readonly string[], run: (work: Work) => Promise<T>, now?: Date): Promise<T> =>
   withWork(systemActor(siteIds), 'demo.seed', run, now ? { now } : {});
 
-const only = <T>(rows: readonly T[]): T => {
+export const only = <T>(rows: readonly T[]): T => {
   const [row] = rows;
   if (row === undefined) throw new Error('Expected one row.');
   return row;
@@ -95,53 +96,6 @@ export async function givenSite(study: GivenStudy, about: { code?: string; name?
   );
   return { id, studyId: study.id, code, name };
 }
-
-/** A small protocol: three visits, the three questionnaires, the primary swelling definition. */
-export const smallProtocol: ProtocolDocument = {
-  cohorts: [
-    { key: 'at-risk', name: 'At risk of swelling' },
-    { key: 'living-with', name: 'Living with swelling' },
-  ],
-  daysSinceSurgery: 28,
-  eligibility: [
-    { key: 'adult', text: 'Is 18 years or older', lets: 'yes' },
-    { key: 'treated', text: 'Had surgery for breast cancer on one side', lets: 'yes' },
-    { key: 'metastases', text: 'Has distant metastases', lets: 'no' },
-  ],
-  anchor: 'enrolment',
-  visits: [
-    { key: 'baseline', name: 'Baseline', offsetDays: 0, earlyDays: 0, lateDays: 28, questionnaires: ['arm-symptoms', 'daily-tasks', 'lifting-confidence'] },
-    { key: 'week-12', name: 'Week 12', offsetDays: 84, earlyDays: 14, lateDays: 14, questionnaires: ['arm-symptoms'] },
-    { key: 'month-6', name: 'Month 6', offsetDays: 182, earlyDays: 21, lateDays: 21, questionnaires: ['arm-symptoms', 'daily-tasks', 'lifting-confidence'] },
-  ],
-  measurement: { method: 'frustum', startOffsetMm: 0, stepMm: 40, levelCount: 11, toleranceMm: 5, position: 'seated, arm supported at shoulder height', semPct: 1.5 },
-  swelling: { primary: 'D1', alternatives: ['D2'], earlyExclusionDays: 90, impedanceCutoffs: '2011-3sd' },
-  training: {
-    startKg: 2, startFromKg: 1, weeklyStepKg: 2, jumpKg: 5, breakDays: 28, resumeFromFraction: 0.5, resumeToFraction: 0.8,
-    toleranceKg: 0, incrementKg: 0.5, shortBreakDays: null, minDaysSinceRaise: null, minSessionsAtLoad: null,
-  },
-  exercises: ['chest-press', 'seated-row', 'biceps-curl', 'leg-press'],
-  sessionsPerWeek: 2,
-  lateAfterHours: 48,
-  queryDueDays: 14,
-};
-
-/** A consent form in two parts, with two statements and two permissions. */
-export const smallConsentForm: ConsentForm = {
-  title: 'Taking part in Steady Lift',
-  sections: [
-    { key: 'key-facts', title: 'The main points', paragraphs: ['You choose. Your care stays the same.'] },
-    { key: 'what-we-ask', title: 'What we ask of you', paragraphs: ['You lift twice a week and write down what you lifted.'] },
-  ],
-  statements: [
-    { key: 'read', text: 'I have read every part and my questions were answered.' },
-    { key: 'free', text: 'I may stop at any time, without a reason and without any change in my care.' },
-  ],
-  permissions: [
-    { key: 'data-sharing', text: 'My data, without my name, may be shared with researchers the study approves.' },
-    { key: 'future-contact', text: 'The site may ask me about later studies.' },
-  ],
-};
 
 export interface GivenProtocol {
   readonly id: string;
@@ -356,51 +310,6 @@ export async function givenParticipant(
     const actor: Actor = { accountId: account.id, role: 'participant', label: code, studyId: site.studyId, reach: [site.id], participantId: id, screeningId: null };
     return { id, code, siteId: site.id, screeningId: screening.id, actor, visits };
   });
-}
-
-/** One more visit in somebody's schedule. */
-export async function givenVisit(
-  { id, siteId }: GivenParticipant,
-  protocol: GivenProtocol,
-  visit: { key: string; targetOn: string; closesOn: string; bookedAt?: string | null; state?: 'to come' | 'in progress' },
-): Promise<{ id: string }> {
-  const { key, targetOn, closesOn, bookedAt = null, state = 'to come' } = visit;
-  return setScene([siteId], async (work) =>
-    only(
-      await work.sql<{ id: string }>(
-        `insert into visit (site_id, participant_id, key, name, target_on, opens_on, closes_on, booked_at, state, done_on, protocol_version_id)
-         values (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?) returning id`,
-        [siteId, id, key, `Visit ${key}`, targetOn, targetOn, closesOn, bookedAt, state, state === 'in progress' ? targetOn : null, protocol.id],
-      ),
-    ),
-  );
-}
-
-/** Open queries on the day of the baseline visit, raised one minute after the other. Their ids in that order. */
-export async function givenQueries({ id, siteId, visits }: GivenParticipant, by: Actor, { count, dueOn }: { count: number; dueOn: string }): Promise<string[]> {
-  const rows = await setScene([siteId], (work) =>
-    work.sql<{ id: string; raised_at: string }>(
-      `insert into data_query (site_id, participant_id, visit_id, target_table, target_id, field, field_label, origin, raised_by, raised_at, due_on)
-       select ?, ?, ?, 'visit', ?, 'done_on', 'date of visit', 'manual', ?, '2027-01-10T09:00:00Z'::timestamptz + n * interval '1 minute', ? from generate_series(1, ?::int) n order by n returning id, raised_at::text`,
-      [siteId, id, visits['baseline'], visits['baseline'], by.accountId, dueOn, count],
-    ),
-  );
-  return rows.map((row) => row.id);
-}
-
-/** Symptom reports of one level, all with the same clock. */
-export async function givenReports(
-  { id, siteId }: GivenParticipant,
-  { count, level, dueAt, state = 'new' }: { count: number; level: string; dueAt: string; state?: 'new' | 'read' },
-): Promise<string[]> {
-  const rows = await setScene([siteId], (work) =>
-    work.sql<{ id: string }>(
-      `insert into symptom_report (site_id, participant_id, reported_at, noticed_on, answers, level, due_at, hold_training, state, client_key)
-       select ?, ?, '2027-01-20T07:52:00Z', '2027-01-20', '{"signs":["fever"],"lastedOverADay":null,"soreness":null}'::jsonb, ?, ?, true, ?, gen_random_uuid() from generate_series(1, ?::int) returning id`,
-      [siteId, id, level, dueAt, state, count],
-    ),
-  );
-  return rows.map((row) => row.id);
 }
 
 export interface GivenScene {

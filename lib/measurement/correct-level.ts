@@ -1,4 +1,5 @@
 import { LimbTrialSchema, type LimbTrial } from '@/entities/limb-trial';
+import { printNumber } from '@/instruments/numbers';
 import { combineTrials } from '@/instruments/measurement/combine-trials';
 import { Refusal } from '@/lib/work/refusal';
 import type { Work } from '@/lib/work/work';
@@ -10,7 +11,7 @@ export interface OtherReadings {
   readonly third?: number | undefined;
 }
 
-const inCm = (mm: number): string => `${(mm / 10).toFixed(1)} cm`;
+const inCm = (mm: number): string => `${printNumber(mm / 10, 1)} cm`;
 
 /**
  * One level after a correction of one of its trials: the other trial may be corrected in the same breath, and a third

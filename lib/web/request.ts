@@ -3,6 +3,7 @@ import { createHash, randomUUID } from 'node:crypto';
 import { sourceOf } from '@/lib/auth/source';
 import { env } from '@/lib/env';
 import { Refusal } from '@/lib/work/refusal';
+import { unkeepableText } from '@/lib/work/unkeepable';
 
 /** JSON bodies are small: a limb form is 2 kB, a signature at most 60 kB. */
 const bodyLimitBytes = 262_144;
@@ -24,7 +25,7 @@ export function requireOwnOrigin(request: Request): void {
 /** A null character ends the data base's own messages, half a surrogate pair is no text: neither is taken in. */
 function keepable(name: string, value: unknown): unknown {
   if (typeof value === 'string' && /\0|\p{Surrogate}/u.test(value))
-    throw new Refusal('invalid', 'A text holds a character that cannot be kept. It is often invisible and comes with pasting: type the text again and save.', name);
+    throw new Refusal('invalid', unkeepableText, name);
   return value;
 }
 

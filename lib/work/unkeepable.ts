@@ -1,4 +1,5 @@
-const text = 'A text holds a character that cannot be kept. It is often invisible and comes with pasting: type the text again and save.';
+/** Said of a character that no text can hold, where it is found: at the edge or in the data base. */
+export const unkeepableText = 'A text holds a character that cannot be kept. It is often invisible and comes with pasting: type the text again and save.';
 const day = 'A day is not one that can be kept. Look at the dates and save again.';
 
 /**
@@ -7,9 +8,9 @@ const day = 'A day is not one that can be kept. Look at the dates and save again
  * character ends the message itself, which is a broken protocol (08P01) to the server.
  */
 const states: Readonly<Record<string, string>> = {
-  '08P01': text,
-  '22021': text,
-  '22P05': text,
+  '08P01': unkeepableText,
+  '22021': unkeepableText,
+  '22P05': unkeepableText,
   '22P02': 'A part of this address or form is not what it should be. Go back and open the page again.',
   '22003': 'A number is too large or too small to be kept. Look at the figures and save again.',
   '22007': day,

@@ -1,3 +1,4 @@
+import { inversions } from './inversions';
 import { inOrderByTwo } from './order-by-two';
 
 /** Kendall's S with what its tests need. */
@@ -24,7 +25,7 @@ export function kendall(x: Float64Array, y: Float64Array): Kendall {
   const xTies = tieSums((i, j) => byX[i] === byX[j], n);
   const yTies = tieSums((i, j) => sortedY[i] === sortedY[j], n);
   const bothTies = tieSums((i, j) => byX[i] === byX[j] && byXThenY[i] === byXThenY[j], n);
-  const discordant = countInversions(byXThenY);
+  const discordant = inversions(byXThenY, [new Float64Array(byXThenY.length), new Float64Array(byXThenY.length)]);
   const pairs = (n * (n - 1)) / 2;
   const s = pairs - xTies.two / 2 - yTies.two / 2 + bothTies.two / 2 - 2 * discordant;
   const variance = varianceOfS(n, xTies, yTies);
@@ -61,29 +62,4 @@ function varianceOfS(n: number, x: TieSums, y: TieSums): number {
   const second = (x.two * y.two) / (2 * n * (n - 1));
   const third = n > 2 ? (x.three * y.three) / (9 * n * (n - 1) * (n - 2)) : 0;
   return Math.max(0, first + second + third);
-}
-
-/** Pairs i < j with a[i] > a[j], by a bottom-up merge sort on a copy. */
-export function countInversions(values: Float64Array): number {
-  const n = values.length;
-  let from = values.slice();
-  let to = new Float64Array(n);
-  let inversions = 0;
-  for (let width = 1; width < n; width *= 2) {
-    for (let left = 0; left < n; left += 2 * width) {
-      const middle = Math.min(left + width, n);
-      const right = Math.min(left + 2 * width, n);
-      let i = left;
-      let j = middle;
-      for (let k = left; k < right; k++) {
-        if (j >= right || (i < middle && from[i]! <= from[j]!)) to[k] = from[i++]!;
-        else {
-          to[k] = from[j++]!;
-          inversions += middle - i;
-        }
-      }
-    }
-    [from, to] = [to, from];
-  }
-  return inversions;
 }

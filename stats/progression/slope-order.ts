@@ -1,3 +1,4 @@
+import { inversions, type Swaps } from './inversions';
 import { requireRange } from '../result';
 import { stepsFrom } from '../special/double-steps';
 import { orderOf, roomToSort, type SortRoom } from '../survival/sort';
@@ -157,38 +158,6 @@ export class SlopeOrder {
       start = end;
     }
   }
-}
-
-/** Told of each right-hand value and the left-hand values (from[start] to from[end - 1]) that are above it. */
-export type Swaps = (from: Uint32Array, start: number, end: number, value: number) => void;
-
-/** Pairs that stand in the wrong order, counted (and shown, where asked) by a bottom-up merge sort in two arrays as long. */
-export function inversions(values: Uint32Array, room: [Uint32Array, Uint32Array], show?: Swaps): number {
-  const n = values.length;
-  let [from, to] = room;
-  from.set(values);
-  let count = 0;
-  for (let width = 1; width < n; width *= 2) {
-    for (let left = 0; left < n; left += 2 * width) {
-      const middle = Math.min(left + width, n);
-      const right = Math.min(left + 2 * width, n);
-      let i = left;
-      let j = middle;
-      for (let k = left; k < right; k++) {
-        if (j >= right || (i < middle && from[i]! <= from[j]!)) {
-          to[k] = from[i++]!;
-          continue;
-        }
-        if (i < middle) {
-          count += middle - i;
-          if (show !== undefined) show(from, i, middle, from[j]!);
-        }
-        to[k] = from[j++]!;
-      }
-    }
-    [from, to] = [to, from];
-  }
-  return count;
 }
 
 /** A column whose smallest value is this many powers of two below its largest is not one of measurements, and products of it would vanish. */

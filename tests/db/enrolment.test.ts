@@ -11,7 +11,8 @@ import { listScreenings } from '@/lib/enrolment/list-screenings';
 import { viewIdentity } from '@/lib/enrolment/view-identity';
 import { viewScreening } from '@/lib/enrolment/view-screening';
 import { withWork } from '@/lib/work/with-work';
-import { asOwner, givenConsent, givenScene, givenScreening, givenSite, givenStaff, smallProtocol, type GivenScene } from '../given';
+import { asOwner, givenConsent, givenScene, givenScreening, givenSite, givenStaff, type GivenScene } from '../given';
+import { smallProtocol } from '../given-protocol';
 
 let signedIn: Actor | null = null;
 vi.mock('@/lib/web/session', () => ({ currentSession: () => Promise.resolve(signedIn ? { actor: signedIn } : null) }));

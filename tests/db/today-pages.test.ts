@@ -5,7 +5,8 @@ import { todayKinds, viewTodayInput } from '@/lib/today/input';
 import { viewToday, type TodayView } from '@/lib/today/view-today';
 import { workGroups, type WorkGroupKey } from '@/lib/today/work-groups';
 import { withWork } from '@/lib/work/with-work';
-import { givenConsent, givenParticipant, givenQueries, givenReports, givenScene, givenScreening, givenVisit, type GivenParticipant, type GivenScene } from '../given';
+import { givenConsent, givenParticipant, givenScene, givenScreening, type GivenParticipant, type GivenScene } from '../given';
+import { givenQueries, givenReports, givenVisit } from '../given-work';
 
 /** A Wednesday in London's winter: local days are UTC days, and the eight weeks shown end 32 days on, on Sunday 4 April. */
 const today = '2027-03-03';

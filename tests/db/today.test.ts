@@ -5,7 +5,8 @@ import { viewToday, type TodayView } from '@/lib/today/view-today';
 import { withWork } from '@/lib/work/with-work';
 import type { Actor } from '@/lib/auth/roles';
 import { countStatements } from '../count-statements';
-import { givenConsent, givenParticipant, givenProtocol, givenQueries, givenReports, givenScene, givenScreening, givenSite, givenStaff, givenStudy, givenVisit, setScene } from '../given';
+import { givenConsent, givenParticipant, givenProtocol, givenScene, givenScreening, givenSite, givenStaff, givenStudy, setScene } from '../given';
+import { givenQueries, givenReports, givenVisit } from '../given-work';
 
 const all = viewTodayInput.parse({});
 const todayAt = (actor: Actor, now: string, input: z.input<typeof viewTodayInput> = {}): Promise<TodayView> =>

@@ -1,7 +1,7 @@
 import { beforeAll, describe, expect, test, vi } from 'vitest';
 import { routes } from '@/app/api/routes';
 import { may } from '@/lib/auth/policy';
-import { grantedRoles, type Actor, type GrantedRole } from '@/lib/auth/roles';
+import { grantedRoles, type Actor, type Role } from '@/lib/auth/roles';
 import { givenScene, givenStaff } from '../../given';
 import { requestOf } from './request-of';
 import { samples, type Sample } from './samples';
@@ -28,12 +28,15 @@ const addresses = Object.entries(routes)
   .filter(({ handler }) => !handler.declaration.open);
 
 let subject: Subject;
-const actors = new Map<GrantedRole, Actor>();
+/** Every role that is granted, and whoever holds a tablet that was handed over. */
+const walkers: readonly Role[] = [...grantedRoles, 'invitee'];
+const actors = new Map<Role, Actor>();
 
 beforeAll(async () => {
   const scene = await givenScene();
   subject = await subjectAt(scene, scene.site, scene.coordinator);
   for (const role of grantedRoles) actors.set(role, role === 'participant' ? subject.participant.actor : await givenStaff(role, scene.site));
+  actors.set('invitee', subject.atTablet);
 });
 
 /** The sample with one field at a time replaced by each hostile value; parameters and query take texts only. */
@@ -47,9 +50,9 @@ function spoiled({ params = {}, query = {}, ...rest }: Sample): { what: string; 
 
 describe.each(addresses.map((route) => [route.name, route] as const))('%s', (name, { address, method, handler }) => {
   test('meets no value it cannot answer', async () => {
-    const role = grantedRoles.find((candidate) => may(candidate, handler.declaration.act));
+    const role = walkers.find((candidate) => may(candidate, handler.declaration.act));
     const make = samples[name];
-    if (!role || !make) return;
+    if (!role || !make) throw new Error(`Nobody may ask ${name}, or it has no sample.`);
     asking.actor = actors.get(role) ?? null;
     const faults: string[] = [];
     for (const { what, sample } of spoiled(make(subject))) {

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { allSlopes } from '@/stats/progression/pairwise-slopes';
-import { inversions } from '@/stats/progression/slope-order';
+import { inversions } from '@/stats/progression/inversions';
 import { selectSlopes } from '@/stats/progression/slope-selection';
 import { theilSen } from '@/stats/progression/theil-sen';
 import { doubleAt, placeOf, stepsFrom } from '@/stats/special/double-steps';
