@@ -188,6 +188,21 @@ describe('a correction', () => {
     expect((await again(second)).findings).toEqual([]);
   });
 
+  test('of a girth does not ask again why the whole arm is kept, and asks about a doubt that is new', async () => {
+    const other = await enrolled();
+    await complete(await measure(other, 'baseline'));
+    const grown = full.map((girth) => Math.round(girth * 1.06));
+    const reason = 'Measured by a second person.';
+    const saved = await complete(await measure(other, 'week-12', { left: grown, right: little(slim) }), [{ check: 'at-risk-change.range', place: 'left', reason }]);
+    const [before] = saved.findings;
+    const value = (grown[5] ?? 0) - 3;
+    await correct({ target: girthOf(saved, 5), value, also: { other: value } });
+    const [after] = (await again(saved)).findings;
+    expect(after).toMatchObject({ check: 'at-risk-change.range', reason });
+    expect(after?.message, 'the sentence follows the figure').not.toBe(before?.message);
+    expect(asked(await refusalOf(correct({ target: weightOf(saved), value: 171_000 }))).doubts).toContain('weight.range weight');
+  });
+
   test('that casts doubt on another visit raises a query there', async () => {
     // 60 kg at the first visit is nothing by itself; 72 kg at the second is then 20 % more.
     await correct({ target: weightOf(first), value: 60_000 });
