@@ -1,4 +1,3 @@
-import { lowerFirst } from '@/instruments/words';
 import type { ExtractView } from '@/lib/extracts/view-extract';
 import { countOf, formatMoment } from '../ui/format';
 import { Ledger, type LedgerStep } from '../ui/ledger';
@@ -39,7 +38,17 @@ export function ExtractMargin({ extract }: { extract: ExtractView }) {
       </MarginPart>
       {removed.length > 0 ? (
         <MarginPart title="Left out of every file">
-          <p className="t-small mt-1.5 text-ink-2">Name, address, phone, date of birth and signatures are never read. Also left out: {removed.map(lowerFirst).join('; ')}.</p>
+          <p className="t-small mt-1.5 text-ink-2">Name, address, phone, date of birth and signatures are never read. Of what is read, {countOf(removed.length, 'variable')} stay here.</p>
+          <details className="chart-table">
+            <summary>Show which</summary>
+            <ul className="t-small text-ink-2">
+              {removed.map((variable) => (
+                <li key={variable} className="border-b border-rule py-1">
+                  {variable}
+                </li>
+              ))}
+            </ul>
+          </details>
         </MarginPart>
       ) : null}
     </>
